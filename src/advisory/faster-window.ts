@@ -1,0 +1,73 @@
+import type { Bands } from '../hydro/bands.ts'
+import { WAVE_METHODS } from '../hydro/waves/all.ts'
+import type { Decision } from './decide.ts'
+
+/** Samples over the speeds that may hold a second window; windows narrower than this share are of no use to anyone. */
+const SAMPLES = 240
+
+/** Criteria that no higher speed can satisfy again. */
+const CEILINGS: readonly string[] = ['critical-ratio', 'depth-froude-number', 'posted-limit', 'service-speed']
+
+/** Speeds above the recommendation at which every criterion holds again, m/s. */
+export interface FasterWindow {
+  readonly from: number
+  readonly to: number
+}
+
+/** Whether a method leaves its range, or one that falls with speed counts, between two speeds. */
+function canFall(bands: Bands, fallingBits: number, from: number, to: number): boolean {
+  let before = 0
+  for (const band of bands.list) {
+    const isWithin = band.to > from && band.from < to
+    if (isWithin && ((before & ~band.active) !== 0 || (band.active & fallingBits) !== 0)) return true
+    before = band.active
+  }
+  return false
+}
+
+const FALLING_BITS = WAVE_METHODS.reduce(
+  (bits, method, i) =>
+    method.range.some((rule) => rule.quantity === 'volume_froude_number' && rule.min !== undefined)
+      ? bits | (1 << i)
+      : bits,
+  0,
+)
+
+/** A second, faster window beyond a wave hump or the edge of a method's range; undefined when there is none. */
+export function fasterWindow(decision: Decision): FasterWindow | undefined {
+  const { situation, bounds, speed } = decision
+  const ceiling = bounds
+    .filter(({ criterion }) => CEILINGS.includes(criterion.id))
+    .reduce((least, bound) => Math.min(least, bound.firstSpeed), situation.vessel.maxSpeed)
+  const mayFall =
+    canFall(situation.waveBands, FALLING_BITS, speed, ceiling) ||
+    canFall(situation.squatBands, 0, speed, ceiling)
+  if (!(speed < ceiling) || !mayFall) return undefined
+  const holdsAt = (v: number): boolean => bounds.every(({ criterion }) => criterion.evaluate(v).isMet)
+  let fails = speed * (1 + 1e-6)
+  for (let i = 1; i <= SAMPLES; i += 1) {
+    const v = speed + ((ceiling - speed) * i) / SAMPLES
+    if (holdsAt(v)) {
+      const from = edgeBetween(holdsAt, fails, v)
+      const to = bounds.reduce(
+        (least, bound) => Math.min(least, bound.criterion.firstSpeed(from, ceiling)),
+        ceiling,
+      )
+      return to > from ? { from, to } : undefined
+    }
+    fails = v
+  }
+  return undefined
+}
+
+/** Lowest speed found to hold, by halving down to a thousandth of a millimetre per second. */
+function edgeBetween(holdsAt: (v: number) => boolean, fails: number, holds: number): number {
+  let low = fails
+  let high = holds
+  while (high - low > 1e-6) {
+    const middle = (low + high) / 2
+    if (holdsAt(middle)) high = middle
+    else low = middle
+  }
+  return high
+}

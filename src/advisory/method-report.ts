@@ -1,0 +1,82 @@
+import { outsideAt, speedInterval, type Outside } from '../hydro/bands.ts'
+import { SQUAT_METHODS } from '../hydro/squat/all.ts'
+import { WAVE_METHODS } from '../hydro/waves/all.ts'
+import { bankLimits, secondaryLimitAt, type BankLimits } from './criteria/bank-wave.ts'
+import { firstExcess } from './scan.ts'
+import { firstSpeedOfMethodAlone, heightByMethod } from './secondary-wave.ts'
+import type { Situation } from './situation.ts'
+
+/** One wave method at a speed. NaN where it has no value. */
+export interface WaveReport {
+  readonly id: string
+  readonly outside: readonly Outside[]
+  /** at the nearer bank, m */
+  readonly height: number
+  /** first speed at which this method alone, in its range, reaches the limit of a bank, m/s; Infinity when never */
+  readonly firstSpeed: number
+  readonly reference: string
+}
+
+/** One squat method at a speed. NaN where it has no value. */
+export interface SquatReport {
+  readonly id: string
+  readonly outside: readonly Outside[]
+  readonly squat: number
+  readonly reference: string
+}
+
+const BANKS = [0, 1] as const
+
+/** First speed at which a method alone reaches what a bank withstands. */
+function firstSpeedAtBank(
+  situation: Situation,
+  method: number,
+  interval: { readonly from: number; readonly to: number },
+  bank: 0 | 1,
+  limits: BankLimits,
+): number {
+  const distance = situation.section.distances[bank]
+  if (limits.secondary !== undefined) {
+    return firstSpeedOfMethodAlone(situation, interval, method, limits.secondary, distance)
+  }
+  const own = { list: [{ ...interval, active: 1 << method }], isOutOfRange: false }
+  return firstExcess(
+    own,
+    0,
+    situation.vessel.maxSpeed,
+    (speed) =>
+      heightByMethod(situation, method, speed, distance) - secondaryLimitAt(situation, limits, speed),
+  )
+}
+
+/** Every wave method at a speed, in range or not. */
+export function waveReports(situation: Situation, speed: number): WaveReport[] {
+  const limits = BANKS.map((bank) => bankLimits(situation, bank))
+  const distance = situation.section.distances[situation.nearer]
+  return WAVE_METHODS.map((method, i) => {
+    const interval = speedInterval(method, situation.setting)
+    let firstSpeed = Infinity
+    for (const bank of BANKS) {
+      const own = limits[bank]
+      if (interval && own)
+        firstSpeed = Math.min(firstSpeed, firstSpeedAtBank(situation, i, interval, bank, own))
+    }
+    return {
+      id: method.id,
+      outside: outsideAt(method, situation.setting, speed),
+      height: heightByMethod(situation, i, speed, distance),
+      firstSpeed,
+      reference: method.reference,
+    }
+  })
+}
+
+/** Every squat method at a speed, in range or not. */
+export function squatReports(situation: Situation, speed: number): SquatReport[] {
+  return SQUAT_METHODS.map((method) => ({
+    id: method.id,
+    outside: outsideAt(method, situation.setting, speed),
+    squat: method.squat(situation.setting, speed),
+    reference: method.reference,
+  }))
+}

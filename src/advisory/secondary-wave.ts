@@ -1,0 +1,122 @@
+import { activeAt } from '../hydro/bands.ts'
+import { WAVE_METHODS } from '../hydro/waves/all.ts'
+import { firstExcess, firstUnknownSpeed } from './scan.ts'
+import type { Situation } from './situation.ts'
+
+/** Highest secondary wave at a place, with the method it comes from. */
+export interface SecondaryWave {
+  /** m; NaN where no method counts */
+  readonly height: number
+  /** index into the list of methods; -1 where none counts */
+  readonly method: number
+}
+
+const UNKNOWN: SecondaryWave = { height: NaN, method: -1 }
+
+/** Height by one method alone with the water's factor, m, whatever its range; NaN where it has no value. */
+export function heightByMethod(situation: Situation, index: number, speed: number, distance: number): number {
+  const method = WAVE_METHODS[index]
+  if (!method?.hasCoefficients(situation.setting)) return NaN
+  return situation.waveFactor * method.height(situation.setting, speed, distance)
+}
+
+/**
+ * The secondary wave at a distance by the methods that count at this speed, combined as the caller asks.
+ *
+ * @param speed     through the water, m/s, > 0
+ * @param distance  from the sailing line, m, > B/2
+ */
+export function secondaryWave(situation: Situation, speed: number, distance: number): SecondaryWave {
+  const active = activeAt(situation.waveBands, speed)
+  if (active === 0) return UNKNOWN
+  if (situation.options.combine === 'median') return medianWave(situation, active, speed, distance)
+  let height = -1
+  let method = -1
+  for (let i = 0; i < WAVE_METHODS.length; i += 1) {
+    if ((active & (1 << i)) === 0) continue
+    const own = heightByMethod(situation, i, speed, distance)
+    if (own > height) {
+      height = own
+      method = i
+    }
+  }
+  return method === -1 ? UNKNOWN : { height, method }
+}
+
+/** Median of the methods that count; of an even number the mean of the middle two, named by the upper one. */
+function medianWave(situation: Situation, active: number, speed: number, distance: number): SecondaryWave {
+  const own: SecondaryWave[] = []
+  for (let i = 0; i < WAVE_METHODS.length; i += 1) {
+    if ((active & (1 << i)) !== 0) {
+      own.push({ height: heightByMethod(situation, i, speed, distance), method: i })
+    }
+  }
+  own.sort((a, b) => a.height - b.height)
+  const upper = own[Math.floor(own.length / 2)] ?? UNKNOWN
+  const lower = own[Math.floor((own.length - 1) / 2)] ?? UNKNOWN
+  return { height: (upper.height + lower.height) / 2, method: upper.method }
+}
+
+/**
+ * First speed in (from, to] above which the secondary wave exceeds a height, or none counts: `from` when at once,
+ * Infinity when never.
+ */
+export function secondaryFirstSpeed(
+  situation: Situation,
+  height: number,
+  distance: number,
+  from: number,
+  to: number,
+): number {
+  if (situation.options.combine === 'median') {
+    return firstExcess(
+      situation.waveBands,
+      from,
+      to,
+      (speed) => secondaryWave(situation, speed, distance).height - height,
+    )
+  }
+  for (const band of situation.waveBands.list) {
+    const start = Math.max(band.from, from)
+    const end = Math.min(band.to, to)
+    if (!(start < end)) continue
+    if (band.active === 0) return start
+    let first = Infinity
+    for (let i = 0; i < WAVE_METHODS.length; i += 1) {
+      if ((band.active & (1 << i)) === 0) continue
+      first = Math.min(first, firstSpeedByMethod(situation, i, height, distance, start, end))
+    }
+    if (first < Infinity) return first
+  }
+  return Infinity
+}
+
+function firstSpeedByMethod(
+  situation: Situation,
+  index: number,
+  height: number,
+  distance: number,
+  from: number,
+  to: number,
+): number {
+  const bare = height / situation.waveFactor
+  return WAVE_METHODS[index]?.firstSpeed(situation.setting, bare, distance, from, to) ?? Infinity
+}
+
+/** First speed at which one method alone exceeds a height, where it counts by its own range; Infinity when never. */
+export function firstSpeedOfMethodAlone(
+  situation: Situation,
+  interval: { readonly from: number; readonly to: number },
+  index: number,
+  height: number,
+  distance: number,
+): number {
+  const to = Math.min(interval.to, situation.vessel.maxSpeed)
+  if (!(interval.from < to)) return Infinity
+  return firstSpeedByMethod(situation, index, height, distance, interval.from, to)
+}
+
+/** First speed from `from` on at which no wave method counts, m/s. */
+export function secondaryUnknownFrom(situation: Situation, from: number): number {
+  return firstUnknownSpeed(situation.waveBands, from)
+}
