@@ -39,7 +39,8 @@ function firstSpeedAtBank(
   if (limits.secondary !== undefined) {
     return firstSpeedOfMethodAlone(situation, interval, method, limits.secondary, distance)
   }
-  const own = { list: [{ ...interval, active: 1 << method }], isOutOfRange: false }
+  const { steps } = situation.waveBands
+  const own = { list: [{ ...interval, active: 1 << method }], isOutOfRange: false, ...(steps && { steps }) }
   return firstExcess(
     own,
     0,

@@ -16,7 +16,7 @@ export function firstUnknownSpeed(bands: Bands, from: number): number {
  * First speed in (from, to] above which a measure of excess is positive, band by band, for measures that have no inverse
  * in closed form. A speed at which no method counts is exceeded.
  *
- * @param bands   within a band the measure is continuous
+ * @param bands   within a band the measure is continuous but for the steps, which are in rising order
  * @param excess  positive where the bound is exceeded
  * @returns `from` when exceeded at once; Infinity when never
  */
@@ -31,8 +31,24 @@ export function firstExcess(
     const end = Math.min(band.to, to)
     if (!(start < end)) continue
     if (band.active === 0) return start
+    const found = firstExcessInBand(bands.steps ?? [], start, end, excess)
+    if (found < Infinity) return found
+  }
+  return Infinity
+}
+
+/** Up to each step of a law by itself: a bound that lies within the step is reached on both sides of it. */
+function firstExcessInBand(
+  steps: readonly number[],
+  from: number,
+  to: number,
+  excess: (speed: number) => number,
+): number {
+  let start = from
+  for (const end of [...steps.filter((step) => step > from && step < to), to]) {
     const found = firstExcessWithin(start, end, excess)
     if (found < Infinity) return found
+    start = end
   }
   return Infinity
 }

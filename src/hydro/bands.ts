@@ -14,6 +14,8 @@ export interface Bands {
   readonly list: readonly Band[]
   /** no method is ever in range for this vessel here: those out of range count in place of none */
   readonly isOutOfRange: boolean
+  /** speeds within bands at which a law that can be computed steps down, m/s */
+  readonly steps?: readonly number[]
 }
 
 /** What keeps a method from counting at a speed. */
@@ -27,6 +29,7 @@ export interface Outside {
 /** A method of a family, with whether it can be computed for this vessel at all. */
 interface Candidate extends MethodDescription {
   hasCoefficients?(setting: Setting): boolean
+  stepSpeed?(setting: Setting): number
 }
 
 const binds = (rule: RangeRule, setting: Setting): boolean => rule.hulls?.includes(setting.hull) ?? true
@@ -100,8 +103,11 @@ function fallback(methods: readonly Candidate[], setting: Setting): number {
  */
 export function bandsOf(methods: readonly Candidate[], setting: Setting, preferred: number): Bands {
   const intervals = methods.map((method) => speedInterval(method, setting))
+  const speeds = methods.flatMap((method) => method.stepSpeed?.(setting) ?? [])
+  const steps = speeds.length > 0 ? { steps: speeds } : {}
   if (intervals.every((found) => found === undefined)) {
-    return { list: [{ from: 0, to: Infinity, active: fallback(methods, setting) }], isOutOfRange: true }
+    const list = [{ from: 0, to: Infinity, active: fallback(methods, setting) }]
+    return { list, isOutOfRange: true, ...steps }
   }
   const edges = new Set<number>([0, Infinity])
   for (const found of intervals) if (found) edges.add(found.from).add(found.to)
@@ -114,7 +120,7 @@ export function bandsOf(methods: readonly Candidate[], setting: Setting, preferr
     })
     return { from, to, active: (active & preferred) === 0 ? active : active & preferred }
   })
-  return { list, isOutOfRange: false }
+  return { list, isOutOfRange: false, ...steps }
 }
 
 /** Bits of the methods that count at a speed, > 0. */

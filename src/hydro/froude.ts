@@ -11,7 +11,7 @@ import { GRAVITY } from './constants.ts'
  * @holds any depth; level bed
  * @error exact within rounding
  * @source definition; CEM, EM 1110-2-1100 Part II ch. 7, p. II-7-61
- * @example depthFroudeNumber(2, 3) // 0.368728
+ * @example depthFroudeNumber(2, 3) // 0.368730
  */
 export function depthFroudeNumber(speed: number, depth: number): number {
   return speed / Math.sqrt(GRAVITY * depth)
@@ -28,7 +28,7 @@ export function depthFroudeNumber(speed: number, depth: number): number {
  * @holds any hull
  * @error exact within rounding
  * @source definition
- * @example lengthFroudeNumber(4, 20) // 0.285619
+ * @example lengthFroudeNumber(4, 20) // 0.285617
  */
 export function lengthFroudeNumber(speed: number, length: number): number {
   return speed / Math.sqrt(GRAVITY * length)

@@ -39,6 +39,8 @@ export interface WaveMethod extends MethodDescription {
   hasCoefficients(setting: Setting): boolean
   /** @returns H, m, ≥ 0, at `speed` through the water, m/s, > 0; NaN where the law has no value */
   height(setting: Setting, speed: number, distance: number): number
+  /** speed at which the height steps down for a change of coefficients, m/s; absent where it is continuous */
+  stepSpeed?(setting: Setting): number
   /**
    * First speed in (from, to] above which the height exceeds `height`: `from` when it does so at once, Infinity when it
    * never does. The law is taken as it stands, whatever its range.
@@ -55,7 +57,11 @@ export interface SquatMethod extends MethodDescription {
   firstSpeed(setting: Setting, squat: number, from: number, to: number): number
 }
 
-/** Where a rising law first exceeds its bound within (from, to], given the speed at which it reaches it. */
+/**
+ * Where a rising law first exceeds its bound within (from, to], given the speed at which it reaches it.
+ *
+ * @example risingFirstSpeed(2, 1, 3) // 2
+ */
 export function risingFirstSpeed(reachedAt: number, from: number, to: number): number {
   if (!(reachedAt > from)) return from
   return reachedAt < to ? reachedAt : Infinity

@@ -8,7 +8,7 @@
  * @error 4 units in the last place of x
  * @source Chandrupatla, T.R. (1997), A new hybrid quadratic/bisection algorithm for finding the zero of a nonlinear
  *   function without using derivatives, Advances in Engineering Software 28, 145-149 (from memory)
- * @example risingRoot((x) => x * x - 2, 1, 2) // 1.4142135623
+ * @example risingRoot((x) => x * x - 2, 1, 2) // 1.4142135624
  */
 export function risingRoot(f: (x: number) => number, low: number, high: number): number {
   // a: newest point, b: other end of the bracket, c: point before

@@ -15,7 +15,7 @@ import { ALL_HULLS, DISPLACEMENT_MODE, HULL_SIDE_DISTANCE, quantities, SUBCRITIC
  * @error a central estimate; scatter not reported. The source rounds the exponents to 0.33 and 2.67, 0.3 to 0.6 % apart
  * @source Blaauw, van der Knaap, de Groot & Pilarczyk (1984), Design of bank protection of inland navigation fairways,
  *   Delft Hydraulics Publ. 320 (from memory)
- * @example blaauwWaveHeight(4, 30, 0.25) // 0.154543
+ * @example blaauwWaveHeight(4, 30, 0.25) // 0.154537
  */
 export function blaauwWaveHeight(speed: number, hullSide: number, coefficient: number): number {
   // (V⁸/(g⁴ s))^(1/3): one root for the three thirds

@@ -21,7 +21,7 @@ const FIRST_CUSP = Math.PI / Math.sqrt(3)
  * @error not reported; made for deep water
  * @source Gates, E.T. & Herbich, J.B. (1977), TAMU-SG-77-206; bow coefficient: Saunders, H.E. (1957), Hydrodynamics in
  *   Ship Design, vol. 2 (both from memory)
- * @example gatesHerbichWaveHeight(5, 20, 40, 50) // 0.326646
+ * @example gatesHerbichWaveHeight(5, 20, 40, 50) // 0.326539
  */
 export function gatesHerbichWaveHeight(
   speed: number,

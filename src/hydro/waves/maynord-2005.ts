@@ -26,7 +26,7 @@ const HULL_COEFFICIENT = 0.8
  * @error not recalled; the coefficient is recalled poorly, the exponents well
  * @source Maynord, S.T. (2005), Wave height from planing and semi-planing small boats, River Research and Applications
  *   21, 1-17 (from memory)
- * @example maynordWaveHeight(11, 30, 1.5) // 0.116566
+ * @example maynordWaveHeight(11, 30, 1.5) // 0.116575
  */
 export function maynordWaveHeight(speed: number, distance: number, volume: number): number {
   const scale = Math.cbrt(volume)

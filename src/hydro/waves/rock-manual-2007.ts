@@ -25,7 +25,7 @@ const ENVELOPE = 1.2
  * @holds see the range of `rockManual2007`
  * @error an envelope of model tests and Dutch canal measurements; scatter not reported
  * @source CIRIA, CUR, CETMEF (2007), The Rock Manual, C683, 2nd ed., section 4.3.4 (from memory)
- * @example rockManualWaveHeight(3, 4, 20, 1) // 0.147774
+ * @example rockManualWaveHeight(3, 4, 20, 1) // 0.147766
  */
 export function rockManualWaveHeight(
   speed: number,

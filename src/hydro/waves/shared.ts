@@ -31,12 +31,20 @@ export const DEPTH_QUANTITY = DEPTH
 export const HULL_SIDE_DISTANCE = { symbol: 's', name: "hull's side to the place", unit: 'm' } as const
 export const SAILING_LINE_DISTANCE = { symbol: 'y', name: 'sailing line to the place', unit: 'm' } as const
 
-/** Whether a planing law has a value; the last digits of the threshold speed do not decide. */
+/**
+ * Whether a planing law has a value; the last digits of the threshold speed do not decide.
+ *
+ * @example isPlaning(2.5) // true
+ */
 export function isPlaning(volumeFroudeNumber: number): boolean {
   return volumeFroudeNumber >= PLANING_FROM * (1 - 1e-12)
 }
 
-/** `WaveMethod.firstSpeed` of a law that falls with speed: it exceeds at once or not at all. */
+/**
+ * `WaveMethod.firstSpeed` of a law that falls with speed: it exceeds at once or not at all.
+ *
+ * @example fallingFirstSpeed(0.4, 0.3, 6) // 6
+ */
 export function fallingFirstSpeed(heightAtStart: number, height: number, from: number): number {
   return heightAtStart > height ? from : Infinity
 }

@@ -32,7 +32,7 @@ const CHANGE = 0.55
  * @error factor 1.5 to 2; conservative beside other laws and measurements (National Park Service, Glacier Bay EIS)
  * @source Weggel, J.R. & Sorensen, R.M. (1986), Ship wave prediction for port and channel design, Ports '86, ASCE,
  *   pp. 797-814 (from memory); the depth cap is an own choice
- * @example weggelSorensenWaveHeight(3.5, 5, 100, 30) // 0.168206
+ * @example weggelSorensenWaveHeight(3.5, 5, 100, 30) // 0.168144
  */
 export function weggelSorensenWaveHeight(
   speed: number,
@@ -95,6 +95,7 @@ export const weggelSorensen1986: WaveMethod = {
   hasCoefficients: () => true,
   height: (setting, speed, distance) =>
     weggelSorensenWaveHeight(speed, setting.depth, setting.volume, distance),
+  stepSpeed: (setting) => CHANGE * Math.sqrt(GRAVITY * setting.depth) * (1 - 4 * Number.EPSILON),
   firstSpeed(setting, height, distance, from, to) {
     // three pieces: depth capped, first and second set of coefficients (the law falls by up to 0.3 % at the change)
     const celerity = Math.sqrt(GRAVITY * setting.depth)

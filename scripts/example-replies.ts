@@ -1,0 +1,31 @@
+import { pino } from 'pino'
+import { buildApp } from '../src/app.ts'
+import { readConfig } from '../src/config.ts'
+import { serviceParts } from '../src/parts.ts'
+
+/** Path of each operation that has an example. */
+export const EXAMPLE_PATHS: Readonly<Record<string, string>> = {
+  createAdvisory: '/v1/advisories',
+  createEffects: '/v1/effects',
+  createSensitivity: '/v1/advisories/sensitivity',
+  createInverse: '/v1/advisories/inverse',
+  createAdvisoryMatrix: '/v1/advisories/matrix',
+}
+
+/** What the service answers to an example; of rows, the first. */
+export async function exampleReply(operation: string, request: string): Promise<unknown> {
+  const path = EXAMPLE_PATHS[operation]
+  if (path === undefined)
+    throw new Error(`The example ${operation} has no path in scripts/example-replies.ts`)
+  const app = buildApp({ ...serviceParts(readConfig({})), log: pino({ level: 'silent' }) })
+  const reply = await app.inject({
+    method: 'POST',
+    url: path,
+    headers: { 'content-type': 'application/json' },
+    payload: request,
+  })
+  await app.close()
+  if (reply.statusCode !== 200) throw new Error(`The example ${operation} is refused: ${reply.body}`)
+  const [first = ''] = reply.body.split('\n')
+  return JSON.parse(first) as unknown
+}

@@ -1,0 +1,36 @@
+import type { FastifyReply, FastifyRequest } from 'fastify'
+import { Fault } from '../domain/fault.ts'
+import type { App } from './app-type.ts'
+
+/** One log line for each reply, and a problem for requests that arrive while the service stops. */
+export function installLifecycle(app: App): void {
+  let isStopping = false
+  app.addHook('preClose', (done) => {
+    isStopping = true
+    done()
+  })
+  app.addHook('onRequest', (_request, _reply, done) => {
+    if (isStopping) done(new Fault('stopping', 'The service is stopping; repeat the request shortly'))
+    else done()
+  })
+  app.addHook('onRequest', (request, reply, done) => {
+    reply.raw.once('close', () => {
+      // A reply that did not finish never reaches the hook below.
+      if (!reply.raw.writableEnded) log(request, reply, 'cut off')
+    })
+    done()
+  })
+  app.addHook('onResponse', (request, reply, done) => {
+    log(request, reply, 'answered')
+    done()
+  })
+}
+
+function log(request: FastifyRequest, reply: FastifyReply, message: string): void {
+  const { method, routeOptions } = request
+  const duration = Math.round(reply.elapsedTime * 10) / 10
+  request.log.info(
+    { method, route: routeOptions.url ?? 'unknown', status: reply.statusCode, duration_ms: duration },
+    message,
+  )
+}

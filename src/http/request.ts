@@ -1,0 +1,120 @@
+import { z } from 'zod'
+import type { Inputs } from '../advisory/uncertainty.ts'
+import { Fault, type FaultItem } from '../domain/fault.ts'
+import type { Segment } from '../domain/segment.ts'
+import type { Registry, SegmentRecord } from '../store/registry.ts'
+import { Label } from './fields.ts'
+import { nearestFirst } from './nearest.ts'
+import {
+  ConditionsFields,
+  OptionsFields,
+  toConditions,
+  toOptions,
+  type OptionsWire,
+} from './options.schema.ts'
+import { checkGeometry, SegmentFields, type RegistrySegmentWire, type SegmentWire } from './segment.schema.ts'
+import { toSegment } from './to-segment.ts'
+import { pointer, refused } from './validation.ts'
+import { toVessel, VesselFields } from './vessel.schema.ts'
+
+/** Fields that every request for an advisory has. */
+export const ADVISORY_FIELDS = {
+  label: Label,
+  segment: SegmentFields,
+  vessel: VesselFields,
+  conditions: ConditionsFields.optional(),
+  options: OptionsFields.optional(),
+} as const
+
+export const AdvisoryRequest = z
+  .strictObject(ADVISORY_FIELDS)
+  .meta({ id: 'AdvisoryRequest', description: 'A segment and a vessel, with the conditions of the moment.' })
+
+export type AdvisoryWire = z.output<typeof AdvisoryRequest>
+
+/** What a request rests on, and the registry segment it names. */
+export interface Resolved extends Inputs {
+  readonly record?: SegmentRecord
+}
+
+export function segmentNotFound(id: string, registry: Registry): Fault {
+  const ids = registry.segments().map((segment) => segment.id)
+  const [nearest] = nearestFirst(id, ids)
+  const hint = nearest === undefined ? '' : `; the nearest is ${nearest}`
+  return new Fault('segment-not-found', `There is no segment ${id}${hint}`, {
+    facts: { segment_id: id, ...(nearest !== undefined && { nearest }) },
+  })
+}
+
+/** A registry segment with the fields of a request in place of its own. */
+function overridden(stored: RegistrySegmentWire, wire: SegmentWire): RegistrySegmentWire {
+  const { id: _id, label: _label, ...given } = wire
+  if (Object.keys(given).length === 0) return stored
+  // distances are given in one of two ways: what the request has replaces either
+  if (given.bank_distance_m !== undefined) {
+    const { banks: _banks, ...kept } = stored
+    return { ...kept, ...given }
+  }
+  if (given.banks !== undefined) {
+    const { bank_distance_m: _distance, stations: _stations, width_m, ...kept } = stored
+    const hasBoth = given.banks.left.distance_m !== undefined && given.banks.right.distance_m !== undefined
+    return { ...kept, ...(!hasBoth && width_m !== undefined && { width_m }), ...given }
+  }
+  return { ...stored, ...given }
+}
+
+const segments = new WeakMap<SegmentRecord, Segment>()
+
+/** The segment of a record, made once for each revision. */
+export function segmentOf(record: SegmentRecord): Segment {
+  const known = segments.get(record)
+  if (known) return known
+  const segment = toSegment(record.properties, record)
+  segments.set(record, segment)
+  return segment
+}
+
+/** What a request replaces may leave the stored segment without its geometry. */
+function refuseIncomplete(merged: RegistrySegmentWire): void {
+  const errors: FaultItem[] = []
+  checkGeometry(merged, (path, code, detail) => {
+    errors.push({ pointer: pointer(['segment', ...path]), code, detail })
+  })
+  if (errors.length > 0) throw refused(errors)
+}
+
+export function resolveSegment(
+  wire: SegmentWire,
+  registry: Registry,
+): { segment: Segment; record?: SegmentRecord } {
+  if (wire.id === undefined) return { segment: toSegment(wire) }
+  const record = registry.findSegment(wire.id)
+  if (!record) throw segmentNotFound(wire.id, registry)
+  const stored: RegistrySegmentWire = record.properties
+  const merged = overridden(stored, wire)
+  if (merged === stored) return { segment: segmentOf(record), record }
+  refuseIncomplete(merged)
+  return { segment: toSegment(merged, record), record }
+}
+
+/** No calibration exists yet, so that naming one is a fault and not a factor of one. */
+export function refuseCalibration(segment: SegmentWire, options: OptionsWire | undefined): void {
+  const id = options?.calibration_id === undefined ? segment.calibration_id : options.calibration_id
+  if (id === undefined || id === null || options?.wave_factor !== undefined) return
+  throw new Fault('calibration-not-found', `There is no calibration ${id}`, { facts: { calibration_id: id } })
+}
+
+/**
+ * What a request rests on.
+ *
+ * @throws Fault `segment-not-found`, `vessel-class-not-found`, `calibration-not-found`, `impossible-input`
+ */
+export function resolve(wire: AdvisoryWire, registry: Registry): Resolved {
+  refuseCalibration(wire.segment, wire.options)
+  return {
+    ...resolveSegment(wire.segment, registry),
+    vessel: toVessel(wire.vessel),
+    conditions: toConditions(wire.conditions ?? {}),
+    options: toOptions(wire.options ?? {}),
+  }
+}

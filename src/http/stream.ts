@@ -1,0 +1,30 @@
+import { Readable } from 'node:stream'
+import type { FastifyReply } from 'fastify'
+import { Fault } from '../domain/fault.ts'
+
+/**
+ * Sends text as it is made. The first piece is awaited before the head goes out, so that a request refused by then
+ * gets a problem. Later pieces are made as fast as the caller reads; the generator is ended when the caller goes
+ * away, and when it throws the connection is reset, so that half an answer never looks whole.
+ */
+export async function sendStream(reply: FastifyReply, pieces: AsyncIterable<string>): Promise<FastifyReply> {
+  const iterator = pieces[Symbol.asyncIterator]()
+  const first = await iterator.next()
+  const stream = Readable.from(continued(first, iterator), { objectMode: false, highWaterMark: 65_536 })
+  // Also when the caller is gone before the first read, which would leave the generator waiting for ever.
+  stream.once('close', () => void iterator.return?.())
+  stream.once('error', (error) => {
+    if (error instanceof Fault)
+      reply.log.info({ code: error.code, detail: error.message }, 'stream broken off')
+    else reply.log.error({ err: error }, 'stream failed')
+  })
+  return reply.send(stream)
+}
+
+async function* continued(
+  first: IteratorResult<string, unknown>,
+  rest: AsyncIterator<string, unknown>,
+): AsyncGenerator<string> {
+  for (let piece = first; piece.done !== true; piece = await rest.next())
+    if (piece.value !== '') yield piece.value
+}
