@@ -1,5 +1,5 @@
 import type { BedKind, Direction } from '../domain/segment.ts'
-import { outsideAt } from '../hydro/bands.ts'
+import { isInRange } from '../hydro/bands.ts'
 import { permissibleVelocity } from '../hydro/permissible-velocity.ts'
 import { isSteady } from '../hydro/primary-wave.ts'
 import { WAVE_METHODS } from '../hydro/waves/all.ts'
@@ -65,12 +65,12 @@ export function speedCautions(situation: Situation, effects: Effects): Caution[]
 }
 
 function outsideRange(situation: Situation, speed: number): Caution | undefined {
-  const methods = WAVE_METHODS.filter(
-    (method) =>
-      method.hulls.includes(situation.setting.hull) &&
-      method.hasCoefficients(situation.setting) &&
-      outsideAt(method, situation.setting, speed).length > 0,
-  ).map((method) => method.id)
+  const { setting, waveBands } = situation
+  const methods: string[] = []
+  WAVE_METHODS.forEach((method, i) => {
+    const isMeant = method.hulls.includes(setting.hull) && method.hasCoefficients(setting)
+    if (isMeant && !isInRange(waveBands, i, speed)) methods.push(method.id)
+  })
   if (methods.length === 0) return undefined
   return {
     code: 'outside-method-range',

@@ -14,12 +14,16 @@ export interface FasterWindow {
   readonly to: number
 }
 
-/** Whether a method leaves its range, or one that falls with speed counts, between two speeds. */
-function canFall(bands: Bands, fallingBits: number, from: number, to: number): boolean {
+/**
+ * Whether a method leaves its range, or one that falls with speed counts, between two speeds. A median can also fall where
+ * a method enters its range below it.
+ */
+function canFall(bands: Bands, fallingBits: number, from: number, to: number, isMedian: boolean): boolean {
   let before = 0
   for (const band of bands.list) {
     const isWithin = band.to > from && band.from < to
-    if (isWithin && ((before & ~band.active) !== 0 || (band.active & fallingBits) !== 0)) return true
+    const lost = isMedian ? before ^ band.active : before & ~band.active
+    if (isWithin && (lost !== 0 || (band.active & fallingBits) !== 0)) return true
     before = band.active
   }
   return false
@@ -40,8 +44,8 @@ export function fasterWindow(decision: Decision): FasterWindow | undefined {
     .filter(({ criterion }) => CEILINGS.includes(criterion.id))
     .reduce((least, bound) => Math.min(least, bound.firstSpeed), situation.vessel.maxSpeed)
   const mayFall =
-    canFall(situation.waveBands, FALLING_BITS, speed, ceiling) ||
-    canFall(situation.squatBands, 0, speed, ceiling)
+    canFall(situation.waveBands, FALLING_BITS, speed, ceiling, situation.options.combine === 'median') ||
+    canFall(situation.squatBands, 0, speed, ceiling, false)
   if (!(speed < ceiling) || !mayFall) return undefined
   const holdsAt = (v: number): boolean => bounds.every(({ criterion }) => criterion.evaluate(v).isMet)
   let fails = speed * (1 + 1e-6)

@@ -1,4 +1,4 @@
-import { outsideAt, speedInterval, type Outside } from '../hydro/bands.ts'
+import { isInRange, outsideAt, type Bands, type Outside } from '../hydro/bands.ts'
 import { SQUAT_METHODS } from '../hydro/squat/all.ts'
 import { WAVE_METHODS } from '../hydro/waves/all.ts'
 import { bankLimits, secondaryLimitAt, type BankLimits } from './criteria/bank-wave.ts'
@@ -27,6 +27,9 @@ export interface SquatReport {
 
 const BANKS = [0, 1] as const
 
+/** Nothing keeps a method out. */
+const INSIDE: readonly Outside[] = []
+
 /** First speed at which a method alone reaches what a bank withstands. */
 function firstSpeedAtBank(
   situation: Situation,
@@ -40,7 +43,8 @@ function firstSpeedAtBank(
     return firstSpeedOfMethodAlone(situation, interval, method, limits.secondary, distance)
   }
   const { steps } = situation.waveBands
-  const own = { list: [{ ...interval, active: 1 << method }], isOutOfRange: false, ...(steps && { steps }) }
+  const list = [{ ...interval, active: 1 << method }]
+  const own: Bands = { list, intervals: [], isOutOfRange: false, ...(steps && { steps }) }
   return firstExcess(
     own,
     0,
@@ -55,7 +59,7 @@ export function waveReports(situation: Situation, speed: number): WaveReport[] {
   const limits = BANKS.map((bank) => bankLimits(situation, bank))
   const distance = situation.section.distances[situation.nearer]
   return WAVE_METHODS.map((method, i) => {
-    const interval = speedInterval(method, situation.setting)
+    const interval = situation.waveBands.intervals[i]
     let firstSpeed = Infinity
     for (const bank of BANKS) {
       const own = limits[bank]
@@ -64,7 +68,9 @@ export function waveReports(situation: Situation, speed: number): WaveReport[] {
     }
     return {
       id: method.id,
-      outside: outsideAt(method, situation.setting, speed),
+      outside: isInRange(situation.waveBands, i, speed)
+        ? INSIDE
+        : outsideAt(method, situation.setting, speed),
       height: heightByMethod(situation, i, speed, distance),
       firstSpeed,
       reference: method.reference,
@@ -74,9 +80,9 @@ export function waveReports(situation: Situation, speed: number): WaveReport[] {
 
 /** Every squat method at a speed, in range or not. */
 export function squatReports(situation: Situation, speed: number): SquatReport[] {
-  return SQUAT_METHODS.map((method) => ({
+  return SQUAT_METHODS.map((method, i) => ({
     id: method.id,
-    outside: outsideAt(method, situation.setting, speed),
+    outside: isInRange(situation.squatBands, i, speed) ? INSIDE : outsideAt(method, situation.setting, speed),
     squat: method.squat(situation.setting, speed),
     reference: method.reference,
   }))

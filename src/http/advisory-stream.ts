@@ -105,13 +105,25 @@ function fullLine(item: Item, { registry, serviceVersion }: AdvisoryParts, reque
   }
 }
 
+/** Lines that are answered before the caller is given what there is. */
+const LINES_AT_ONCE = 10
+
 const csvOf = (row: CompactRow): string => csvRow(COMPACT_COLUMNS.map((column) => row[column]))
 const jsonLine = (value: unknown): string => `${toFiniteJson(value)}\n`
 
 async function* answered(items: Items, head: string, toText: (item: Item) => string): AsyncGenerator<string> {
   let text = head
+  let made = 0
   for await (const batch of items) {
-    for (const item of batch) text += toText(item)
+    for (const item of batch) {
+      text += toText(item)
+      made += 1
+      if (made % LINES_AT_ONCE !== 0) continue
+      yield text
+      text = ''
+      // other requests have their turn: a piece of the body may hold a thousand lines
+      await new Promise(setImmediate)
+    }
     yield text
     text = ''
   }

@@ -48,12 +48,10 @@ const COLUMNS = {
   problem_detail: text,
 } as const
 
-const CompactAdvisory = z
-  .object({ line: LineNumber, ...COLUMNS })
-  .meta({
-    id: 'AdvisoryRow',
-    description: 'A flat advisory: every column present, null where it does not apply.',
-  })
+const CompactAdvisory = z.object({ line: LineNumber, ...COLUMNS }).meta({
+  id: 'AdvisoryRow',
+  description: 'A flat advisory: every column present, null where it does not apply.',
+})
 
 export const MatrixRow = z
   .object({ segment_index: index, vessel_index: index, condition_index: index, ...COLUMNS })

@@ -77,7 +77,8 @@ export function installErrors(app: App): void {
 function answerUnknown(request: FastifyRequest, reply: FastifyReply, routes: readonly KnownRoute[]): void {
   const path = request.url.split('?', 1)[0] ?? request.url
   const allowed = allowedMethods(routes, path)
-  if (allowed.length === 0) {
+  // A path below which files are served may have the method and not the file.
+  if (allowed.length === 0 || (allowed.includes(request.method) && request.method !== 'OPTIONS')) {
     answerError(new Fault('route-not-found', 'There is no such path; /docs lists them all'), request, reply)
     return
   }

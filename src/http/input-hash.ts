@@ -1,55 +1,132 @@
 import { createHash } from 'node:crypto'
-import canonicalize from 'canonicalize'
 import type { Inputs } from '../advisory/uncertainty.ts'
-import type { Segment, Station } from '../domain/segment.ts'
+import type { Conditions, Options } from '../domain/conditions.ts'
+import type { Bank, Group, PostedLimit, Receptor, SectionShape, Segment, Station } from '../domain/segment.ts'
 import type { Vessel } from '../domain/vessel.ts'
 
-function stationContent({ chainage, depth, width, distances, shape }: Station) {
-  return { chainage, depth, width, distances, shape }
-}
+// Canonical JSON (RFC 8785) sorts the names of fields and writes numbers as JavaScript does. Every object below names its
+// fields in that order, so that JSON.stringify gives the canonical form at once; fields left out are not written.
+
+const shapeContent = (shape: SectionShape) =>
+  shape.kind === 'profile'
+    ? { bedDepths: shape.bedDepths, kind: shape.kind, offsets: shape.offsets }
+    : { bottomWidth: shape.bottomWidth, kind: shape.kind, slope: shape.slope }
+
+const stationContent = (station: Station) => ({
+  chainage: station.chainage,
+  depth: station.depth,
+  distances: station.distances,
+  shape: shapeContent(station.shape),
+  width: station.width,
+})
+
+const bankContent = (bank: Bank) => ({
+  kind: bank.kind,
+  maxDrawdown: bank.maxDrawdown,
+  maxReturnCurrent: bank.maxReturnCurrent,
+  maxWaveHeight: bank.maxWaveHeight,
+  side: bank.side,
+  slope: bank.slope,
+  stoneD50: bank.stoneD50,
+  stoneRelativeDensity: bank.stoneRelativeDensity,
+  toeDepth: bank.toeDepth,
+})
+
+const receptorContent = (receptor: Receptor) => ({
+  chainage: receptor.chainage,
+  distance: receptor.distance,
+  kind: receptor.kind,
+  maxWaveHeight: receptor.maxWaveHeight,
+  side: receptor.side,
+})
+
+const groupContent = (group: Group) => ({
+  hull: group.hull,
+  loading: group.loading,
+  maxDraught: group.maxDraught,
+  minDraught: group.minDraught,
+  minLength: group.minLength,
+  vesselClasses: group.vesselClasses,
+})
+
+const postedContent = (limit: PostedLimit) => ({
+  appliesTo: groupContent(limit.appliesTo),
+  direction: limit.direction,
+  reference: limit.reference,
+  speed: limit.speed,
+})
 
 /** A segment without its names: what its figures follow from. */
-function segmentContent(segment: Segment) {
-  return {
-    stations: segment.stations.map(stationContent),
-    banks: segment.banks.map(({ isKindGiven: _, ...bank }) => bank),
-    receptors: segment.receptors.map(({ name: _, ...receptor }) => receptor),
-    postedLimits: segment.postedLimits,
-    confinement: segment.confinement,
-    bedKind: segment.bedKind,
-    minUnderKeelClearance: segment.minUnderKeelClearance,
-    maxDraught: segment.maxDraught,
-  }
-}
+const segmentContent = (segment: Segment) => ({
+  banks: segment.banks.map(bankContent),
+  bedKind: segment.bedKind,
+  confinement: segment.confinement,
+  maxDraught: segment.maxDraught,
+  minUnderKeelClearance: segment.minUnderKeelClearance,
+  postedLimits: segment.postedLimits.map(postedContent),
+  receptors: segment.receptors.map(receptorContent),
+  stations: segment.stations.map(stationContent),
+})
 
-/** A vessel by its figures, whatever they rest on. */
-function vesselContent({ basis: _, className: _name, ...vessel }: Vessel) {
-  return vessel
-}
+/** A vessel by its figures; whether its draught is its own decides what a permitted draught does to it. */
+const vesselContent = (vessel: Vessel) => ({
+  beam: vessel.beam,
+  blockCoefficient: vessel.blockCoefficient,
+  centralCoefficient: vessel.centralCoefficient,
+  classId: vessel.classId,
+  draught: vessel.draught,
+  entranceLength: vessel.entranceLength,
+  envelopeCoefficient: vessel.envelopeCoefficient,
+  hull: vessel.hull,
+  isDraughtGiven: vessel.basis.draught === 'given',
+  isInlandMotorVessel: vessel.isInlandMotorVessel,
+  length: vessel.length,
+  loading: vessel.loading,
+  maxSpeed: vessel.maxSpeed,
+  midshipCoefficient: vessel.midshipCoefficient,
+  minSteerageSpeed: vessel.minSteerageSpeed,
+  trade: vessel.trade,
+  volume: vessel.volume,
+})
 
-/** Whether a draught is the vessel's own matters only where a permitted draught caps those that are not. */
-function draughtContent(vessel: Vessel, segment: Segment) {
-  return segment.maxDraught === undefined ? {} : { isDraughtGiven: vessel.basis.draught === 'given' }
-}
+const conditionsContent = (conditions: Conditions) => ({
+  current: conditions.current,
+  direction: conditions.direction,
+  meetingVessel: conditions.meetingVessel && vesselContent(conditions.meetingVessel),
+  waterLevel: conditions.waterLevel,
+})
 
-/**
- * Hash of everything an advisory follows from, with every default filled in and ids replaced by content: SHA-256 over
- * the canonical JSON of RFC 8785. Names, labels and attributes are not in it.
- */
-export function inputHash({ segment, vessel, conditions, options }: Inputs): string {
-  const { waterLevel, current, direction, meetingVessel } = conditions
-  const content = {
-    segment: segmentContent(segment),
-    vessel: { ...vesselContent(vessel), ...draughtContent(vessel, segment) },
-    conditions: {
-      waterLevel,
-      current,
-      direction,
-      meetingVessel: meetingVessel && vesselContent(meetingVessel),
-    },
-    options: { ...options, limits: { wakeWash: 'when-long', ...options.limits } },
-  }
+const optionsContent = ({ limits, ...options }: Options) => ({
+  applyPostedLimit: options.applyPostedLimit,
+  combine: options.combine,
+  hasCurve: options.hasCurve,
+  limits: {
+    maxBankWaveHeight: limits.maxBankWaveHeight,
+    maxCriticalRatio: limits.maxCriticalRatio,
+    maxDepthFroudeNumber: limits.maxDepthFroudeNumber,
+    maxDrawdown: limits.maxDrawdown,
+    maxReceptorWaveHeight: limits.maxReceptorWaveHeight,
+    maxReturnCurrent: limits.maxReturnCurrent,
+    minUnderKeelClearanceRatio: limits.minUnderKeelClearanceRatio,
+    wakeWash: limits.wakeWash,
+  },
+  signStep: options.signStep,
+  signUnit: options.signUnit,
+  waveFactor: options.waveFactor,
+  waveMethods: options.waveMethods,
+})
+
+/** Everything an advisory follows from, with every default filled in and ids replaced by content. */
+export const inputContent = ({ segment, vessel, conditions, options }: Inputs) => ({
+  conditions: conditionsContent(conditions),
+  options: optionsContent(options),
+  segment: segmentContent(segment),
+  vessel: vesselContent(vessel),
+})
+
+/** SHA-256 over the canonical JSON of `inputContent`. Names, labels and attributes are not in it. */
+export function inputHash(inputs: Inputs): string {
   return `sha256:${createHash('sha256')
-    .update(canonicalize(content) ?? '')
+    .update(JSON.stringify(inputContent(inputs)))
     .digest('hex')}`
 }

@@ -18,15 +18,13 @@ export function toPair(decision: Decision, speed: number) {
   return { through_water: toSpeed(speed), over_ground: toSpeed(overGround) }
 }
 
-/** A figure under its name, or nothing where it does not apply. */
-export function known<Name extends string>(name: Name, value: number): Partial<Record<Name, number>> {
-  return Number.isFinite(value) ? ({ [name]: value } as Record<Name, number>) : {}
-}
+/** A figure, or undefined, which is not written, where it does not apply. */
+export const known = (value: number): number | undefined => (Number.isFinite(value) ? value : undefined)
 
 export function toVesselReply(vessel: Vessel) {
   return {
-    ...(vessel.classId !== undefined && { class: vessel.classId }),
-    ...(vessel.loading && { loading: vessel.loading }),
+    class: vessel.classId,
+    loading: vessel.loading,
     hull: vessel.hull,
     length_m: vessel.length,
     beam_m: vessel.beam,
@@ -44,10 +42,10 @@ function toBankReply(bank: BankEffects) {
   return {
     side: bank.side,
     distance_m: bank.distance,
-    ...known('wave_height_m', bank.waveHeight),
-    ...known('drawdown_m', bank.drawdown),
-    ...known('return_current_mps', bank.returnCurrent),
-    ...known('wave_energy_j_per_m', bank.waveEnergy),
+    wave_height_m: known(bank.waveHeight),
+    drawdown_m: known(bank.drawdown),
+    return_current_mps: known(bank.returnCurrent),
+    wave_energy_j_per_m: known(bank.waveEnergy),
     first_arrival_s: bank.firstArrival,
   }
 }
@@ -60,22 +58,22 @@ export function toEffectsReply(decision: Decision, effects: Effects) {
     length_froude_number: effects.lengthFroudeNumber,
     critical_ratio: effects.criticalRatio,
     regime: effects.regime,
-    ...known('blockage_ratio', effects.blockageRatio),
-    ...known('return_current_mps', effects.returnCurrent),
-    ...known('drawdown_m', effects.drawdown),
-    ...known('front_wave_height_m', effects.frontWaveHeight),
-    ...known('stern_wave_height_m', effects.sternWaveHeight),
-    ...known('squat_m', effects.squat),
-    ...known('under_keel_clearance_m', effects.underKeelClearance),
+    blockage_ratio: known(effects.blockageRatio),
+    return_current_mps: known(effects.returnCurrent),
+    drawdown_m: known(effects.drawdown),
+    front_wave_height_m: known(effects.frontWaveHeight),
+    stern_wave_height_m: known(effects.sternWaveHeight),
+    squat_m: known(effects.squat),
+    under_keel_clearance_m: known(effects.underKeelClearance),
     wake: {
       half_angle_deg: wake.halfAngle * DEGREES,
       cusp_propagation_angle_deg: wake.propagationAngle * DEGREES,
-      ...known('period_s', wake.period),
-      ...known('length_m', wake.waveLength),
-      ...known('transverse_length_m', wake.transverseWaveLength),
+      period_s: known(wake.period),
+      length_m: known(wake.waveLength),
+      transverse_length_m: known(wake.transverseWaveLength),
     },
-    ...known('bank_wave_height_m', effects.bankWaveHeight),
-    ...known('bank_wave_energy_j_per_m', effects.bankWaveEnergy),
+    bank_wave_height_m: known(effects.bankWaveHeight),
+    bank_wave_energy_j_per_m: known(effects.bankWaveEnergy),
     banks: effects.banks.map(toBankReply),
   }
 }
@@ -91,13 +89,13 @@ export function toCriterionReply(decision: Decision, report: CriterionReport) {
   return {
     id: criterion.id,
     at: criterion.place,
-    ...(evaluation.component !== undefined && { component: evaluation.component }),
+    component: evaluation.component,
     sense: criterion.sense,
     limit: evaluation.limit,
     unit: criterion.unit,
-    ...known('value', evaluation.value ?? NaN),
-    ...known('margin_ratio', marginOf(report)),
-    ...(firstSpeed < Infinity && { max_speed: toPair(decision, firstSpeed) }),
+    value: known(evaluation.value ?? NaN),
+    margin_ratio: known(marginOf(report)),
+    max_speed: firstSpeed < Infinity ? toPair(decision, firstSpeed) : undefined,
     met: evaluation.isMet,
     governing: report.isGoverning,
     origin: criterion.origin,
@@ -110,9 +108,9 @@ export function toWaveReply(decision: Decision, report: WaveReport) {
     id: report.id,
     applicable: report.outside.length === 0,
     outside: report.outside,
-    ...known('height_m', report.height),
-    ...(waveFactor !== undefined && { factor: waveFactor }),
-    ...(report.firstSpeed < Infinity && { max_speed: toPair(decision, report.firstSpeed) }),
+    height_m: known(report.height),
+    factor: waveFactor,
+    max_speed: report.firstSpeed < Infinity ? toPair(decision, report.firstSpeed) : undefined,
     reference: report.reference,
   }
 }
@@ -122,7 +120,7 @@ export function toSquatReply(report: SquatReport) {
     id: report.id,
     applicable: report.outside.length === 0,
     outside: report.outside,
-    ...known('squat_m', report.squat),
+    squat_m: known(report.squat),
     reference: report.reference,
   }
 }
@@ -134,23 +132,24 @@ export function toCriticalReply(decision: Decision) {
     ...toPair(decision, setting.criticalSpeed),
     basis: setting.isConfined ? 'confined-channel' : 'open-water',
     shallow_water_wave_speed: toSpeed(situation.shallowWaveSpeed),
-    ...(setting.isConfined && { supercritical_onset: toSpeed(setting.supercriticalOnset) }),
-    ...(Number.isFinite(meetingCriticalSpeed) && { meeting_like_vessel: toSpeed(meetingCriticalSpeed) }),
+    supercritical_onset: setting.isConfined ? toSpeed(setting.supercriticalOnset) : undefined,
+    meeting_like_vessel: Number.isFinite(meetingCriticalSpeed) ? toSpeed(meetingCriticalSpeed) : undefined,
   }
 }
 
-export const recommendedReply = (decision: Decision) =>
-  decision.outcome !== 'no-safe-speed' && { recommended_max_speed: toPair(decision, decision.speed) }
+/** The recommended speed, or undefined when no speed is safe. */
+export const recommendedPair = (decision: Decision) =>
+  decision.outcome === 'no-safe-speed' ? undefined : toPair(decision, decision.speed)
 
 export function toDirectionReply(decision: Decision) {
   return {
     outcome: decision.outcome,
     governing_criterion: decision.governing.criterion.id,
-    ...recommendedReply(decision),
+    recommended_max_speed: recommendedPair(decision),
   }
 }
 
-const FLAT_NULL = (value: number): number | null => (Number.isFinite(value) ? value : null)
+const orNull = (value: number): number | null => (Number.isFinite(value) ? value : null)
 
 /** The points of a curve as flat rows: every column present, null where it does not apply. */
 export function toCurveReply(curve: Curve) {
@@ -166,13 +165,13 @@ export function toCurveReply(curve: Curve) {
         depth_froude_number: effects.depthFroudeNumber,
         critical_ratio: effects.criticalRatio,
         regime: effects.regime,
-        bank_wave_height_m: FLAT_NULL(effects.bankWaveHeight),
-        stern_wave_height_m: FLAT_NULL(effects.sternWaveHeight),
-        drawdown_m: FLAT_NULL(effects.drawdown),
-        return_current_mps: FLAT_NULL(effects.returnCurrent),
-        squat_m: FLAT_NULL(effects.squat),
-        under_keel_clearance_m: FLAT_NULL(effects.underKeelClearance),
-        wave_height_by_method_m: Object.fromEntries(heights.map(({ id, height }) => [id, FLAT_NULL(height)])),
+        bank_wave_height_m: orNull(effects.bankWaveHeight),
+        stern_wave_height_m: orNull(effects.sternWaveHeight),
+        drawdown_m: orNull(effects.drawdown),
+        return_current_mps: orNull(effects.returnCurrent),
+        squat_m: orNull(effects.squat),
+        under_keel_clearance_m: orNull(effects.underKeelClearance),
+        wave_height_by_method_m: Object.fromEntries(heights.map(({ id, height }) => [id, orNull(height)])),
       }
     }),
   }

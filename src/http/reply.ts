@@ -5,13 +5,12 @@ import type { Decision } from '../advisory/decide.ts'
 import { inputHash } from './input-hash.ts'
 import {
   known,
-  recommendedReply,
+  recommendedPair,
   toCriterionReply,
   toCriticalReply,
   toCurveReply,
   toDirectionReply,
   toEffectsReply,
-  toPair,
   toSquatReply,
   toVesselReply,
   toWaveReply,
@@ -24,39 +23,48 @@ export interface ReplyContext {
   readonly registryRevision: number
 }
 
-/** What both kinds of answer begin with. */
-function headOf(decision: Decision, resolved: Resolved, label: string | undefined) {
+/** What both kinds of answer begin with. Fields that are undefined are not written. */
+function headOf(decision: Decision, { record, segment }: Resolved, label: string | undefined) {
   const { situation } = decision
-  const { record } = resolved
   const { chainage, index } = situation.station
   return {
-    ...(label !== undefined && { label }),
-    ...(record && {
-      segment: {
-        id: record.id,
-        ...(resolved.segment.name !== undefined && { name: resolved.segment.name }),
-        revision: record.revision,
-      },
-      station: { index, ...(chainage !== undefined && { chainage_m: chainage }) },
-    }),
+    label,
+    segment: record && { id: record.id, name: segment.name, revision: record.revision },
+    station: record && { index, chainage_m: chainage },
     vessel: toVesselReply(situation.vessel),
     conditions: {
       water_level_m: situation.conditions.waterLevel,
       current_mps: situation.conditions.current,
-      ...(decision.direction && { direction: decision.direction }),
+      direction: decision.direction,
     },
   }
 }
 
-export function reproducibility(resolved: Resolved, context: ReplyContext) {
+function reproducibility(resolved: Resolved, context: ReplyContext) {
+  const { record } = resolved
   return {
     service_version: context.serviceVersion,
     method_version: METHOD_VERSION,
     input_hash: inputHash(resolved),
-    ...(resolved.record && {
-      segment_revision: resolved.record.revision,
-      registry_revision: context.registryRevision,
-    }),
+    segment_revision: record?.revision,
+    registry_revision: record && context.registryRevision,
+  }
+}
+
+/** Lists that both kinds of answer hold. */
+function listsOf(decision: Decision, answer: Advisory | Assessment) {
+  return {
+    criteria: answer.criteria.map((report) => toCriterionReply(decision, report)),
+    wave_methods: answer.waveMethods.map((report) => toWaveReply(decision, report)),
+    squat_methods: answer.squatMethods.map(toSquatReply),
+  }
+}
+
+function toUncalibratedReply({ decision, bankWaveHeight }: NonNullable<Advisory['uncalibrated']>) {
+  return {
+    outcome: decision.outcome,
+    recommended_max_speed: recommendedPair(decision),
+    bank_wave_height_m: known(bankWaveHeight),
   }
 }
 
@@ -67,43 +75,32 @@ export function toAdvisoryReply(
   context: ReplyContext,
   label: string | undefined,
 ) {
-  const { decision, byDirection, sign, effects, uncalibrated, curve } = advisory
-  const isSafe = decision.outcome !== 'no-safe-speed'
-  const effectsReply = toEffectsReply(decision, effects)
+  const { decision, byDirection, sign, uncalibrated, curve } = advisory
+  const recommended = recommendedPair(decision)
+  const effects = toEffectsReply(decision, advisory.effects)
+  const critical = toCriticalReply(decision)
+  const lists = listsOf(decision, advisory)
   return {
     ...headOf(decision, resolved, label),
     outcome: decision.outcome,
     governing_criterion: decision.governing.criterion.id,
     governing_at: decision.governing.criterion.place,
-    ...(byDirection && {
-      by_direction: {
-        upstream: toDirectionReply(byDirection.upstream),
-        downstream: toDirectionReply(byDirection.downstream),
-      },
-    }),
-    ...(isSafe && {
-      recommended_max_speed: { ...toPair(decision, decision.speed), ...(sign && { sign }) },
-    }),
-    critical_speed: toCriticalReply(decision),
-    ...(isSafe ? { at_recommended_speed: effectsReply } : { at_minimum_steerage_speed: effectsReply }),
-    criteria: advisory.criteria.map((report) => toCriterionReply(decision, report)),
-    wave_methods: advisory.waveMethods.map((report) => toWaveReply(decision, report)),
-    squat_methods: advisory.squatMethods.map(toSquatReply),
-    ...(uncalibrated && {
-      uncalibrated: {
-        outcome: uncalibrated.decision.outcome,
-        ...recommendedReply(uncalibrated.decision),
-        ...known('bank_wave_height_m', uncalibrated.bankWaveHeight),
-      },
-    }),
-    ...(curve && {
-      speed_curve: {
-        ...toCurveReply(curve),
-        criteria: advisory.criteria.map((report) => toCriterionReply(decision, report)),
-        critical_speed: toCriticalReply(decision),
-        ...recommendedReply(decision),
-      },
-    }),
+    by_direction: byDirection && {
+      upstream: toDirectionReply(byDirection.upstream),
+      downstream: toDirectionReply(byDirection.downstream),
+    },
+    recommended_max_speed: recommended && { ...recommended, sign },
+    critical_speed: critical,
+    at_recommended_speed: recommended && effects,
+    at_minimum_steerage_speed: recommended ? undefined : effects,
+    ...lists,
+    uncalibrated: uncalibrated && toUncalibratedReply(uncalibrated),
+    speed_curve: curve && {
+      ...toCurveReply(curve),
+      criteria: lists.criteria,
+      critical_speed: critical,
+      recommended_max_speed: recommended,
+    },
     cautions: advisory.cautions,
     assumptions: advisory.assumptions,
     reproducibility: reproducibility(resolved, context),
@@ -118,16 +115,13 @@ export function toAssessmentReply(
   label: string | undefined,
 ) {
   const { decision, criteria } = assessment
+  const exceeded = criteria.filter(({ evaluation }) => !evaluation.isMet).map(({ criterion }) => criterion.id)
   return {
     ...headOf(decision, resolved, label),
     verdict: assessment.verdict,
-    exceeded: [
-      ...new Set(criteria.filter(({ evaluation }) => !evaluation.isMet).map(({ criterion }) => criterion.id)),
-    ],
+    exceeded: [...new Set(exceeded)],
     effects: toEffectsReply(decision, assessment.effects),
-    criteria: criteria.map((report) => toCriterionReply(decision, report)),
-    wave_methods: assessment.waveMethods.map((report) => toWaveReply(decision, report)),
-    squat_methods: assessment.squatMethods.map(toSquatReply),
+    ...listsOf(decision, assessment),
     cautions: assessment.cautions,
     assumptions: assessment.assumptions,
     reproducibility: reproducibility(resolved, context),

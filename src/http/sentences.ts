@@ -45,6 +45,8 @@ function isWhole({ schema, base, path }: Finding): boolean {
 }
 
 function describe(issue: Issue, value: unknown, text: boolean, whole: boolean): Remark {
+  // a parameter given twice comes as a list
+  if (text && Array.isArray(value)) return { code: 'wrong-type', detail: 'must be given once only' }
   if (issue.message !== '') return { code: 'pattern', detail: issue.message }
   if (issue.code === 'invalid_type') return wrongType(whole ? 'int' : issue.expected, value, text)
   if (issue.code === 'invalid_value') return notInList(issue.values, value)
@@ -85,7 +87,6 @@ function required(issue: Issue, path: readonly PropertyKey[], text: boolean, who
 }
 
 function wrongType(expected: string, value: unknown, text: boolean): Remark {
-  if (text && Array.isArray(value)) return { code: 'wrong-type', detail: 'must be given once only' }
   if (text) return { code: 'wrong-type', detail: `must be ${textForm(expected)}` }
   if (expected === 'int' && typeof value === 'number')
     return { code: 'wrong-type', detail: 'must be a whole number' }
@@ -118,7 +119,6 @@ function noBranch(issue: z.core.$ZodIssueInvalidUnion, value: unknown, text: boo
   const values = roots.flatMap((inner) => (inner.code === 'invalid_value' ? inner.values : []))
   const kinds = roots.flatMap((inner) => (inner.code === 'invalid_type' ? [noun(inner.expected)] : []))
   if (kinds.length === 0) return notInList(values, value)
-  if (text && Array.isArray(value)) return { code: 'wrong-type', detail: 'must be given once only' }
   const allowed = nearestFirst(typeof value === 'string' ? value : '', values.map(String))
   const choices = [...values.map((choice) => JSON.stringify(choice)), ...new Set(kinds)]
   const detail = `must be ${choices.join(' or ')}${text ? '' : `, not ${kindOf(value)}`}`

@@ -12,6 +12,8 @@ export interface Band {
 /** Which methods of a family count at which speeds, from rest to Infinity without a hole. */
 export interface Bands {
   readonly list: readonly Band[]
+  /** speeds at which each method is in range; undefined where it never is for this vessel here */
+  readonly intervals: readonly (SpeedInterval | undefined)[]
   /** no method is ever in range for this vessel here: those out of range count in place of none */
   readonly isOutOfRange: boolean
   /** speeds within bands at which a law that can be computed steps down, m/s */
@@ -51,13 +53,15 @@ export interface SpeedInterval {
   readonly to: number
 }
 
-/** Speeds at which a quantity that rises with speed keeps to a rule; one that levels off at its bound keeps to it. */
-function speedsOf({ min, max }: RangeRule, quantity: Quantity, setting: Setting): SpeedInterval {
-  const speedAt = (value: number): number => quantity.speedAt?.(setting, value) ?? Infinity
-  return {
-    from: min === undefined ? 0 : justBelow(speedAt(min)),
-    to: max === undefined || quantity.at(setting, Infinity) <= max ? Infinity : speedAt(max),
-  }
+/** Speed above which a quantity that rises with speed keeps to the lower bound of a rule. */
+function lowerSpeed({ min }: RangeRule, quantity: Quantity, setting: Setting): number {
+  return min === undefined ? 0 : justBelow(quantity.speedAt?.(setting, min) ?? Infinity)
+}
+
+/** Speed up to which it keeps to the upper bound; one that levels off at its bound keeps to it. */
+function upperSpeed({ max }: RangeRule, quantity: Quantity, setting: Setting): number {
+  if (max === undefined || quantity.at(setting, Infinity) <= max) return Infinity
+  return quantity.speedAt?.(setting, max) ?? Infinity
 }
 
 /** Speeds at which a method is in range by its own bounds; undefined when it never is for this vessel here. */
@@ -69,9 +73,8 @@ export function speedInterval(method: Candidate, setting: Setting): SpeedInterva
     if (!binds(rule, setting)) continue
     const quantity = QUANTITIES[rule.quantity]
     if (quantity.speedAt) {
-      const bounds = speedsOf(rule, quantity, setting)
-      from = Math.max(from, bounds.from)
-      to = Math.min(to, bounds.to)
+      from = Math.max(from, lowerSpeed(rule, quantity, setting))
+      to = Math.min(to, upperSpeed(rule, quantity, setting))
     } else {
       const value = quantity.at(setting, 0)
       if (value < (rule.min ?? -Infinity) || value > (rule.max ?? Infinity)) return undefined
@@ -102,25 +105,50 @@ function fallback(methods: readonly Candidate[], setting: Setting): number {
  * @holds any setting
  */
 export function bandsOf(methods: readonly Candidate[], setting: Setting, preferred: number): Bands {
-  const intervals = methods.map((method) => speedInterval(method, setting))
-  const speeds = methods.flatMap((method) => method.stepSpeed?.(setting) ?? [])
-  const steps = speeds.length > 0 ? { steps: speeds } : {}
-  if (intervals.every((found) => found === undefined)) {
-    const list = [{ from: 0, to: Infinity, active: fallback(methods, setting) }]
-    return { list, isOutOfRange: true, ...steps }
+  const intervals: (SpeedInterval | undefined)[] = []
+  const edges = [0, Infinity]
+  const speeds: number[] = []
+  for (const method of methods) {
+    const found = speedInterval(method, setting)
+    intervals.push(found)
+    if (found) edges.push(found.from, found.to)
+    const step = method.stepSpeed?.(setting)
+    if (step !== undefined) speeds.push(step)
   }
-  const edges = new Set<number>([0, Infinity])
-  for (const found of intervals) if (found) edges.add(found.from).add(found.to)
-  const rising = [...edges].sort((a, b) => a - b)
-  const list = rising.slice(1).map((to, i) => {
-    const from = rising[i] as number
+  const steps = speeds.length > 0 ? { steps: speeds } : {}
+  if (edges.length === 2) {
+    const list = [{ from: 0, to: Infinity, active: fallback(methods, setting) }]
+    return { list, intervals, isOutOfRange: true, ...steps }
+  }
+  return { list: bandsBetween(edges, intervals, preferred), intervals, isOutOfRange: false, ...steps }
+}
+
+/** Bands between edges in any order, repeated ones among them. */
+function bandsBetween(
+  edges: number[],
+  intervals: readonly (SpeedInterval | undefined)[],
+  preferred: number,
+): Band[] {
+  edges.sort((a, b) => a - b)
+  const list: Band[] = []
+  let from = 0
+  for (const to of edges) {
+    if (to === from) continue
     let active = 0
-    intervals.forEach((found, k) => {
-      if (found && found.from <= from && found.to >= to) active |= 1 << k
-    })
-    return { from, to, active: (active & preferred) === 0 ? active : active & preferred }
-  })
-  return { list, isOutOfRange: false, ...steps }
+    for (let i = 0; i < intervals.length; i += 1) {
+      const found = intervals[i]
+      if (found && found.from <= from && found.to >= to) active |= 1 << i
+    }
+    list.push({ from, to, active: (active & preferred) === 0 ? active : active & preferred })
+    from = to
+  }
+  return list
+}
+
+/** Whether a method is in range at a speed, > 0. */
+export function isInRange(bands: Bands, index: number, speed: number): boolean {
+  const found = bands.intervals[index]
+  return found !== undefined && speed > found.from && speed <= found.to
 }
 
 /** Bits of the methods that count at a speed, > 0. */
@@ -160,6 +188,5 @@ function isInside(rule: RangeRule, setting: Setting, speed: number): boolean {
     const value = quantity.at(setting, speed)
     return value >= (rule.min ?? -Infinity) && value <= (rule.max ?? Infinity)
   }
-  const { from, to } = speedsOf(rule, quantity, setting)
-  return speed > from && speed <= to
+  return speed > lowerSpeed(rule, quantity, setting) && speed <= upperSpeed(rule, quantity, setting)
 }

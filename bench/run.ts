@@ -1,0 +1,148 @@
+import { spawn } from 'node:child_process'
+import { readFileSync } from 'node:fs'
+import { cpus } from 'node:os'
+import { once } from 'node:events'
+import autocannon from 'autocannon'
+import { Bench } from 'tinybench'
+import { advise, adviseBriefly } from '../src/advisory/advise.ts'
+import { assess } from '../src/advisory/assess.ts'
+import { decide } from '../src/advisory/decide.ts'
+import { resolve, type AdvisoryWire } from '../src/http/request.ts'
+import { fileRegistry } from '../src/store/file-registry.ts'
+
+/**
+ * Measures the service side by side with the least that any service must do. Each line is a ratio or a rate of this run:
+ * the machine drifts, so that figures of two runs cannot be compared, and ratios within one can.
+ */
+
+const request = readFileSync(
+  new URL('../openapi/examples/createAdvisory.request.json', import.meta.url),
+  'utf8',
+)
+const wire = JSON.parse(request) as AdvisoryWire
+const line = `${JSON.stringify(wire)}\n`
+
+const ROUNDS = 5
+const SECONDS = 2
+const STREAM_LINES = 4000
+
+const median = (values: readonly number[]): number =>
+  [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? NaN
+
+const rows: { what: string; value: string; bar: string }[] = []
+
+/** Rates in one thread, and in units of one Math.pow of the same run, which carries over between machines. */
+async function kernel(): Promise<void> {
+  const { segment, vessel, conditions, options } = resolve(wire, fileRegistry([], '2026-01-01T00:00:00Z'))
+  const sailed = { value: 2, reference: 'through-water' } as const
+  let sink = 0
+  const bench = new Bench({ time: 1500, warmupTime: 500 })
+    .add('pow', () => {
+      for (let i = 0; i < 1000; i += 1) sink += Math.pow(1.5 + i * 1e-3, 0.35 + sink * 1e-12)
+    })
+    .add('decide', () => void decide(segment, vessel, conditions, options))
+    .add('brief', () => void adviseBriefly(segment, vessel, conditions, options))
+    .add('advise', () => void advise(segment, vessel, conditions, options))
+    .add('assess', () => void assess(segment, vessel, conditions, options, sailed))
+  await bench.run()
+  const seconds = (name: string): number => {
+    const result = bench.getTask(name)?.result
+    return result && 'latency' in result ? result.latency.p50 / 1000 : NaN
+  }
+  const pow = seconds('pow') / 1000
+  for (const [name, bar] of [
+    ['decide', ''],
+    ['brief', ''],
+    ['advise', '20,000/s'],
+    ['assess', ''],
+  ] as const) {
+    const each = seconds(name)
+    rows.push({ what: `${name}, in process`, value: `${Math.round(1 / each)}/s`, bar })
+    rows.push({ what: `${name}, in units of Math.pow`, value: (each / pow).toFixed(0), bar: '' })
+  }
+}
+
+async function postRate(url: string): Promise<number> {
+  const result = await autocannon({
+    url,
+    method: 'POST',
+    headers: { 'content-type': 'application/json' },
+    body: request,
+    connections: 8,
+    duration: SECONDS,
+  })
+  if (result.non2xx > 0) throw new Error(`${url}: ${result.non2xx} replies were refused`)
+  return result.requests.average
+}
+
+async function streamRate(url: string): Promise<number> {
+  const start = performance.now()
+  const reply = await fetch(url, {
+    method: 'POST',
+    headers: { 'content-type': 'application/x-ndjson' },
+    body: line.repeat(STREAM_LINES),
+  })
+  const text = await reply.text()
+  if (!reply.ok || text.includes('"problem":')) throw new Error(`${url}: ${text.slice(0, 300)}`)
+  return STREAM_LINES / ((performance.now() - start) / 1000)
+}
+
+/** Median ratio of paired rounds, and the median rate of the first. */
+async function pairs(
+  what: string,
+  bar: string,
+  a: () => Promise<number>,
+  b: () => Promise<number>,
+): Promise<void> {
+  await a()
+  await b()
+  const rates: number[] = []
+  const ratios: number[] = []
+  for (let i = 0; i < ROUNDS; i += 1) {
+    const rate = await a()
+    rates.push(rate)
+    ratios.push(rate / (await b()))
+  }
+  rows.push({ what, value: `${median(ratios).toFixed(2)} (${Math.round(median(rates))}/s)`, bar })
+}
+
+async function http(): Promise<void> {
+  const server = spawn(
+    process.execPath,
+    ['--import', 'tsx', new URL('server.ts', import.meta.url).pathname],
+    {
+      stdio: ['ignore', 'pipe', 'inherit'],
+    },
+  )
+  const [first] = (await once(server.stdout, 'data')) as [Buffer]
+  const url = first.toString().trim()
+  try {
+    await pairs(
+      'POST /v1/advisories against an echo route',
+      '0.60',
+      () => postRate(`${url}/v1/advisories`),
+      () => postRate(`${url}/bench/echo`),
+    )
+    await pairs(
+      'NDJSON stream, full, against bare parse and stringify',
+      '0.50',
+      () => streamRate(`${url}/v1/advisories/stream`),
+      () => streamRate(`${url}/bench/stream`),
+    )
+    await pairs(
+      'NDJSON stream, compact, against bare parse and stringify',
+      '',
+      () => streamRate(`${url}/v1/advisories/stream?detail=compact`),
+      () => streamRate(`${url}/bench/stream?compact`),
+    )
+  } finally {
+    server.kill('SIGTERM')
+  }
+}
+
+await kernel()
+await http()
+process.stdout.write(
+  `${cpus().length} × ${cpus()[0]?.model ?? 'unknown processor'}, Node ${process.version}\n`,
+)
+console.table(rows)
