@@ -129,7 +129,7 @@ function addAdvisory(app: App, parts: AdvisoryParts): void {
       const resolved = resolve(body, parts.registry)
       const { segment, vessel, conditions, options } = resolved
       const advisory = advise(segment, vessel, conditions, options)
-      return toAdvisoryReply(advisory, resolved, contextOf(parts), body.label)
+      return toAdvisoryReply(advisory, resolved, contextOf(parts), body)
     },
   })
 }
@@ -151,7 +151,7 @@ function addEffects(app: App, parts: AdvisoryParts): void {
       const { segment, vessel, conditions, options } = resolved
       const assessment = assess(segment, vessel, conditions, options, toSailed(body))
       if (!assessment) throw notAhead(toSailed(body).value, conditions.current)
-      return toAssessmentReply(assessment, resolved, contextOf(parts), body.label)
+      return toAssessmentReply(assessment, resolved, contextOf(parts), body)
     },
   })
 }

@@ -99,7 +99,7 @@ function fullLine(item: Item, { registry, serviceVersion }: AdvisoryParts, reque
     const { segment, vessel, conditions, options } = resolved
     const context = { serviceVersion, registryRevision: registry.revision }
     const advisory = advise(segment, vessel, conditions, options)
-    return { line: item.line, ...toAdvisoryReply(advisory, resolved, context, wire.label) }
+    return toAdvisoryReply(advisory, resolved, context, { line: item.line, label: wire.label })
   } catch (error) {
     return { line: item.line, problem: toProblem(toFault(error), requestId) }
   }

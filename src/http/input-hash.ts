@@ -68,8 +68,8 @@ const segmentContent = (segment: Segment) => ({
   stations: segment.stations.map(stationContent),
 })
 
-/** A vessel by its figures; whether its draught is its own decides what a permitted draught does to it. */
-const vesselContent = (vessel: Vessel) => ({
+/** A vessel by its figures. Where a permitted draught may cap them, it matters too which of them are its own. */
+const vesselContent = (vessel: Vessel, isCapped: boolean) => ({
   beam: vessel.beam,
   blockCoefficient: vessel.blockCoefficient,
   centralCoefficient: vessel.centralCoefficient,
@@ -78,8 +78,9 @@ const vesselContent = (vessel: Vessel) => ({
   entranceLength: vessel.entranceLength,
   envelopeCoefficient: vessel.envelopeCoefficient,
   hull: vessel.hull,
-  isDraughtGiven: vessel.basis.draught === 'given',
+  isDraughtGiven: isCapped ? vessel.basis.draught === 'given' : undefined,
   isInlandMotorVessel: vessel.isInlandMotorVessel,
+  isVolumeGiven: isCapped ? vessel.basis.volume === 'given' : undefined,
   length: vessel.length,
   loading: vessel.loading,
   maxSpeed: vessel.maxSpeed,
@@ -92,7 +93,7 @@ const vesselContent = (vessel: Vessel) => ({
 const conditionsContent = (conditions: Conditions) => ({
   current: conditions.current,
   direction: conditions.direction,
-  meetingVessel: conditions.meetingVessel && vesselContent(conditions.meetingVessel),
+  meetingVessel: conditions.meetingVessel && vesselContent(conditions.meetingVessel, false),
   waterLevel: conditions.waterLevel,
 })
 
@@ -108,7 +109,7 @@ const optionsContent = ({ limits, ...options }: Options) => ({
     maxReceptorWaveHeight: limits.maxReceptorWaveHeight,
     maxReturnCurrent: limits.maxReturnCurrent,
     minUnderKeelClearanceRatio: limits.minUnderKeelClearanceRatio,
-    wakeWash: limits.wakeWash,
+    wakeWash: limits.wakeWash ?? 'when-long',
   },
   signStep: options.signStep,
   signUnit: options.signUnit,
@@ -121,7 +122,7 @@ export const inputContent = ({ segment, vessel, conditions, options }: Inputs) =
   conditions: conditionsContent(conditions),
   options: optionsContent(options),
   segment: segmentContent(segment),
-  vessel: vesselContent(vessel),
+  vessel: vesselContent(vessel, segment.maxDraught !== undefined),
 })
 
 /** SHA-256 over the canonical JSON of `inputContent`. Names, labels and attributes are not in it. */

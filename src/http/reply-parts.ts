@@ -128,8 +128,10 @@ export function toSquatReply(report: SquatReport) {
 export function toCriticalReply(decision: Decision) {
   const { situation } = decision
   const { setting, meetingCriticalSpeed } = situation
+  const { through_water, over_ground } = toPair(decision, setting.criticalSpeed)
   return {
-    ...toPair(decision, setting.criticalSpeed),
+    through_water,
+    over_ground,
     basis: setting.isConfined ? 'confined-channel' : 'open-water',
     shallow_water_wave_speed: toSpeed(situation.shallowWaveSpeed),
     supercritical_onset: setting.isConfined ? toSpeed(setting.supercriticalOnset) : undefined,
@@ -152,27 +154,24 @@ export function toDirectionReply(decision: Decision) {
 const orNull = (value: number): number | null => (Number.isFinite(value) ? value : null)
 
 /** The points of a curve as flat rows: every column present, null where it does not apply. */
-export function toCurveReply(curve: Curve) {
-  const { decision } = curve
-  return {
-    points: curve.points.map(({ effects, heights }) => {
-      const { over_ground } = toPair(decision, effects.speed)
-      return {
-        through_water_mps: effects.speed,
-        over_ground_mps: over_ground.mps,
-        over_ground_kn: over_ground.kn,
-        over_ground_kmh: over_ground.kmh,
-        depth_froude_number: effects.depthFroudeNumber,
-        critical_ratio: effects.criticalRatio,
-        regime: effects.regime,
-        bank_wave_height_m: orNull(effects.bankWaveHeight),
-        stern_wave_height_m: orNull(effects.sternWaveHeight),
-        drawdown_m: orNull(effects.drawdown),
-        return_current_mps: orNull(effects.returnCurrent),
-        squat_m: orNull(effects.squat),
-        under_keel_clearance_m: orNull(effects.underKeelClearance),
-        wave_height_by_method_m: Object.fromEntries(heights.map(({ id, height }) => [id, orNull(height)])),
-      }
-    }),
-  }
+export function toCurvePoints({ decision, points }: Curve) {
+  return points.map(({ effects, heights }) => {
+    const { over_ground } = toPair(decision, effects.speed)
+    return {
+      through_water_mps: effects.speed,
+      over_ground_mps: over_ground.mps,
+      over_ground_kn: over_ground.kn,
+      over_ground_kmh: over_ground.kmh,
+      depth_froude_number: effects.depthFroudeNumber,
+      critical_ratio: effects.criticalRatio,
+      regime: effects.regime,
+      bank_wave_height_m: orNull(effects.bankWaveHeight),
+      stern_wave_height_m: orNull(effects.sternWaveHeight),
+      drawdown_m: orNull(effects.drawdown),
+      return_current_mps: orNull(effects.returnCurrent),
+      squat_m: orNull(effects.squat),
+      under_keel_clearance_m: orNull(effects.underKeelClearance),
+      wave_height_by_method_m: Object.fromEntries(heights.map(({ id, height }) => [id, orNull(height)])),
+    }
+  })
 }

@@ -8,7 +8,7 @@ import {
   recommendedPair,
   toCriterionReply,
   toCriticalReply,
-  toCurveReply,
+  toCurvePoints,
   toDirectionReply,
   toEffectsReply,
   toSquatReply,
@@ -23,22 +23,27 @@ export interface ReplyContext {
   readonly registryRevision: number
 }
 
-/** What both kinds of answer begin with. Fields that are undefined are not written. */
-function headOf(decision: Decision, { record, segment }: Resolved, label: string | undefined) {
-  const { situation } = decision
-  const { chainage, index } = situation.station
-  return {
-    label,
-    segment: record && { id: record.id, name: segment.name, revision: record.revision },
-    station: record && { index, chainage_m: chainage },
-    vessel: toVesselReply(situation.vessel),
-    conditions: {
-      water_level_m: situation.conditions.waterLevel,
-      current_mps: situation.conditions.current,
-      direction: decision.direction,
-    },
-  }
+/** What a caller knows an answer by. */
+export interface Mark {
+  readonly label?: string | undefined
+  /** line of the stream that it answers */
+  readonly line?: number
 }
+
+// Replies are written field by field, undefined where a field does not apply: spreading parts into one object would cost
+// as much as the hydraulics.
+
+const segmentReply = ({ record, segment }: Resolved) =>
+  record && { id: record.id, name: segment.name, revision: record.revision }
+
+const stationReply = ({ situation }: Decision, { record }: Resolved) =>
+  record && { index: situation.station.index, chainage_m: situation.station.chainage }
+
+const conditionsReply = ({ situation, direction }: Decision) => ({
+  water_level_m: situation.conditions.waterLevel,
+  current_mps: situation.conditions.current,
+  direction,
+})
 
 function reproducibility(resolved: Resolved, context: ReplyContext) {
   const { record } = resolved
@@ -51,15 +56,6 @@ function reproducibility(resolved: Resolved, context: ReplyContext) {
   }
 }
 
-/** Lists that both kinds of answer hold. */
-function listsOf(decision: Decision, answer: Advisory | Assessment) {
-  return {
-    criteria: answer.criteria.map((report) => toCriterionReply(decision, report)),
-    wave_methods: answer.waveMethods.map((report) => toWaveReply(decision, report)),
-    squat_methods: answer.squatMethods.map(toSquatReply),
-  }
-}
-
 function toUncalibratedReply({ decision, bankWaveHeight }: NonNullable<Advisory['uncalibrated']>) {
   return {
     outcome: decision.outcome,
@@ -68,38 +64,51 @@ function toUncalibratedReply({ decision, bankWaveHeight }: NonNullable<Advisory[
   }
 }
 
+function recommendedReply({ decision, sign }: Advisory) {
+  const pair = recommendedPair(decision)
+  return pair && { through_water: pair.through_water, over_ground: pair.over_ground, sign }
+}
+
 /** The advisory as it goes out. */
 export function toAdvisoryReply(
   advisory: Advisory,
   resolved: Resolved,
   context: ReplyContext,
-  label: string | undefined,
+  { line, label }: Mark,
 ) {
-  const { decision, byDirection, sign, uncalibrated, curve } = advisory
-  const recommended = recommendedPair(decision)
+  const { decision, byDirection, uncalibrated, curve } = advisory
+  const { situation, governing } = decision
+  const isSafe = decision.outcome !== 'no-safe-speed'
   const effects = toEffectsReply(decision, advisory.effects)
   const critical = toCriticalReply(decision)
-  const lists = listsOf(decision, advisory)
+  const criteria = advisory.criteria.map((report) => toCriterionReply(decision, report))
   return {
-    ...headOf(decision, resolved, label),
+    line,
+    label,
+    segment: segmentReply(resolved),
+    station: stationReply(decision, resolved),
+    vessel: toVesselReply(situation.vessel),
+    conditions: conditionsReply(decision),
     outcome: decision.outcome,
-    governing_criterion: decision.governing.criterion.id,
-    governing_at: decision.governing.criterion.place,
+    governing_criterion: governing.criterion.id,
+    governing_at: governing.criterion.place,
     by_direction: byDirection && {
       upstream: toDirectionReply(byDirection.upstream),
       downstream: toDirectionReply(byDirection.downstream),
     },
-    recommended_max_speed: recommended && { ...recommended, sign },
+    recommended_max_speed: recommendedReply(advisory),
     critical_speed: critical,
-    at_recommended_speed: recommended && effects,
-    at_minimum_steerage_speed: recommended ? undefined : effects,
-    ...lists,
+    at_recommended_speed: isSafe ? effects : undefined,
+    at_minimum_steerage_speed: isSafe ? undefined : effects,
+    criteria,
+    wave_methods: advisory.waveMethods.map((report) => toWaveReply(decision, report)),
+    squat_methods: advisory.squatMethods.map(toSquatReply),
     uncalibrated: uncalibrated && toUncalibratedReply(uncalibrated),
     speed_curve: curve && {
-      ...toCurveReply(curve),
-      criteria: lists.criteria,
+      points: toCurvePoints(curve),
+      criteria,
       critical_speed: critical,
-      recommended_max_speed: recommended,
+      recommended_max_speed: recommendedPair(decision),
     },
     cautions: advisory.cautions,
     assumptions: advisory.assumptions,
@@ -112,16 +121,22 @@ export function toAssessmentReply(
   assessment: Assessment,
   resolved: Resolved,
   context: ReplyContext,
-  label: string | undefined,
+  { label }: Mark,
 ) {
   const { decision, criteria } = assessment
   const exceeded = criteria.filter(({ evaluation }) => !evaluation.isMet).map(({ criterion }) => criterion.id)
   return {
-    ...headOf(decision, resolved, label),
+    label,
+    segment: segmentReply(resolved),
+    station: stationReply(decision, resolved),
+    vessel: toVesselReply(decision.situation.vessel),
+    conditions: conditionsReply(decision),
     verdict: assessment.verdict,
     exceeded: [...new Set(exceeded)],
     effects: toEffectsReply(decision, assessment.effects),
-    ...listsOf(decision, assessment),
+    criteria: criteria.map((report) => toCriterionReply(decision, report)),
+    wave_methods: assessment.waveMethods.map((report) => toWaveReply(decision, report)),
+    squat_methods: assessment.squatMethods.map(toSquatReply),
     cautions: assessment.cautions,
     assumptions: assessment.assumptions,
     reproducibility: reproducibility(resolved, context),

@@ -144,7 +144,7 @@ function adviseSegment(
   if (isKnown(request, etag)) return reply.code(304).send()
   const { segment, vessel, conditions, options } = resolved
   const context = { serviceVersion: parts.serviceVersion, registryRevision: parts.registry.revision }
-  return toAdvisoryReply(advise(segment, vessel, conditions, options), resolved, context, undefined)
+  return toAdvisoryReply(advise(segment, vessel, conditions, options), resolved, context, {})
 }
 
 /** The segments that the service knows, and their advisories. */

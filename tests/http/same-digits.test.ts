@@ -67,8 +67,8 @@ function flattened(reply: Json, line: number): Json {
   }
 }
 
-const cell = (value: unknown): string => {
-  const text = String(value ?? '')
+const cell = (value: string | number): string => {
+  const text = String(value)
   return /[",;\r\n]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text
 }
 
@@ -365,6 +365,16 @@ test.each([
   ['options.limits.wake_wash', 'never'],
 ])('the input hash changes with %s, %j', async (path, value) => {
   expect(await hashOf(changed(RICH, path, value))).not.toBe(await hashOf(RICH))
+})
+
+test('where a permitted draught may cap them, the input hash tells figures of the vessel from those of its class', async () => {
+  const capped = { ...PLAIN, segment: { ...PLAIN.segment, max_draught_m: 2.4 } }
+  const hashes = await Promise.all(
+    [{}, { draught_m: 2.5 }, { displacement_m3: 1776.5 }].map((own) =>
+      hashOf({ ...capped, vessel: { ...PLAIN.vessel, ...own } }),
+    ),
+  )
+  expect(new Set(hashes).size).toBe(3)
 })
 
 test('an id has the input hash of the same content given in the request', async () => {

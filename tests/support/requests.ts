@@ -215,8 +215,10 @@ const own = fc.record({
 
 const present = (...parts: readonly object[]): Cells =>
   Object.fromEntries(
-    parts.flatMap((part) => Object.entries(part)).filter(([, v]) => v !== undefined),
-  ) as Cells
+    parts
+      .flatMap((part) => Object.entries(part) as [string, string | number | undefined][])
+      .flatMap(([name, value]) => (value === undefined ? [] : [[name, value]])),
+  )
 
 /** Requests with nothing but what the address of a registry advisory can say. */
 export const addressable: fc.Arbitrary<Cells> = fc

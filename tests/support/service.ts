@@ -82,13 +82,10 @@ const StrictProblem = strict(Problem)
 
 /** A refusal in the documented form, with its status, type and request id; returns its body. */
 export function expectProblem(reply: Response, status: number, code: string): z.output<typeof Problem> {
-  expect([reply.statusCode, (reply.json as () => Json)()['code']], reply.body.slice(0, 2000)).toEqual([
-    status,
-    code,
-  ])
+  expect([reply.statusCode, reply.json<Json>()['code']], reply.body.slice(0, 2000)).toEqual([status, code])
   expect(reply.headers['content-type']).toBe('application/problem+json; charset=utf-8')
   expect(reply.headers.vary).toBe('Accept, Authorization')
-  const problem = StrictProblem.parse(reply.json()) as z.output<typeof Problem>
+  const problem = StrictProblem.parse(reply.json())
   expect(problem.status).toBe(status)
   expect(problem.type).toBe(`/v1/problems/${code}`)
   expect(problem.instance).toBe(`urn:request:${String(reply.headers['x-request-id'])}`)
