@@ -43,6 +43,8 @@ export function fileRegistry(features: readonly SegmentFeature[], updated: strin
   return {
     revision: 1,
     findSegment: (id) => byId.get(id),
+    findClass: () => undefined,
+    classes: () => [],
     segments: (filter = {}) => records.filter((record) => matches(record, filter)),
   }
 }

@@ -1,4 +1,5 @@
 import type { BoundingBox, LonLat } from '../domain/position.ts'
+import type { VesselClass } from '../domain/vessel-classes.ts'
 
 /** A segment as it is kept: its sailing line and its properties as they came, with what the registry adds. */
 export interface SegmentRecord {
@@ -15,17 +16,105 @@ export interface SegmentRecord {
   readonly properties: Readonly<Record<string, unknown>>
 }
 
+/** What a write brings; the registry adds the rest. */
+export type SegmentContent = Pick<SegmentRecord, 'id' | 'line' | 'length' | 'bbox' | 'properties'>
+
+/** A vessel class of the caller's own. */
+export interface ClassRecord {
+  readonly id: string
+  readonly revision: number
+  readonly updated: string
+  readonly vesselClass: VesselClass
+}
+
 export interface SegmentFilter {
   readonly bbox?: BoundingBox
   readonly waterway?: string
   readonly gaugeId?: string
 }
 
-/** The segments that the service knows. */
+/** Everything that the registry holds at one moment; never changes. A later state is another snapshot. */
 export interface Registry {
   /** rises by one with each write */
   readonly revision: number
   findSegment(id: string): SegmentRecord | undefined
   /** in the order of their ids */
   segments(filter?: SegmentFilter): readonly SegmentRecord[]
+  findClass(id: string): ClassRecord | undefined
+  /** in the order of their ids; own classes only */
+  classes(): readonly ClassRecord[]
+}
+
+export type Action = 'created' | 'updated' | 'deleted' | 'imported'
+
+/** One change of a segment. */
+export interface Revision {
+  readonly revision: number
+  readonly action: Action
+  /** RFC 3339 UTC */
+  readonly time: string
+  /** name of the access key it was made with; absent without keys */
+  readonly key?: string
+  /** names of the properties, and `geometry`, that differ from the revision before */
+  readonly changed: readonly string[]
+}
+
+/** Which revision a write expects: a number, any existing one, or none at all. */
+export type Expected = number | 'any' | 'none'
+
+/** What became of a write. `stale` and `missing` leave everything as it was. */
+export type Written =
+  | {
+      readonly outcome: 'created' | 'updated' | 'unchanged'
+      readonly revision: number
+      readonly registryRevision: number
+    }
+  | { readonly outcome: 'stale'; readonly current: number }
+  | { readonly outcome: 'missing' }
+
+export interface Imported {
+  readonly created: number
+  readonly updated: number
+  readonly unchanged: number
+  readonly registryRevision: number
+}
+
+export const ROLES = ['read', 'write', 'publish'] as const
+export type Role = (typeof ROLES)[number]
+
+export interface AccessKey {
+  readonly name: string
+  readonly role: Role
+  readonly created: string
+  readonly expires?: string
+  readonly revoked?: string
+}
+
+/** Who writes and when; the store has no clock of its own. */
+export interface Author {
+  /** RFC 3339 UTC */
+  readonly time: string
+  readonly key?: string
+}
+
+/** The database behind the registry. Every acknowledged write is on disk, and seen by every replica at once. */
+export interface Store {
+  readonly kind: 'sqlite' | 'postgres'
+  /** The registry as of now: every write acknowledged before the call is in it. */
+  current(): Promise<Registry>
+  putSegment(content: SegmentContent, expected: Expected, author: Author): Promise<Written>
+  deleteSegment(id: string, expected: Expected, author: Author): Promise<Written>
+  /** All or nothing; unchanged content makes no revision. */
+  importSegments(contents: readonly SegmentContent[], author: Author): Promise<Imported>
+  /** newest first; empty for a segment that never was. Deleted segments keep theirs. */
+  revisions(id: string): Promise<readonly Revision[]>
+  findRevision(id: string, revision: number): Promise<SegmentRecord | undefined>
+  putClass(vesselClass: VesselClass, expected: Expected, author: Author): Promise<Written>
+  deleteClass(id: string, expected: Expected, author: Author): Promise<Written>
+  /** SHA-256 of the key, hex -> the key, when it is neither revoked nor expired at `time`. */
+  findKey(hash: string, time: string): Promise<AccessKey | undefined>
+  addKey(key: AccessKey, hash: string): Promise<boolean>
+  keys(): Promise<readonly AccessKey[]>
+  revokeKey(name: string, time: string): Promise<boolean>
+  close(): Promise<void>
 }
