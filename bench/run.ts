@@ -22,7 +22,8 @@ const request = readFileSync(
 const wire = JSON.parse(request) as AdvisoryWire
 const line = `${JSON.stringify(wire)}\n`
 
-const ROUNDS = 5
+const ROUNDS = 7
+const WARM_ROUNDS = 3
 const SECONDS = 2
 const STREAM_LINES = 4000
 
@@ -62,7 +63,22 @@ async function kernel(): Promise<void> {
   }
 }
 
-async function postRate(url: string): Promise<number> {
+/** What was done in one round, and what the server spent on it. */
+interface Round {
+  readonly count: number
+  readonly seconds: number
+  readonly cpuSeconds: number
+}
+
+async function measured(url: string, work: () => Promise<number>): Promise<Round> {
+  const cpu = async (): Promise<number> => Number(await (await fetch(new URL('/bench/cpu', url))).text())
+  const before = await cpu()
+  const start = performance.now()
+  const count = await work()
+  return { count, seconds: (performance.now() - start) / 1000, cpuSeconds: (await cpu()) - before }
+}
+
+async function post(url: string): Promise<number> {
   const result = await autocannon({
     url,
     method: 'POST',
@@ -72,11 +88,10 @@ async function postRate(url: string): Promise<number> {
     duration: SECONDS,
   })
   if (result.non2xx > 0) throw new Error(`${url}: ${result.non2xx} replies were refused`)
-  return result.requests.average
+  return result.requests.total
 }
 
-async function streamRate(url: string): Promise<number> {
-  const start = performance.now()
+async function stream(url: string): Promise<number> {
   const reply = await fetch(url, {
     method: 'POST',
     headers: { 'content-type': 'application/x-ndjson' },
@@ -84,57 +99,52 @@ async function streamRate(url: string): Promise<number> {
   })
   const text = await reply.text()
   if (!reply.ok || text.includes('"problem":')) throw new Error(`${url}: ${text.slice(0, 300)}`)
-  return STREAM_LINES / ((performance.now() - start) / 1000)
+  return STREAM_LINES
 }
 
-/** Median ratio of paired rounds, and the median rate of the first. */
+/** Median ratios of paired rounds, by the clock and by the CPU time of the server, and the median rate of the first. */
 async function pairs(
   what: string,
   bar: string,
-  a: () => Promise<number>,
-  b: () => Promise<number>,
+  work: (url: string) => Promise<number>,
+  [a, b]: readonly [string, string],
 ): Promise<void> {
-  await a()
-  await b()
   const rates: number[] = []
-  const ratios: number[] = []
-  for (let i = 0; i < ROUNDS; i += 1) {
-    const rate = await a()
-    rates.push(rate)
-    ratios.push(rate / (await b()))
+  const byClock: number[] = []
+  const byCpu: number[] = []
+  for (let i = -WARM_ROUNDS; i < ROUNDS; i += 1) {
+    const one = await measured(a, () => work(a))
+    const other = await measured(b, () => work(b))
+    // the first rounds are compiling, not serving
+    if (i < 0) continue
+    rates.push(one.count / one.seconds)
+    byClock.push(one.count / one.seconds / (other.count / other.seconds))
+    byCpu.push(other.cpuSeconds / other.count / (one.cpuSeconds / one.count))
   }
-  rows.push({ what, value: `${median(ratios).toFixed(2)} (${Math.round(median(rates))}/s)`, bar })
+  const rate = Math.round(median(rates))
+  const value = `${median(byCpu).toFixed(2)} by CPU, ${median(byClock).toFixed(2)} by clock (${rate}/s)`
+  rows.push({ what, value, bar })
 }
 
 async function http(): Promise<void> {
-  const server = spawn(
-    process.execPath,
-    ['--import', 'tsx', new URL('server.ts', import.meta.url).pathname],
-    {
-      stdio: ['ignore', 'pipe', 'inherit'],
-    },
-  )
+  const server = spawn(process.execPath, [new URL('server.js', import.meta.url).pathname], {
+    stdio: ['ignore', 'pipe', 'inherit'],
+  })
   const [first] = (await once(server.stdout, 'data')) as [Buffer]
   const url = first.toString().trim()
   try {
-    await pairs(
-      'POST /v1/advisories against an echo route',
-      '0.60',
-      () => postRate(`${url}/v1/advisories`),
-      () => postRate(`${url}/bench/echo`),
-    )
-    await pairs(
-      'NDJSON stream, full, against bare parse and stringify',
-      '0.50',
-      () => streamRate(`${url}/v1/advisories/stream`),
-      () => streamRate(`${url}/bench/stream`),
-    )
-    await pairs(
-      'NDJSON stream, compact, against bare parse and stringify',
-      '',
-      () => streamRate(`${url}/v1/advisories/stream?detail=compact`),
-      () => streamRate(`${url}/bench/stream?compact`),
-    )
+    await pairs('POST /v1/advisories against an echo route', '0.60', post, [
+      `${url}/v1/advisories`,
+      `${url}/bench/echo`,
+    ])
+    await pairs('NDJSON stream, full, against bare parse and stringify', '0.50', stream, [
+      `${url}/v1/advisories/stream`,
+      `${url}/bench/stream`,
+    ])
+    await pairs('NDJSON stream, compact, against bare parse and stringify', '', stream, [
+      `${url}/v1/advisories/stream?detail=compact`,
+      `${url}/bench/stream?compact`,
+    ])
   } finally {
     server.kill('SIGTERM')
   }

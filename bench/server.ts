@@ -47,10 +47,18 @@ const bareStream: Routes = (app) => {
   })
 }
 
+/** CPU time of this process so far, s: what a request costs, whatever else the machine does. */
+const cpu: Routes = (app) => {
+  app.get('/bench/cpu', () => {
+    const { user, system } = process.cpuUsage()
+    return (user + system) / 1e6
+  })
+}
+
 const parts = serviceParts(readConfig({}))
 const app = buildApp({
   ...parts,
-  routes: [...parts.routes, echo, bareStream],
+  routes: [...parts.routes, echo, bareStream, cpu],
   log: pino({ level: 'silent' }),
 })
 process.stdout.write(`${await app.listen({ host: '127.0.0.1', port: 0 })}\n`)

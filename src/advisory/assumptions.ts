@@ -123,7 +123,7 @@ const STERN_WAVE: Assumption = {
 const FROM_MEMORY: Assumption = {
   field: 'wave_methods',
   value: 'recalled coefficients',
-  text: 'Coefficients of the wave and squat methods are those recalled from the publications named; no method is better than about ±50 % on a water it was not fitted to',
+  text: 'Coefficients of the wave and squat methods are those recalled from the publications named; no method is better than about 50 % either way on a water it was not fitted to',
   source: 'see wave_methods[].reference and /v1/methods',
 }
 

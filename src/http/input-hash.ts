@@ -1,4 +1,4 @@
-import { createHash } from 'node:crypto'
+import { hash } from 'node:crypto'
 import type { Inputs } from '../advisory/uncertainty.ts'
 import type { Conditions, Options } from '../domain/conditions.ts'
 import type { Bank, Group, PostedLimit, Receptor, SectionShape, Segment, Station } from '../domain/segment.ts'
@@ -127,7 +127,5 @@ export const inputContent = ({ segment, vessel, conditions, options }: Inputs) =
 
 /** SHA-256 over the canonical JSON of `inputContent`. Names, labels and attributes are not in it. */
 export function inputHash(inputs: Inputs): string {
-  return `sha256:${createHash('sha256')
-    .update(JSON.stringify(inputContent(inputs)))
-    .digest('hex')}`
+  return `sha256:${hash('sha256', JSON.stringify(inputContent(inputs)))}`
 }

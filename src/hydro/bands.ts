@@ -24,8 +24,8 @@ export interface Bands {
 export interface Outside {
   readonly quantity: string
   readonly value: number | string
-  readonly min?: number
-  readonly max?: number
+  readonly min?: number | undefined
+  readonly max?: number | undefined
 }
 
 /** A method of a family, with whether it can be computed for this vessel at all. */
@@ -174,8 +174,8 @@ export function outsideAt(method: Candidate, setting: Setting, speed: number): O
     outside.push({
       quantity: rule.quantity,
       value: quantity.at(setting, speed),
-      ...(rule.min !== undefined && { min: rule.min }),
-      ...(rule.max !== undefined && { max: rule.max }),
+      min: rule.min,
+      max: rule.max,
     })
   }
   return outside

@@ -12,19 +12,26 @@ import { wakeWashCriterion } from './wake-wash.ts'
  * settled; posted limit and service speed follow them.
  */
 export function waterCriteria(situation: Situation): Criterion[] {
-  const candidates = [
-    criticalRatioCriterion(situation),
-    depthFroudeCriterion(situation),
-    bankWaveCriterion(situation, 0),
-    bankWaveCriterion(situation, 1),
-    ...situation.segment.receptors.map((receptor, i) => receptorWaveCriterion(situation, receptor, i)),
-    clearanceCriterion(situation),
-    drawdownCriterion(situation, 0),
-    drawdownCriterion(situation, 1),
-    returnCurrentCriterion(situation, 0),
-    returnCurrentCriterion(situation, 1),
-    wakeWashCriterion(situation, 0),
-    wakeWashCriterion(situation, 1),
-  ]
-  return candidates.filter((criterion) => criterion !== undefined)
+  const criteria = [criticalRatioCriterion(situation), depthFroudeCriterion(situation)]
+  addForBanks(criteria, situation, bankWaveCriterion)
+  situation.segment.receptors.forEach((receptor, i) => {
+    criteria.push(receptorWaveCriterion(situation, receptor, i))
+  })
+  criteria.push(clearanceCriterion(situation))
+  addForBanks(criteria, situation, drawdownCriterion)
+  addForBanks(criteria, situation, returnCurrentCriterion)
+  addForBanks(criteria, situation, wakeWashCriterion)
+  return criteria
+}
+
+/** Adds a criterion of each bank, where it applies. */
+function addForBanks(
+  criteria: Criterion[],
+  situation: Situation,
+  criterionOf: (situation: Situation, bank: 0 | 1) => Criterion | undefined,
+): void {
+  for (const bank of [0, 1] as const) {
+    const criterion = criterionOf(situation, bank)
+    if (criterion) criteria.push(criterion)
+  }
 }

@@ -20,7 +20,7 @@ export interface Evaluation {
   readonly value?: number
   readonly limit: number
   /** what the value is of, where a criterion has several parts */
-  readonly component?: string
+  readonly component?: string | undefined
   readonly isMet: boolean
 }
 
@@ -50,7 +50,7 @@ export function isAtMost(value: number, limit: number): boolean {
 /** An evaluation against an upper bound; NaN is unknown and not met. */
 export function atMost(value: number, limit: number, component?: string): Evaluation {
   if (Number.isNaN(value)) return { limit, isMet: false }
-  return { value, limit, ...(component !== undefined && { component }), isMet: isAtMost(value, limit) }
+  return { value, limit, component, isMet: isAtMost(value, limit) }
 }
 
 /** First speed of a criterion that rises with speed and is reached at `reachedAt`. */
