@@ -3,6 +3,7 @@ import { defineConfig } from 'vitest/config'
 export default defineConfig({
   test: {
     include: ['tests/**/*.test.ts'],
+    globalSetup: ['tests/support/postgres.ts'],
     reporters: ['default', './tests/support/closing-line.ts'],
     testTimeout: 60_000,
     hookTimeout: 60_000,

@@ -9,6 +9,7 @@ import { assess } from '../src/advisory/assess.ts'
 import { decide } from '../src/advisory/decide.ts'
 import { resolve, type AdvisoryWire } from '../src/http/request.ts'
 import { fileRegistry } from '../src/store/file-registry.ts'
+import { registryRows } from './registry.ts'
 
 /**
  * Measures the service side by side with the least that any service must do. Each line is a ratio or a rate of this run:
@@ -78,6 +79,12 @@ async function measured(url: string, work: () => Promise<number>): Promise<Round
   return { count, seconds: (performance.now() - start) / 1000, cpuSeconds: (await cpu()) - before }
 }
 
+async function get(url: string): Promise<number> {
+  const result = await autocannon({ url, connections: 8, duration: SECONDS })
+  if (result.non2xx > 0) throw new Error(`${url}: ${result.non2xx} replies were refused`)
+  return result.requests.total
+}
+
 async function post(url: string): Promise<number> {
   const result = await autocannon({
     url,
@@ -137,6 +144,10 @@ async function http(): Promise<void> {
       `${url}/v1/advisories`,
       `${url}/bench/echo`,
     ])
+    await pairs('GET …/advisory of a segment against a still reply', '0.70', get, [
+      `${url}/v1/segments/harrow-long-pound/advisory?vessel_class=cemt-iv&water_level_m=0.1`,
+      `${url}/bench/still`,
+    ])
     await pairs('NDJSON stream, full, against bare parse and stringify', '0.50', stream, [
       `${url}/v1/advisories/stream`,
       `${url}/bench/stream`,
@@ -151,6 +162,7 @@ async function http(): Promise<void> {
 }
 
 await kernel()
+rows.push(...(await registryRows()))
 await http()
 process.stdout.write(
   `${cpus().length} × ${cpus()[0]?.model ?? 'unknown processor'}, Node ${process.version}\n`,

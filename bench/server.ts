@@ -47,6 +47,13 @@ const bareStream: Routes = (app) => {
   })
 }
 
+const text = JSON.stringify(reply)
+
+/** The same bytes as an advisory of a segment, made beforehand. */
+const still: Routes = (app) => {
+  app.get('/bench/still', (_request, response) => response.type('application/json; charset=utf-8').send(text))
+}
+
 /** CPU time of this process so far, s: what a request costs, whatever else the machine does. */
 const cpu: Routes = (app) => {
   app.get('/bench/cpu', () => {
@@ -55,10 +62,10 @@ const cpu: Routes = (app) => {
   })
 }
 
-const parts = serviceParts(readConfig({}))
+const parts = serviceParts(readConfig({ DATABASE_URL: 'sqlite::memory:' }))
 const app = buildApp({
   ...parts,
-  routes: [...parts.routes, echo, bareStream, cpu],
+  routes: [...parts.routes, echo, bareStream, still, cpu],
   log: pino({ level: 'silent' }),
 })
 process.stdout.write(`${await app.listen({ host: '127.0.0.1', port: 0 })}\n`)

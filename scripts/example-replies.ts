@@ -17,7 +17,10 @@ export async function exampleReply(operation: string, request: string): Promise<
   const path = EXAMPLE_PATHS[operation]
   if (path === undefined)
     throw new Error(`The example ${operation} has no path in scripts/example-replies.ts`)
-  const app = buildApp({ ...serviceParts(readConfig({})), log: pino({ level: 'silent' }) })
+  const app = buildApp({
+    ...serviceParts(readConfig({ DATABASE_URL: 'sqlite::memory:' })),
+    log: pino({ level: 'silent' }),
+  })
   const reply = await app.inject({
     method: 'POST',
     url: path,

@@ -18,10 +18,13 @@ export interface AppParts {
   /** What the service is for, one function for each file of routes. */
   readonly routes: readonly Routes[]
   readonly versions: Versions
+  /** what is put before every route, in this order */
+  readonly installs?: readonly ((app: App) => void)[]
+  readonly onClose?: () => Promise<void>
   /** shown in the documentation */
   readonly examples?: Examples
   /** Undefined while the service cannot answer. */
-  readonly isReady: () => Readiness | undefined
+  readonly isReady: () => Readiness | undefined | Promise<Readiness | undefined>
 }
 
 const HEADERS_TIMEOUT = 15_000 // ms for the head of a request
@@ -59,6 +62,9 @@ export function buildApp(parts: AppParts): App {
   installJsonBodies(app, { timeout: requestTimeout })
   installLinger(app)
   installCompression(app)
+  for (const install of parts.installs ?? []) install(app)
+  const { onClose } = parts
+  if (onClose) app.addHook('onClose', onClose)
   installOpenApi(app, { version: parts.versions.service, publicUrl, examples: parts.examples })
   // After the documentation, which sees only the routes that come later.
   const routes = [healthRoutes(parts.versions, parts.isReady), problemRoutes, ...parts.routes]

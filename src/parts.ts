@@ -2,35 +2,86 @@ import { readdirSync, readFileSync } from 'node:fs'
 import { METHOD_VERSION } from './advisory/catalogue.ts'
 import type { AppParts } from './app.ts'
 import type { Config } from './config.ts'
+import { installAccess } from './http/access.ts'
+import { installCors } from './http/cors.ts'
+import { readFeature, type FeatureWire } from './http/feature-in.ts'
 import type { Examples } from './http/openapi-examples.ts'
+import type { Service } from './http/service.ts'
 import { serviceRoutes } from './http/service-routes.ts'
-import { fileRegistry, type SegmentFeature } from './store/file-registry.ts'
-import type { Registry } from './store/registry.ts'
+import { deferredStore } from './store/deferred.ts'
+import { openStore } from './store/open.ts'
+import type { Store } from './store/registry.ts'
 
 /** Examples and the invented waterway that the service shows, found from the sources and from the build alike. */
 const EXAMPLES = new URL('../openapi/examples/', import.meta.url)
 const DEMO = new URL('harrowmere-navigation.geojson', EXAMPLES)
 /** A segment of it on which the class of the example has a recommended speed. */
 const EXAMPLE = 'harrow-long-pound'
-const DEMO_UPDATED = '2026-12-01T00:00:00Z'
 
 export interface ServiceParts extends Omit<AppParts, 'log'> {
+  readonly service: Service
+  /** Fulfilled when the registry is open; rejected when it cannot be. */
+  readonly opened: Promise<void>
   /** A segment of the registry to show as an example, when it has one. */
-  readonly exampleSegment: string | undefined
+  readonly findExample: () => Promise<string | undefined>
 }
 
 /** Everything the service answers with: the one place where routes and the registry are put together. */
-export function serviceParts(config: Config): ServiceParts {
-  const registry = demoRegistry()
+export function serviceParts(config: Config, onLostConnection?: (error: Error) => void): ServiceParts {
   const version = serviceVersion()
+  const now = () => new Date().toISOString()
+  const opening = openRegistry(config, now, onLostConnection)
+  const store = deferredStore(config.databaseUrl.startsWith('sqlite:') ? 'sqlite' : 'postgres', opening)
+  const service: Service = { store, serviceVersion: version, now, bodyTimeout: config.requestTimeout }
   return {
     config,
-    routes: serviceRoutes({ registry, serviceVersion: version }),
+    service,
+    opened: opening.then(() => undefined),
+    installs: [
+      (app) => {
+        installCors(app, config.corsOrigins)
+      },
+      ...(config.access === 'keys'
+        ? [
+            (app: Parameters<typeof installAccess>[0]) => {
+              installAccess(app, service)
+            },
+          ]
+        : []),
+    ],
+    routes: serviceRoutes(service),
     versions: { service: version, methods: METHOD_VERSION },
-    isReady: () => ({ registryRevision: registry.revision, database: 'none' }),
+    isReady: async () => ({ registryRevision: (await store.current()).revision, database: store.kind }),
+    onClose: () => store.close(),
     examples: readExamples(),
-    exampleSegment: registry.findSegment(EXAMPLE)?.id,
+    findExample: async () => {
+      const registry = await store.current()
+      return registry.findSegment(EXAMPLE)?.id ?? registry.segments()[0]?.id
+    },
   }
+}
+
+async function openRegistry(
+  config: Config,
+  now: () => string,
+  onLostConnection: ((error: Error) => void) | undefined,
+): Promise<Store> {
+  const store = await openStore(config.databaseUrl, onLostConnection ? { onLostConnection } : {})
+  const registry = await store.current()
+  // a registry that was ever written belongs to someone, even when it is empty by now
+  const isNew = registry.revision === 0
+  if (isNew && (config.demo ?? store.kind === 'sqlite')) await importDemo(store, now())
+  return store
+}
+
+async function importDemo(store: Store, time: string): Promise<void> {
+  const { features } = JSON.parse(readFileSync(DEMO, 'utf8')) as { features: FeatureWire[] }
+  const contents = features.map((feature) => {
+    const { content, faults } = readFeature(feature, '#', false)
+    if (!content) throw new Error(`The demo waterway cannot be read: ${faults[0]?.detail ?? ''}`)
+    return content
+  })
+  await store.importSegments(contents, { time })
 }
 
 const EXAMPLE_NAME = /^(\w+)\.(request|reply)\.json$/
@@ -45,11 +96,6 @@ function readExamples(): Examples {
     examples[operation] = { ...examples[operation], [part]: value }
   }
   return examples
-}
-
-function demoRegistry(): Registry {
-  const { features } = JSON.parse(readFileSync(DEMO, 'utf8')) as { features: SegmentFeature[] }
-  return fileRegistry(features, DEMO_UPDATED)
 }
 
 function serviceVersion(): string {

@@ -33,13 +33,28 @@ function stopOnSignals(app: App): void {
 }
 
 const config = settings()
-const { exampleSegment, ...parts } = serviceParts(config)
-const app = buildApp({ ...parts, log: pino({ level: config.logLevel }) })
+const log = pino({ level: config.logLevel })
+const { opened, findExample, ...parts } = serviceParts(config, (error) => {
+  log.error({ err: error }, 'a connection to the database was lost')
+})
+const app = buildApp({ ...parts, log })
 stopOnSignals(app)
 
+try {
+  await opened
+} catch (error) {
+  // a schema that is too new, a database that does not answer: the sentence says which
+  log.fatal(error instanceof Error ? error.message : String(error))
+  await app.close()
+  process.exit(1)
+}
+if (config.access === 'open') log.warn('Access is open: everyone who reaches this address may read and write')
 const address = await app.listen({ host: config.host, port: config.port })
 const url = config.publicUrl ?? address
-app.log.info(`Documentation: ${url}/docs`)
-if (exampleSegment !== undefined) {
-  app.log.info(`An advisory: ${url}/v1/segments/${exampleSegment}/advisory?vessel_class=cemt-iv`)
+log.info(`Overview: ${url}/`)
+log.info(`Documentation: ${url}/docs`)
+const example = await findExample()
+if (example !== undefined) {
+  log.info(`An advisory: ${url}/v1/segments/${example}/advisory?vessel_class=cemt-iv`)
+  log.info(`Its sheet: ${url}/v1/segments/${example}/sheet?vessel_class=cemt-iv`)
 }

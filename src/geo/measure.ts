@@ -1,51 +1,40 @@
 import type { BoundingBox, LonLat } from '../domain/position.ts'
-
-/** Semi-major axis, m, and flattening of WGS 84 (NIMA TR 8350.2). */
-const SEMI_MAJOR = 6378137
-const FLATTENING = 1 / 298.257223563
-const ECCENTRICITY_SQUARED = FLATTENING * (2 - FLATTENING)
-
-const RADIANS = Math.PI / 180
-
-/** Difference of longitudes by the shorter way round, degrees, -180 to 180. */
-export function longitudeDifference(from: number, to: number): number {
-  return ((((to - from + 540) % 360) + 360) % 360) - 180
-}
+import { densify } from './densify.ts'
+import { edgeLength, longitudeDifference } from './plane.ts'
 
 /**
- * Length of an edge on the local plane of WGS 84 at its middle latitude.
+ * Length of a line along its straight longitude/latitude edges, m.
  *
- * @param a  start, degrees
- * @param b  end, degrees
- * @returns m
- * @holds edges up to some kilometres, latitudes up to 85 degrees
- * @error below 1e-6 relative for edges of 1 km at latitudes up to 70 degrees, against the geodesic
- * @source radii of curvature in the meridian and the prime vertical, any textbook of geodesy
- */
-export function edgeLength(a: LonLat, b: LonLat): number {
-  const latitude = ((a[1] + b[1]) / 2) * RADIANS
-  const w = 1 - ECCENTRICITY_SQUARED * Math.sin(latitude) ** 2
-  const meridian = (SEMI_MAJOR * (1 - ECCENTRICITY_SQUARED)) / w ** 1.5
-  const primeVertical = SEMI_MAJOR / Math.sqrt(w)
-  const x = longitudeDifference(a[0], b[0]) * RADIANS * primeVertical * Math.cos(latitude)
-  const y = (b[1] - a[1]) * RADIANS * meridian
-  return Math.hypot(x, y)
-}
-
-/**
- * Length of a line, m.
- *
- * @param line  n positions, n ≥ 2, edges as of `edgeLength`
+ * @param line  n positions, n ≥ 2
+ * @error below 1e-6 relative at latitudes up to 70 degrees; edges over 1 km are measured in pieces
  */
 export function lineLength(line: readonly LonLat[]): number {
-  return line.slice(1).reduce((sum, position, i) => sum + edgeLength(line[i] as LonLat, position), 0)
+  return densify(line).reduce((sum, position, i, positions) => {
+    const before = positions[i - 1]
+    return before ? sum + edgeLength(before, position) : sum
+  }, 0)
 }
 
-/** Smallest box around a line that does not cross the antimeridian. */
+/**
+ * Smallest box around a line, its edges taken the short way round.
+ *
+ * @param line  n positions, n ≥ 1
+ * @returns west above east for a line that crosses the antimeridian, as RFC 7946 (5.2) has it
+ */
 export function boundingBox(line: readonly LonLat[]): BoundingBox {
-  const lons = line.map(([lon]) => lon)
-  const lats = line.map(([, lat]) => lat)
-  return [Math.min(...lons), Math.min(...lats), Math.max(...lons), Math.max(...lats)]
+  const [lon0, lat0] = line[0] ?? [NaN, NaN]
+  let [west, east, south, north] = [lon0, lon0, lat0, lat0]
+  // degrees from the first position by the way the line takes; the corners themselves are the caller's digits
+  let [turned, least, most, before] = [0, 0, 0, lon0]
+  for (const [lon, lat] of line) {
+    turned += longitudeDifference(before, lon)
+    before = lon
+    if (turned < least) [least, west] = [turned, lon]
+    if (turned > most) [most, east] = [turned, lon]
+    south = Math.min(south, lat)
+    north = Math.max(north, lat)
+  }
+  return most - least >= 360 ? [-180, south, 180, north] : [west, south, east, north]
 }
 
 /** Whether two boxes share a point; a west above its east crosses the antimeridian. */

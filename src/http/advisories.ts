@@ -5,7 +5,6 @@ import { inverseOf, VARIED } from '../advisory/inverse.ts'
 import { sensitivityOf, type InputSwing } from '../advisory/sensitivity.ts'
 import type { Decision } from '../advisory/decide.ts'
 import { Fault } from '../domain/fault.ts'
-import type { Registry } from '../store/registry.ts'
 import type { App, Routes } from './app-type.ts'
 import { crossCheck } from './cross-check.ts'
 import { checkSpeed, speedFields, speedOf } from './fields.ts'
@@ -15,13 +14,8 @@ import { toPair } from './reply-parts.ts'
 import { toAdvisoryReply, toAssessmentReply } from './reply.ts'
 import { AdvisoryReply, AssessmentReply, InverseReply, SensitivityReply } from './reply.schema.ts'
 import { ADVISORY_FIELDS, AdvisoryRequest, resolve } from './request.ts'
+import { viewOf, type Service, type View } from './service.ts'
 import { UncertaintyFields, toHalves } from './uncertainty.schema.ts'
-
-/** What the routes of advisories answer from. */
-export interface AdvisoryParts {
-  readonly registry: Registry
-  readonly serviceVersion: string
-}
 
 const SAILED_FIELDS = {
   ...speedFields('speed', 0.1, 30, 'speed of the vessel'),
@@ -97,21 +91,21 @@ function notAhead(speedOverGround: number, current: number): Fault {
 const PROBLEMS = problemResponses(400, 404, 406, 413, 415, 422)
 
 /** Advisories one at a time, and the questions that turn them round. */
-export function advisoryRoutes(parts: AdvisoryParts): Routes {
+export function advisoryRoutes(service: Service): Routes {
   return (app) => {
-    addAdvisory(app, parts)
-    addEffects(app, parts)
-    addSensitivity(app, parts)
-    addInverse(app, parts)
+    addAdvisory(app, service)
+    addEffects(app, service)
+    addSensitivity(app, service)
+    addInverse(app, service)
   }
 }
 
-const contextOf = ({ registry, serviceVersion }: AdvisoryParts) => ({
+const contextOf = ({ registry, serviceVersion }: View) => ({
   serviceVersion,
   registryRevision: registry.revision,
 })
 
-function addAdvisory(app: App, parts: AdvisoryParts): void {
+function addAdvisory(app: App, service: Service): void {
   app.post('/v1/advisories', {
     schema: {
       operationId: 'createAdvisory',
@@ -123,18 +117,19 @@ function addAdvisory(app: App, parts: AdvisoryParts): void {
       body: AdvisoryRequest,
       response: { 200: AdvisoryReply, ...PROBLEMS },
     },
-    handler: (request, reply) => {
+    handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
-      const resolved = resolve(body, parts.registry)
+      const view = await viewOf(service)
+      const resolved = resolve(body, view.registry)
       const { segment, vessel, conditions, options } = resolved
       const advisory = advise(segment, vessel, conditions, options)
-      return toAdvisoryReply(advisory, resolved, contextOf(parts), body)
+      return toAdvisoryReply(advisory, resolved, contextOf(view), body)
     },
   })
 }
 
-function addEffects(app: App, parts: AdvisoryParts): void {
+function addEffects(app: App, service: Service): void {
   app.post('/v1/effects', {
     schema: {
       operationId: 'createEffects',
@@ -144,19 +139,20 @@ function addEffects(app: App, parts: AdvisoryParts): void {
       body: EffectsRequest,
       response: { 200: AssessmentReply, ...PROBLEMS },
     },
-    handler: (request, reply) => {
+    handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
-      const resolved = resolve(body, parts.registry)
+      const view = await viewOf(service)
+      const resolved = resolve(body, view.registry)
       const { segment, vessel, conditions, options } = resolved
       const assessment = assess(segment, vessel, conditions, options, toSailed(body))
       if (!assessment) throw notAhead(toSailed(body).value, conditions.current)
-      return toAssessmentReply(assessment, resolved, contextOf(parts), body)
+      return toAssessmentReply(assessment, resolved, contextOf(view), body)
     },
   })
 }
 
-function addSensitivity(app: App, { registry }: AdvisoryParts): void {
+function addSensitivity(app: App, service: Service): void {
   app.post('/v1/advisories/sensitivity', {
     schema: {
       operationId: 'createSensitivity',
@@ -166,10 +162,11 @@ function addSensitivity(app: App, { registry }: AdvisoryParts): void {
       body: SensitivityRequest,
       response: { 200: SensitivityReply, ...PROBLEMS },
     },
-    handler: (request, reply) => {
+    handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
-      const { base, inputs } = sensitivityOf(resolve(body, registry), toHalves(body.uncertainty))
+      const view = await viewOf(service)
+      const { base, inputs } = sensitivityOf(resolve(body, view.registry), toHalves(body.uncertainty))
       return {
         ...labelled(body.label),
         ...(base.outcome !== 'no-safe-speed' && { base: toPair(base, base.speed) }),
@@ -179,7 +176,7 @@ function addSensitivity(app: App, { registry }: AdvisoryParts): void {
   })
 }
 
-function addInverse(app: App, { registry }: AdvisoryParts): void {
+function addInverse(app: App, service: Service): void {
   app.post('/v1/advisories/inverse', {
     schema: {
       operationId: 'createInverse',
@@ -189,10 +186,11 @@ function addInverse(app: App, { registry }: AdvisoryParts): void {
       body: InverseRequest,
       response: { 200: InverseReply, ...PROBLEMS },
     },
-    handler: (request, reply) => {
+    handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
-      const inverse = inverseOf(resolve(body, registry), toSailed(body), body.vary)
+      const view = await viewOf(service)
+      const inverse = inverseOf(resolve(body, view.registry), toSailed(body), body.vary)
       return { ...labelled(body.label), ...toInverseReply(inverse) }
     },
   })

@@ -3,7 +3,6 @@ import type { Readable } from 'node:stream'
 import { z } from 'zod'
 import { advise, adviseBriefly } from '../advisory/advise.ts'
 import { Fault } from '../domain/fault.ts'
-import type { AdvisoryParts } from './advisories.ts'
 import type { App, Routes } from './app-type.ts'
 import { StreamLine } from './compact.schema.ts'
 import { COMPACT_COLUMNS, toCompactRow, toProblemRow, type CompactRow } from './compact.ts'
@@ -15,6 +14,7 @@ import { formatParameter, negotiate } from './negotiate.ts'
 import { problemResponses, toProblem } from './problems.ts'
 import { toAdvisoryReply } from './reply.ts'
 import { AdvisoryRequest, resolve } from './request.ts'
+import { viewOf, type Service, type View } from './service.ts'
 import { sendStream } from './stream.ts'
 import { columnOfPointer, CSV_COLUMNS, requestOfRow } from './stream-csv.ts'
 import { parse } from './validation.ts'
@@ -77,7 +77,7 @@ function byColumn(fault: Fault): Fault {
   return errors ? new Fault(fault.code, fault.message, { ...fault.parts, errors }) : fault
 }
 
-function compactLine(item: Item, { registry }: AdvisoryParts, isCsv: boolean): CompactRow {
+function compactLine(item: Item, { registry }: View, isCsv: boolean): CompactRow {
   let input: unknown
   try {
     input = item.read()
@@ -92,7 +92,7 @@ function compactLine(item: Item, { registry }: AdvisoryParts, isCsv: boolean): C
   }
 }
 
-function fullLine(item: Item, { registry, serviceVersion }: AdvisoryParts, requestId: string): unknown {
+function fullLine(item: Item, { registry, serviceVersion }: View, requestId: string): unknown {
   try {
     const wire = parse(AdvisoryRequest, item.read())
     const resolved = resolve(wire, registry)
@@ -111,12 +111,19 @@ const LINES_AT_ONCE = 10
 const csvOf = (row: CompactRow): string => csvRow(COMPACT_COLUMNS.map((column) => row[column]))
 const jsonLine = (value: unknown): string => `${toFiniteJson(value)}\n`
 
-async function* answered(items: Items, head: string, toText: (item: Item) => string): AsyncGenerator<string> {
+async function* answered(
+  items: Items,
+  head: string,
+  service: Service,
+  toText: (item: Item, view: View) => string,
+): AsyncGenerator<string> {
   let text = head
   let made = 0
   for await (const batch of items) {
+    // a stream may run for hours: each piece of it sees the registry as it is then
+    const view = await viewOf(service)
     for (const item of batch) {
-      text += toText(item)
+      text += toText(item, view)
       made += 1
       if (made % LINES_AT_ONCE !== 0) continue
       yield text
@@ -134,17 +141,17 @@ const isCsvType = (request: FastifyRequest): boolean =>
   request.headers['content-type']?.toLowerCase().startsWith('text/csv') === true
 
 /** Advisories line by line, as they come. */
-export function advisoryStreamRoutes(parts: AdvisoryParts): Routes {
+export function advisoryStreamRoutes(service: Service): Routes {
   return (app) => {
     void app.register((scope: App, _options, done) => {
       acceptLines(scope)
-      addRoute(scope, parts)
+      addRoute(scope, service)
       done()
     })
   }
 }
 
-function addRoute(app: App, parts: AdvisoryParts): void {
+function addRoute(app: App, service: Service): void {
   app.post('/v1/advisories/stream', {
     schema: {
       operationId: 'streamAdvisories',
@@ -171,14 +178,14 @@ function addRoute(app: App, parts: AdvisoryParts): void {
         ...problemResponses(400, 406, 413, 415),
       },
     },
-    handler: (request, reply) => respond(request, reply, parts, request.query.detail),
+    handler: (request, reply) => respond(request, reply, service, request.query.detail),
   })
 }
 
 async function respond(
   request: FastifyRequest,
   reply: FastifyReply,
-  parts: AdvisoryParts,
+  service: Service,
   detail: 'full' | 'compact' | undefined,
 ): Promise<FastifyReply> {
   const isCsvIn = isCsvType(request)
@@ -189,12 +196,12 @@ async function respond(
     const head = csvRow(COMPACT_COLUMNS)
     return sendStream(
       reply,
-      answered(items, head, (item) => csvOf(compactLine(item, parts, isCsvIn))),
+      answered(items, head, service, (item, view) => csvOf(compactLine(item, view, isCsvIn))),
     )
   }
   const isCompact = isCsvIn || detail === 'compact'
   const toLine = isCompact
-    ? (item: Item) => jsonLine(compactLine(item, parts, isCsvIn))
-    : (item: Item) => jsonLine(fullLine(item, parts, request.id))
-  return sendStream(reply, answered(items, '', toLine))
+    ? (item: Item, view: View) => jsonLine(compactLine(item, view, isCsvIn))
+    : (item: Item, view: View) => jsonLine(fullLine(item, view, request.id))
+  return sendStream(reply, answered(items, '', service, toLine))
 }

@@ -17,6 +17,15 @@ export function installJsonBodies(app: App, settings: { readonly timeout: number
   refuseOtherBodies(app, [JSON_TYPE])
 }
 
+const GEOJSON_TYPE = 'application/geo+json'
+
+/** Inside `app.register`: makes the routes of this scope take GeoJSON under its own name too. */
+export function acceptGeoJson(scope: App, settings: { readonly timeout: number }): void {
+  scope.addContentTypeParser(GEOJSON_TYPE, async (request: FastifyRequest, payload: IncomingMessage) =>
+    parseJsonBytes(await readBody(request, payload, settings.timeout)),
+  )
+}
+
 /** Answers 415 for bodies that no parser of this scope reads. */
 export function refuseOtherBodies(app: App, accepted: readonly string[]): void {
   app.addContentTypeParser('*', (_request, _payload, done) => {

@@ -49,7 +49,7 @@ const EMPTY = Object.fromEntries(COMPACT_COLUMNS.map((column) => [column, null])
 const finite = (value: number): number | null => (Number.isFinite(value) ? value : null)
 
 /** The recommended speed in each unit; empty when no speed is safe. */
-function maximumColumns(decision: Decision) {
+export function maximumColumns(decision: Decision) {
   if (decision.outcome === 'no-safe-speed') return NO_MAXIMUM
   const { through_water, over_ground } = toPair(decision, decision.speed)
   return {

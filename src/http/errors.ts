@@ -6,7 +6,8 @@ import { Fault, type FaultCode } from '../domain/fault.ts'
 import type { App } from './app-type.ts'
 import { JSON_TYPE, unsupportedType } from './body.ts'
 import { VARY } from './negotiate.ts'
-import { PROBLEM_TYPE, problemRow, toProblem } from './problems.ts'
+import { problemRow } from './problem-table.ts'
+import { PROBLEM_TYPE, toProblem } from './problems.ts'
 import { allowedMethods, type KnownRoute } from './known-routes.ts'
 
 const INTERNAL = new Fault(

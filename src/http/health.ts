@@ -28,7 +28,10 @@ const Ready = z
   .meta({ id: 'Ready', description: 'The service can answer, and from which versions.' })
 
 /** Liveness for a supervisor and readiness for a load balancer. */
-export function healthRoutes(versions: Versions, isReady: () => Readiness | undefined): Routes {
+export function healthRoutes(
+  versions: Versions,
+  isReady: () => Readiness | undefined | Promise<Readiness | undefined>,
+): Routes {
   return (app) => {
     app.get('/health/live', {
       schema: {
@@ -46,8 +49,8 @@ export function healthRoutes(versions: Versions, isReady: () => Readiness | unde
         summary: 'Tell whether the service can answer, and from which versions.',
         response: { 200: Ready, ...problemResponses(503) },
       },
-      handler: () => {
-        const state = isReady()
+      handler: async () => {
+        const state = await isReady()
         if (!state) throw new Fault('overloaded', 'The service is not ready to answer yet')
         return {
           status: 'ready',

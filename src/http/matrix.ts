@@ -6,7 +6,6 @@ import type { Conditions, Options } from '../domain/conditions.ts'
 import type { Segment } from '../domain/segment.ts'
 import type { Vessel } from '../domain/vessel.ts'
 import type { Registry, SegmentRecord } from '../store/registry.ts'
-import type { AdvisoryParts } from './advisories.ts'
 import type { Routes } from './app-type.ts'
 import { MatrixRow } from './compact.schema.ts'
 import { COMPACT_COLUMNS, toCompactRow, toProblemRow, type CompactRow } from './compact.ts'
@@ -18,6 +17,7 @@ import { ConditionsFields, OptionsFields, toConditions, toOptions } from './opti
 import { problemResponses } from './problems.ts'
 import { refuseCalibration, resolveSegment, segmentNotFound, segmentOf } from './request.ts'
 import { SegmentFields, type SegmentWire } from './segment.schema.ts'
+import type { Service } from './service.ts'
 import { sendStream } from './stream.ts'
 import { toVessel, VesselFields } from './vessel.schema.ts'
 
@@ -119,9 +119,9 @@ function labelOf(...labels: readonly (string | undefined)[]): string | null {
 function axesOf(wire: MatrixWire, registry: Registry) {
   return {
     segments: chosenSegments(wire, registry),
-    vessels: wire.vessels.map((vessel) => ({ vessel: toVessel(vessel), label: vessel.label })),
+    vessels: wire.vessels.map((vessel) => ({ vessel: toVessel(vessel, registry), label: vessel.label })),
     conditions: (wire.conditions ?? [{}]).map((item) => ({
-      conditions: toConditions(item),
+      conditions: toConditions(item, registry),
       label: 'label' in item ? item.label : undefined,
     })),
     options: toOptions(wire.options ?? {}),
@@ -195,7 +195,7 @@ async function respond(
 }
 
 /** Every segment with every vessel in all conditions, as rows. */
-export function matrixRoutes({ registry }: AdvisoryParts): Routes {
+export function matrixRoutes({ store }: Service): Routes {
   return (app) => {
     app.post('/v1/advisories/matrix', {
       bodyLimit: MAX_BODY_BYTES,
@@ -218,7 +218,7 @@ export function matrixRoutes({ registry }: AdvisoryParts): Routes {
           ...problemResponses(400, 404, 406, 413, 415, 422),
         },
       },
-      handler: (request, reply) => respond(request, reply, request.body, registry),
+      handler: async (request, reply) => respond(request, reply, request.body, await store.current()),
     })
   }
 }

@@ -3,7 +3,7 @@ import type { Conditions, Options, RequestedLimits } from '../domain/conditions.
 import { DIRECTIONS } from '../domain/segment.ts'
 import { figure, Id, Label } from './fields.ts'
 import { WAVE_METHOD_IDS } from '../advisory/catalogue.ts'
-import { toVessel, VesselFields } from './vessel.schema.ts'
+import { toVessel, VesselFields, type Classes } from './vessel.schema.ts'
 
 export const SIGN_UNIT_NAMES = ['km/h', 'kn', 'mph'] as const
 
@@ -59,14 +59,14 @@ export type ConditionsWire = z.output<typeof ConditionsFields>
 export type OptionsWire = z.output<typeof OptionsFields>
 
 /** @throws Fault `vessel-class-not-found` for the vessel that is met */
-export function toConditions(wire: ConditionsWire): Conditions {
+export function toConditions(wire: ConditionsWire, registry: Classes): Conditions {
   return {
     waterLevel: wire.water_level_m ?? 0,
     current: wire.current_mps ?? 0,
     isWaterLevelGiven: wire.water_level_m !== undefined,
     isCurrentGiven: wire.current_mps !== undefined,
     ...(wire.direction && { direction: wire.direction }),
-    ...(wire.meeting_vessel && { meetingVessel: toVessel(wire.meeting_vessel) }),
+    ...(wire.meeting_vessel && { meetingVessel: toVessel(wire.meeting_vessel, registry) }),
   }
 }
 

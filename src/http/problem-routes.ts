@@ -3,7 +3,8 @@ import { Fault, type FaultCode } from '../domain/fault.ts'
 import type { App } from './app-type.ts'
 import { list, listOf } from './list.ts'
 import { nearestFirst } from './nearest.ts'
-import { PROBLEM_CODES, PROBLEMS, problemResponses } from './problems.ts'
+import { PROBLEM_CODES, PROBLEMS } from './problem-table.ts'
+import { problemResponses } from './problems.ts'
 
 const ProblemType = z
   .object({

@@ -161,3 +161,15 @@ export const InverseReply = z
     id: 'Inverse',
     description: 'What an input would have to be for a speed to be within the recommendation.',
   })
+
+export const SegmentCurveReply = z
+  .object({
+    ...CurveReply.shape,
+    segment: Head.segment,
+    station: Head.station,
+    vessel: Head.vessel,
+    conditions: Head.conditions,
+    cautions: Reasons.cautions,
+    reproducibility: Reasons.reproducibility,
+  })
+  .meta({ id: 'SegmentSpeedCurve', description: 'Effects over speed on a registry segment.' })

@@ -1,6 +1,7 @@
 import type { Advisory } from '../advisory/advise.ts'
 import type { Assessment } from '../advisory/assess.ts'
 import { METHOD_VERSION } from '../advisory/catalogue.ts'
+import type { Curve } from '../advisory/curve.ts'
 import type { Decision } from '../advisory/decide.ts'
 import { inputHash } from './input-hash.ts'
 import {
@@ -112,6 +113,28 @@ export function toAdvisoryReply(
     },
     cautions: advisory.cautions,
     assumptions: advisory.assumptions,
+    reproducibility: reproducibility(resolved, context),
+  }
+}
+
+/** A segment's curve, as it goes out: with what it is the curve of. */
+export function toSegmentCurveReply(
+  advisory: Advisory,
+  curve: Curve,
+  resolved: Resolved,
+  context: ReplyContext,
+) {
+  const { decision } = advisory
+  return {
+    points: toCurvePoints(curve),
+    criteria: advisory.criteria.map((report) => toCriterionReply(decision, report)),
+    critical_speed: toCriticalReply(decision),
+    recommended_max_speed: recommendedPair(decision),
+    segment: segmentReply(resolved),
+    station: stationReply(decision, resolved),
+    vessel: toVesselReply(decision.situation.vessel),
+    conditions: conditionsReply(decision),
+    cautions: advisory.cautions,
     reproducibility: reproducibility(resolved, context),
   }
 }

@@ -13,6 +13,7 @@ import {
   type OptionsWire,
 } from './options.schema.ts'
 import { checkGeometry, SegmentFields, type RegistrySegmentWire, type SegmentWire } from './segment.schema.ts'
+import { toRegistrySegment } from './to-registry-segment.ts'
 import { toSegment } from './to-segment.ts'
 import { pointer, refused } from './validation.ts'
 import { toVessel, VesselFields } from './vessel.schema.ts'
@@ -69,7 +70,7 @@ const segments = new WeakMap<SegmentRecord, Segment>()
 export function segmentOf(record: SegmentRecord): Segment {
   const known = segments.get(record)
   if (known) return known
-  const segment = toSegment(record.properties, record)
+  const { segment } = toRegistrySegment(record.properties, record.line, record)
   segments.set(record, segment)
   return segment
 }
@@ -94,7 +95,7 @@ export function resolveSegment(
   const merged = overridden(stored, wire)
   if (merged === stored) return { segment: segmentOf(record), record }
   refuseIncomplete(merged)
-  return { segment: toSegment(merged, record), record }
+  return { segment: toRegistrySegment(merged, record.line, record).segment, record }
 }
 
 /** No calibration exists yet, so that naming one is a fault and not a factor of one. */
@@ -113,8 +114,8 @@ export function resolve(wire: AdvisoryWire, registry: Registry): Resolved {
   refuseCalibration(wire.segment, wire.options)
   return {
     ...resolveSegment(wire.segment, registry),
-    vessel: toVessel(wire.vessel),
-    conditions: toConditions(wire.conditions ?? {}),
+    vessel: toVessel(wire.vessel, registry),
+    conditions: toConditions(wire.conditions ?? {}, registry),
     options: toOptions(wire.options ?? {}),
   }
 }

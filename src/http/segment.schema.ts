@@ -7,20 +7,31 @@ import { GroupFields } from './group.schema.ts'
 const Distance = figure(0.1, 20000, 'sailing line to the waterline at the datum, m')
 const Slope = figure(0, 20, 'horizontal over vertical')
 
-export const BankFields = z
-  .strictObject({
-    label: Label,
-    distance_m: Distance.optional(),
-    kind: z.enum(BANK_KINDS).optional().describe('default unprotected'),
-    max_wave_height_m: figure(0.01, 10, 'in place of the default for the kind, m').optional(),
-    max_drawdown_m: figure(0.01, 10, 'm').optional(),
-    max_return_current_mps: figure(0.01, 10, 'm/s').optional(),
-    stone_d50_m: figure(0.005, 3, 'median stone size of riprap, m').optional(),
-    stone_relative_density: figure(0.5, 3, '(rho_s - rho)/rho of the stone, default 1.65').optional(),
-    slope_h_per_v: Slope.optional(),
-    toe_depth_m: figure(0, 100, 'depth below the datum at the toe, m; limits waves by breaking').optional(),
-  })
-  .meta({ id: 'Bank', description: 'One bank of a segment.' })
+const BANK = {
+  label: Label,
+  distance_m: Distance.optional(),
+  kind: z.enum(BANK_KINDS).optional().describe('default unprotected'),
+  max_wave_height_m: figure(0.01, 10, 'in place of the default for the kind, m').optional(),
+  max_drawdown_m: figure(0.01, 10, 'm').optional(),
+  max_return_current_mps: figure(0.01, 10, 'm/s').optional(),
+  stone_d50_m: figure(0.005, 3, 'median stone size of riprap, m').optional(),
+  stone_relative_density: figure(0.5, 3, '(rho_s - rho)/rho of the stone, default 1.65').optional(),
+  slope_h_per_v: Slope.optional(),
+  toe_depth_m: figure(0, 100, 'depth below the datum at the toe, m; limits waves by breaking').optional(),
+} as const
+
+export const BankFields = z.strictObject(BANK).meta({ id: 'Bank', description: 'One bank of a segment.' })
+
+const Position = z.array(z.number()).min(2).max(4)
+
+/** A waterline as GeoJSON has it; what it holds is checked with the sailing line. */
+const BankLine = z
+  .strictObject({ type: z.string(), coordinates: z.array(z.union([Position, z.unknown()])).max(100_000) })
+  .describe('waterline as a LineString, [lon, lat], in either order of vertices')
+
+const RegistryBankFields = z
+  .strictObject({ ...BANK, line: BankLine.optional() })
+  .meta({ id: 'RegistryBank', description: 'One bank of a registry segment, by its line or by a distance.' })
 
 const ProfilePoint = z.tuple([z.number().min(-20000).max(20000), z.number().min(-100).max(150)])
 
@@ -180,12 +191,18 @@ export function checkGeometry(segment: Checked, report: Report): void {
   } else checkBankDistances(segment, report)
 }
 
-/** Two distances, or one and the width, give the section. */
+/** Two lines, two distances, or one distance and the width, give the section. */
 function checkBankDistances(segment: Checked, report: Report): void {
   const { left, right } = { left: {}, right: {}, ...(segment.banks as object) } as Record<
     'left' | 'right',
-    { distance_m?: unknown }
+    { distance_m?: unknown; line?: unknown }
   >
+  if (left.line !== undefined || right.line !== undefined) {
+    if (left.line !== undefined && right.line !== undefined) return
+    const missing = left.line === undefined ? 'left' : 'right'
+    report(['banks', missing, 'line'], 'required', 'is required: both banks have a line, or neither')
+    return
+  }
   const given = [left, right].filter((bank) => bank.distance_m !== undefined).length
   if (given === 2 || (given === 1 && segment.width_m !== undefined)) return
   const missing = left.distance_m === undefined ? 'left' : 'right'
@@ -209,7 +226,14 @@ export type SegmentWire = z.output<typeof SegmentFields>
 
 /** A segment as the registry holds it: the properties of a GeoJSON feature. */
 export const RegistrySegmentFields = z
-  .strictObject({ ...COMMON, stations: z.array(StationFields).min(1).max(5000).optional() })
+  .strictObject({
+    ...COMMON,
+    banks: z
+      .strictObject({ label: Label, left: RegistryBankFields, right: RegistryBankFields })
+      .optional()
+      .describe('in place of bank_distance_m; left and right looking downstream'),
+    stations: z.array(StationFields).min(1).max(5000).optional(),
+  })
   .check(
     crossCheck((segment, report) => {
       checkGeometry(segment, report)

@@ -1,19 +1,30 @@
-import { advisoryRoutes, type AdvisoryParts } from './advisories.ts'
+import { advisoryRoutes } from './advisories.ts'
 import { advisoryStreamRoutes } from './advisory-stream.ts'
 import type { Routes } from './app-type.ts'
+import { layerRoutes } from './layer.ts'
 import { matrixRoutes } from './matrix.ts'
 import { methodRoutes } from './methods.ts'
+import { overviewRoutes } from './overview.ts'
+import { segmentImportRoutes } from './segment-import.ts'
+import { segmentViewRoutes } from './segment-views.ts'
+import { segmentWriteRoutes } from './segment-writes.ts'
 import { segmentRoutes } from './segments.ts'
+import type { Service } from './service.ts'
 import { vesselClassRoutes } from './vessel-classes.ts'
 
 /** Every route of the service beside health, problems and documentation. */
-export function serviceRoutes(parts: AdvisoryParts): Routes[] {
+export function serviceRoutes(service: Service): Routes[] {
   return [
-    advisoryRoutes(parts),
-    advisoryStreamRoutes(parts),
-    matrixRoutes(parts),
-    segmentRoutes(parts),
-    vesselClassRoutes,
+    advisoryRoutes(service),
+    advisoryStreamRoutes(service),
+    matrixRoutes(service),
+    segmentRoutes(service),
+    segmentViewRoutes(service),
+    segmentWriteRoutes(service),
+    segmentImportRoutes(service),
+    layerRoutes(service),
+    vesselClassRoutes(service),
     methodRoutes,
+    overviewRoutes(service),
   ]
 }

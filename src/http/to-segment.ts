@@ -69,7 +69,7 @@ function toPostedLimit(wire: NonNullable<AnySegmentWire['posted_limits']>[number
   }
 }
 
-function stoneItems(wire: AnySegmentWire): FaultItem[] {
+export function stoneItems(wire: AnySegmentWire): FaultItem[] {
   return (['left', 'right'] as const).flatMap((side): FaultItem[] => {
     const bank = wire.banks?.[side]
     if (bank?.stone_d50_m === undefined || bank.slope_h_per_v !== 0) return []
@@ -84,23 +84,14 @@ function stoneItems(wire: AnySegmentWire): FaultItem[] {
   })
 }
 
-/**
- * The segment of a request or of the registry.
- *
- * @throws Fault `impossible-input` with every pair of figures that clash
- */
-export function toSegment(wire: AnySegmentWire, identity?: Identity): Segment {
-  const banks = toBanks(wire)
-  const { stations, items } = toStations(wire)
-  const errors = [...items, ...stoneItems(wire)]
-  const [first, ...rest] = stations
-  if (errors.length > 0 || !first) throw impossible(errors)
+/** A segment from its parts. */
+export function assembled(wire: AnySegmentWire, stations: Segment['stations'], identity?: Identity): Segment {
   return {
     ...(identity && { id: identity.id, revision: identity.revision }),
     ...(wire.name !== undefined && { name: wire.name }),
     ...(wire.waterway !== undefined && { waterway: wire.waterway }),
-    stations: [first, ...rest],
-    banks,
+    stations,
+    banks: toBanks(wire),
     receptors: (wire.receptors ?? []).map(toReceptor),
     postedLimits: (wire.posted_limits ?? []).map(toPostedLimit),
     confinement: wire.confinement ?? 'confined',
@@ -110,4 +101,17 @@ export function toSegment(wire: AnySegmentWire, identity?: Identity): Segment {
     }),
     ...(wire.max_draught_m !== undefined && { maxDraught: wire.max_draught_m }),
   }
+}
+
+/**
+ * The segment of a request, or one of the registry without bank lines.
+ *
+ * @throws Fault `impossible-input` with every pair of figures that clash
+ */
+export function toSegment(wire: AnySegmentWire, identity?: Identity): Segment {
+  const { stations, items } = toStations(wire)
+  const errors = [...items, ...stoneItems(wire)]
+  const [first, ...rest] = stations
+  if (errors.length > 0 || !first) throw impossible(errors)
+  return assembled(wire, [first, ...rest], identity)
 }

@@ -7,12 +7,18 @@ import {
 } from '../domain/vessel-classes.ts'
 import { fromKmh } from '../domain/units.ts'
 import { HULLS } from '../domain/vessel.ts'
-import type { Routes } from './app-type.ts'
+import { Fault } from '../domain/fault.ts'
+import type { ClassRecord } from '../store/registry.ts'
+import type { App, Routes } from './app-type.ts'
 import { Id } from './fields.ts'
+import { FIELD_NAMES, toVesselClass, VesselClassIn } from './own-class.ts'
 import { listOf } from './list.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { PAGE_FIELDS, pageOf } from './paging.ts'
+import { expectedOf, revisionRequired, writtenOr } from './preconditions.ts'
 import { problemResponses } from './problems.ts'
+import { authorOf } from './segment-writes.ts'
+import { openView, type Service, type View } from './service.ts'
 import { Speed } from './reply-parts.schema.ts'
 import { toSpeed } from './reply-parts.ts'
 import { unknownClass } from './vessel.schema.ts'
@@ -45,18 +51,6 @@ const VesselClassReply = z
   })
   .meta({ id: 'VesselClass', description: 'A class of vessels with its figures and where they come from.' })
 
-/** Fields of a class at the edge, by the name they have inside. */
-const FIELD_NAMES = {
-  length: 'length_m',
-  beam: 'beam_m',
-  draught: 'draught_m',
-  blockCoefficient: 'block_coefficient',
-  midshipCoefficient: 'midship_coefficient',
-  entranceLength: 'entrance_length_m',
-  envelopeCoefficient: 'rock_manual_coefficient',
-  centralCoefficient: 'blaauw_coefficient',
-} as const satisfies Record<keyof ClassDimensions, string>
-
 function toDimensions(dimensions: ClassDimensions) {
   const entries = Object.entries(FIELD_NAMES) as [keyof ClassDimensions, string][]
   return Object.fromEntries(
@@ -77,12 +71,34 @@ function toBasis(vesselClass: VesselClass) {
   return { ...basis, max_speed: 'typical', min_steerage_speed: 'typical' }
 }
 
-function toVesselClassReply(vesselClass: VesselClass) {
+/** A class with its revision; built-in ones have one revision for ever. */
+interface Shown {
+  readonly id: string
+  readonly vesselClass: VesselClass
+  readonly revision: number
+  readonly isBuiltIn: boolean
+}
+
+const builtIn = (vesselClass: VesselClass): Shown => ({
+  id: vesselClass.id,
+  vesselClass,
+  revision: 1,
+  isBuiltIn: true,
+})
+
+const own = ({ id, vesselClass, revision }: ClassRecord): Shown => ({
+  id,
+  vesselClass,
+  revision,
+  isBuiltIn: false,
+})
+
+function toVesselClassReply({ vesselClass, revision, isBuiltIn }: Shown) {
   return {
     id: vesselClass.id,
     name: vesselClass.name,
-    built_in: true,
-    revision: 1,
+    built_in: isBuiltIn,
+    revision,
     loadings: vesselClass.empty ? ['laden', 'empty'] : [],
     hull: vesselClass.hull,
     trade: vesselClass.trade,
@@ -97,8 +113,35 @@ function toVesselClassReply(vesselClass: VesselClass) {
   }
 }
 
-/** The classes of vessels that a request can name. */
-export const vesselClassRoutes: Routes = (app) => {
+function shownOf(id: string, { registry }: View): Shown {
+  const known = findVesselClass(id)
+  if (known) return builtIn(known)
+  const record = registry.findClass(id)
+  if (!record) throw unknownClass(id, registry)
+  return own(record)
+}
+
+function refuseBuiltIn(id: string): void {
+  if (!findVesselClass(id)) return
+  throw new Fault('built-in-class', `The class ${id} is built in: write one of your own under another id`, {
+    facts: { vessel_class: id },
+  })
+}
+
+const Params = z.strictObject({ id: Id })
+const JsonQuery = z.strictObject({ format: formatParameter(['json']) })
+
+/** The classes of vessels that a request can name, and writing those of the caller's own. */
+export function vesselClassRoutes(service: Service): Routes {
+  return (app) => {
+    addList(app, service)
+    addClass(app, service)
+    addPut(app, service)
+    addDelete(app, service)
+  }
+}
+
+function addList(app: App, service: Service): void {
   app.get('/v1/vessel-classes', {
     schema: {
       operationId: 'listVesselClasses',
@@ -107,27 +150,92 @@ export const vesselClassRoutes: Routes = (app) => {
       querystring: z.strictObject({ ...PAGE_FIELDS, format: formatParameter(['json']) }),
       response: { 200: listOf('VesselClassList', VesselClassReply), ...problemResponses(400, 406) },
     },
-    handler: (request, reply) => {
+    handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
-      return pageOf(VESSEL_CLASSES, request.query, request.url, toVesselClassReply)
+      const { registry } = await openView(service, reply)
+      const all = [...VESSEL_CLASSES.map(builtIn), ...registry.classes().map(own)]
+      return pageOf(all, request.query, request.url, toVesselClassReply)
     },
   })
+}
 
+function addClass(app: App, service: Service): void {
   app.get('/v1/vessel-classes/:id', {
     schema: {
       operationId: 'getVesselClass',
       tags: ['vessels'],
       summary: 'Show a class of vessels.',
-      params: z.strictObject({ id: Id }),
-      querystring: z.strictObject({ format: formatParameter(['json']) }),
+      params: Params,
+      querystring: JsonQuery,
       response: { 200: VesselClassReply, ...problemResponses(400, 404, 406) },
     },
-    handler: (request, reply) => {
+    handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
-      const vesselClass = findVesselClass(request.params.id)
-      if (!vesselClass) throw unknownClass(request.params.id)
-      void reply.header('etag', '"1"')
-      return toVesselClassReply(vesselClass)
+      const shown = shownOf(request.params.id, await openView(service, reply))
+      void reply.header('etag', `"${shown.revision}"`)
+      return toVesselClassReply(shown)
+    },
+  })
+}
+
+function addPut(app: App, service: Service): void {
+  app.put('/v1/vessel-classes/:id', {
+    schema: {
+      operationId: 'putVesselClass',
+      tags: ['vessels'],
+      summary: 'Create a class of your own, or replace one at the revision that If-Match names.',
+      params: Params,
+      querystring: JsonQuery,
+      body: VesselClassIn,
+      response: {
+        200: VesselClassReply,
+        201: VesselClassReply,
+        ...problemResponses(400, 401, 403, 404, 406, 409, 412, 413, 415, 428, 503),
+      },
+    },
+    handler: async (request, reply) => {
+      negotiate(request, reply, ['json'])
+      const { id } = request.params
+      refuseBuiltIn(id)
+      const expected = expectedOf(request)
+      const before = await service.store.current()
+      const content = toVesselClass(id, request.body)
+      const written = writtenOr(
+        await service.store.putClass(content, expected, authorOf(request, service)),
+        expected,
+        () => unknownClass(id, before),
+      )
+      if (written.outcome === 'created') void reply.code(201).header('location', `/v1/vessel-classes/${id}`)
+      void reply.header('etag', `"${written.revision}"`)
+      return toVesselClassReply(shownOf(id, await openView(service, reply)))
+    },
+  })
+}
+
+function addDelete(app: App, service: Service): void {
+  app.delete('/v1/vessel-classes/:id', {
+    schema: {
+      operationId: 'deleteVesselClass',
+      tags: ['vessels'],
+      summary: 'Delete the class of your own at the revision that If-Match names.',
+      params: Params,
+      response: {
+        204: { description: 'It is deleted.', type: 'null' },
+        ...problemResponses(400, 401, 403, 404, 409, 412, 428, 503),
+      },
+    },
+    handler: async (request, reply) => {
+      const { id } = request.params
+      refuseBuiltIn(id)
+      const expected = expectedOf(request)
+      const before = await service.store.current()
+      const record = before.findClass(id)
+      if (!record) throw unknownClass(id, before)
+      if (expected === 'none') throw revisionRequired(record.revision)
+      const written = await service.store.deleteClass(id, expected, authorOf(request, service))
+      writtenOr(written, expected, () => unknownClass(id, before))
+      await openView(service, reply)
+      return reply.code(204).send()
     },
   })
 }

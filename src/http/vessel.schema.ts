@@ -1,9 +1,10 @@
 import { z } from 'zod'
 import { HULLS, LOADINGS } from '../domain/vessel.ts'
-import { findVesselClass, VESSEL_CLASSES } from '../domain/vessel-classes.ts'
+import { findVesselClass, VESSEL_CLASSES, type VesselClass } from '../domain/vessel-classes.ts'
 import { Fault } from '../domain/fault.ts'
 import type { Vessel } from '../domain/vessel.ts'
 import { vesselOfClass, vesselOfDescription, type VesselFigures } from '../domain/vessel-of.ts'
+import type { Registry } from '../store/registry.ts'
 import { crossCheck } from './cross-check.ts'
 import { checkSpeed, figure, Id, Label, speedFields, speedOf } from './fields.ts'
 import { nearestFirst } from './nearest.ts'
@@ -70,9 +71,18 @@ function figuresOf(wire: VesselWire): VesselFigures {
   }
 }
 
+/** Where classes of the caller's own are found. */
+export type Classes = Pick<Registry, 'findClass' | 'classes'>
+
+/** A built-in class, or one of the caller's own. */
+export function findAnyClass(id: string, registry: Classes): VesselClass | undefined {
+  return findVesselClass(id) ?? registry.findClass(id)?.vesselClass
+}
+
 /** Fault for a class that does not exist, with the nearest that does. */
-export function unknownClass(id: string): Fault {
-  const [nearest = ''] = nearestFirst(id, CLASS_IDS)
+export function unknownClass(id: string, registry: Classes): Fault {
+  const own = registry.classes().map((record) => record.id)
+  const [nearest = ''] = nearestFirst(id, [...CLASS_IDS, ...own])
   return new Fault('vessel-class-not-found', `There is no vessel class ${id}; the nearest is ${nearest}`, {
     facts: { vessel_class: id, nearest },
   })
@@ -83,7 +93,7 @@ export function unknownClass(id: string): Fault {
  *
  * @throws Fault `vessel-class-not-found`
  */
-export function toVessel(wire: VesselWire): Vessel {
+export function toVessel(wire: VesselWire, registry: Classes): Vessel {
   const figures = figuresOf(wire)
   if (wire.class === undefined) {
     const { length, beam, draught, hull } = figures
@@ -92,7 +102,7 @@ export function toVessel(wire: VesselWire): Vessel {
     }
     return vesselOfDescription({ ...figures, length, beam, draught, hull })
   }
-  const vesselClass = findVesselClass(wire.class)
-  if (!vesselClass) throw unknownClass(wire.class)
+  const vesselClass = findAnyClass(wire.class, registry)
+  if (!vesselClass) throw unknownClass(wire.class, registry)
   return vesselOfClass(vesselClass, wire.loading ?? 'laden', figures)
 }

@@ -62,10 +62,13 @@ export interface Revision {
 /** Which revision a write expects: a number, any existing one, or none at all. */
 export type Expected = number | 'any' | 'none'
 
-/** What became of a write. `stale` and `missing` leave everything as it was. */
+/**
+ * What became of a write. `stale` and `missing` leave everything as it was; something that exists where none was
+ * expected is `stale` too.
+ */
 export type Written =
   | {
-      readonly outcome: 'created' | 'updated' | 'unchanged'
+      readonly outcome: 'created' | 'updated' | 'unchanged' | 'deleted'
       readonly revision: number
       readonly registryRevision: number
     }
@@ -79,8 +82,8 @@ export interface Imported {
   readonly registryRevision: number
 }
 
-export const ROLES = ['read', 'write', 'publish'] as const
-export type Role = (typeof ROLES)[number]
+/** Each allows what the one before allows, and more. */
+export type Role = 'read' | 'write' | 'publish'
 
 export interface AccessKey {
   readonly name: string

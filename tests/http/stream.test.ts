@@ -1,5 +1,4 @@
 import { once } from 'node:events'
-import { readFileSync } from 'node:fs'
 import { request as httpRequest, type ClientRequest, type IncomingMessage } from 'node:http'
 import type { AddressInfo } from 'node:net'
 import { setTimeout as wait } from 'node:timers/promises'
@@ -12,7 +11,7 @@ import { readConfig } from '../../src/config.ts'
 import type { App } from '../../src/http/app-type.ts'
 import { serviceRoutes } from '../../src/http/service-routes.ts'
 import { serviceParts } from '../../src/parts.ts'
-import { fileRegistry, type SegmentFeature } from '../../src/store/file-registry.ts'
+import type { Registry } from '../../src/store/registry.ts'
 import { PLAIN, REQUESTS } from '../support/requests.ts'
 import {
   buildService,
@@ -422,20 +421,19 @@ const REGISTRY_LINE = `${JSON.stringify({ segment: { id: 'harrow-long-pound' }, 
 
 /** The service with a registry that counts what it is asked. */
 function countingService(): { service: App; read: () => number } {
-  const file = new URL('../../openapi/examples/harrowmere-navigation.geojson', import.meta.url)
-  const { features } = JSON.parse(readFileSync(file, 'utf8')) as { features: SegmentFeature[] }
-  const registry = fileRegistry(features, '2026-12-01T00:00:00Z')
+  const { service: made, ...parts } = serviceParts(readConfig({ DATABASE_URL: 'sqlite::memory:' }))
   let count = 0
-  const counting = {
+  const counting = (registry: Registry): Registry => ({
     ...registry,
-    findSegment: (id: string) => {
+    findSegment: (id) => {
       count += 1
       return registry.findSegment(id)
     },
-  }
+  })
+  const store = { ...made.store, current: async () => counting(await made.store.current()) }
   const service = buildApp({
-    ...serviceParts(readConfig({})),
-    routes: serviceRoutes({ registry: counting, serviceVersion: '0' }),
+    ...parts,
+    routes: serviceRoutes({ ...made, store }),
     log: pino({ level: 'silent' }),
   })
   onTestFinished(async () => {

@@ -23,14 +23,20 @@ const HTTP_PACKAGES = [
 const TABLE: Readonly<Record<string, Rule>> = {
   domain: { src: [], packages: [] },
   hydro: { src: [], packages: [] },
-  geo: { src: ['domain'], packages: ['@turf/turf'] },
+  geo: { src: ['domain'], packages: ['@turf/*'] },
   advisory: { src: ['domain', 'hydro'], packages: [] },
-  store: { src: ['domain', 'geo'], packages: ['node:*'] },
-  http: { src: ['domain', 'advisory', 'store (types)'], packages: HTTP_PACKAGES },
+  report: { src: ['domain', 'advisory', 'store (types)'], packages: ['d3-*'] },
+  store: { src: ['domain', 'geo'], packages: ['kysely', 'better-sqlite3', 'pg', 'node:*'] },
+  access: { src: ['domain', 'store (types)'], packages: ['node:*'] },
+  http: {
+    src: ['domain', 'geo', 'advisory', 'report', 'access', 'store (types)'],
+    packages: HTTP_PACKAGES,
+  },
   'config.ts': { src: [], packages: ['zod'] },
   'app.ts': { src: ['http', 'config.ts (types)'], packages: ['fastify'] },
   'parts.ts': { src: ['*'], packages: ['node:*'] },
   'server.ts': { src: ['*'], packages: ['*'] },
+  'keys.ts': { src: ['*'], packages: ['node:*'] },
 }
 
 interface Import {
@@ -90,9 +96,13 @@ test.each([
   ['advisory/a.ts', "export * from '../http/b.ts'"],
   ['advisory/a.ts', "import {\n  b,\n} from 'zod'"],
   ['http/a.ts', "import { b } from '../store/b.ts'"],
-  ['http/a.ts', "import { b } from '../geo/b.ts'"],
-  ['http/a.ts', "import type { b } from '../geo/b.ts'"],
+  ['http/a.ts', "import { b } from '../hydro/b.ts'"],
+  ['http/a.ts', "import type { b } from '../hydro/b.ts'"],
+  ['report/a.ts', "import { b } from '../http/b.ts'"],
   ['http/a.ts', "import { b } from 'pino'"],
+  ['http/a.ts', "import { b } from 'kysely'"],
+  ['access/a.ts', "import { b } from '../store/b.ts'"],
+  ['store/a.ts', "import { b } from '../access/b.ts'"],
   ['app.ts', "import { b } from './config.ts'"],
   ['utils/a.ts', ''],
 ])('in %s the line %j breaks the table', (path, text) => {
@@ -103,6 +113,8 @@ test.each([
   ['hydro/waves/a.ts', "import { b } from '../b.ts'"],
   ['http/a.ts', "import type { b } from '../store/b.ts'"],
   ['http/a.ts', "import b from '@fastify/swagger'\nimport { c } from 'csv-parse/sync'\nimport 'node:zlib'"],
+  ['store/a.ts', "import pg from 'pg'\nimport { b } from 'kysely'"],
+  ['access/a.ts', "import type { b } from '../store/b.ts'"],
   ['app.ts', "import type { b } from './config.ts'"],
   ['server.ts', "import { b } from './geo/b.ts'\nimport { c } from 'pino'"],
 ])('in %s the line %j keeps to the table', (path, text) => {

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest'
-import { PROBLEM_CODES, PROBLEMS } from '../../src/http/problems.ts'
+import { PROBLEM_CODES, PROBLEMS } from '../../src/http/problem-table.ts'
 import { sources } from '../support/sources.ts'
 import { buildTestApp } from '../support/app.ts'
 

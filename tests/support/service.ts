@@ -24,12 +24,15 @@ export interface Service {
  * @param whenDone  takes what closes it: the end of a test, or of a file with `afterAll`
  */
 export function buildService(whenDone: (close: () => Promise<void>) => void = onTestFinished): Service {
-  const app = buildApp({ ...serviceParts(readConfig({})), log: pino({ level: 'silent' }) })
+  const app = buildApp({
+    ...serviceParts(readConfig({ DATABASE_URL: 'sqlite::memory:' })),
+    log: pino({ level: 'silent' }),
+  })
   const replies = new Map<string, z.ZodType>()
   app.addHook('onRoute', ({ method, url, schema }) => {
     const answer = (schema?.response as Record<number, unknown> | undefined)?.[200]
-    const lines = (answer as { content?: Record<string, { schema?: unknown }> } | undefined)?.content
-    const reply = lines?.['application/x-ndjson']?.schema ?? answer
+    const forms = (answer as { content?: Record<string, { schema?: unknown }> } | undefined)?.content
+    const reply = forms?.['application/x-ndjson']?.schema ?? forms?.['application/json']?.schema ?? answer
     if (reply instanceof z.ZodType) for (const one of [method].flat()) replies.set(`${one} ${url}`, reply)
   })
   whenDone(async () => {

@@ -21,7 +21,7 @@ let app: App
 let url = ''
 
 beforeAll(async () => {
-  app = buildApp({ ...serviceParts(readConfig({})), log: pino({ level: 'silent' }) })
+  app = buildApp({ ...serviceParts(readConfig({ DATABASE_URL: 'sqlite::memory:' })), log: pino({ level: 'silent' }) })
   url = await app.listen({ host: '127.0.0.1', port: 0 })
 })
 

@@ -22,7 +22,7 @@ test('the service tells that it is alive and ready', async () => {
     service_version: '0.1.0',
     method_version: '1',
     registry_revision: 1,
-    database: 'none',
+    database: 'sqlite',
   })
 })
 

@@ -1,0 +1,30 @@
+import type { FastifyReply } from 'fastify'
+import type { Registry, Store } from '../store/registry.ts'
+
+/** What routes answer from. */
+export interface Service {
+  readonly store: Store
+  readonly serviceVersion: string
+  /** RFC 3339 UTC */
+  readonly now: () => string
+  /** ms in which a body that is read as a whole has to arrive */
+  readonly bodyTimeout: number
+}
+
+/** What one request is answered from: the registry does not change under it. */
+export interface View {
+  readonly registry: Registry
+  readonly serviceVersion: string
+}
+
+/** The registry as of now, for one request. */
+export async function viewOf({ store, serviceVersion }: Service): Promise<View> {
+  return { registry: await store.current(), serviceVersion }
+}
+
+/** The view of a request on the registry, whose revision its reply names. */
+export async function openView(service: Service, reply: FastifyReply): Promise<View> {
+  const view = await viewOf(service)
+  void reply.header('registry-revision', String(view.registry.revision))
+  return view
+}

@@ -1,0 +1,84 @@
+import { type Kysely, type Migration, Migrator, sql } from 'kysely'
+
+/** The schema of the database is one that this version does not know. */
+export class SchemaTooNew extends Error {
+  constructor(names: readonly string[]) {
+    super(
+      `The database was written by a newer version of the service (schema ${names.join(', ')}), which this version ` +
+        'would damage. Start the newer version, or set DATABASE_URL to another database.',
+    )
+    this.name = 'SchemaTooNew'
+  }
+}
+
+/** As of the first version; later ones are added below, never changed. */
+const registry: Migration = {
+  async up(db: Kysely<unknown>) {
+    await db.schema
+      .createTable('state')
+      .addColumn('id', 'integer', (column) => column.primaryKey().check(sql`id = 1`))
+      .addColumn('registry_revision', 'integer', (column) => column.notNull())
+      .addColumn('access_revision', 'integer', (column) => column.notNull())
+      .execute()
+    await sql`insert into state (id, registry_revision, access_revision) values (1, 0, 0)`.execute(db)
+    await createItems(db, 'segments', 'segment_revisions')
+    await createItems(db, 'vessel_classes', 'vessel_class_revisions')
+    await db.schema
+      .createTable('access_keys')
+      .addColumn('name', 'text', (column) => column.primaryKey().notNull())
+      .addColumn('role', 'text', (column) => column.notNull())
+      .addColumn('hash', 'text', (column) => column.notNull().unique())
+      .addColumn('created', 'text', (column) => column.notNull())
+      .addColumn('expires', 'text')
+      .addColumn('revoked', 'text')
+      .execute()
+  },
+}
+
+async function createItems(db: Kysely<unknown>, items: string, revisions: string): Promise<void> {
+  await db.schema
+    .createTable(items)
+    // SQLite lets a primary key be null unless told otherwise
+    .addColumn('id', 'text', (column) => column.primaryKey().notNull())
+    .addColumn('revision', 'integer', (column) => column.notNull())
+    .addColumn('changed_at', 'integer', (column) => column.notNull())
+    .addColumn('deleted', 'integer', (column) => column.notNull())
+    .addColumn('updated', 'text', (column) => column.notNull())
+    .addColumn('content', 'text', (column) => column.notNull())
+    .execute()
+  await db.schema.createIndex(`${items}_changed_at`).on(items).column('changed_at').execute()
+  await db.schema
+    .createTable(revisions)
+    .addColumn('id', 'text', (column) => column.notNull().references(`${items}.id`))
+    .addColumn('revision', 'integer', (column) => column.notNull())
+    .addColumn('registry_revision', 'integer', (column) => column.notNull())
+    .addColumn('action', 'text', (column) => column.notNull())
+    .addColumn('time', 'text', (column) => column.notNull())
+    .addColumn('key', 'text')
+    .addColumn('changed', 'text', (column) => column.notNull())
+    .addColumn('content', 'text')
+    .addPrimaryKeyConstraint(`${revisions}_pkey`, ['id', 'revision'])
+    .execute()
+}
+
+/** In the order of their names. */
+const MIGRATIONS: Readonly<Record<string, Migration>> = { '001-registry': registry }
+
+/**
+ * Brings the schema up to date. On PostgreSQL it lets one replica in at a time; on SQLite the caller holds the lock.
+ *
+ * @throws SchemaTooNew
+ */
+export async function migrate(db: Kysely<unknown>): Promise<void> {
+  const provider = { getMigrations: () => Promise.resolve({ ...MIGRATIONS }) }
+  const { error } = (await new Migrator({ db, provider }).migrateToLatest()) as { error?: Error }
+  if (error === undefined) return
+  const unknown = await unknownMigrations(db).catch(() => [])
+  if (unknown.length > 0) throw new SchemaTooNew(unknown)
+  throw error
+}
+
+async function unknownMigrations(db: Kysely<unknown>): Promise<string[]> {
+  const { rows } = await sql<{ name: string }>`select name from kysely_migration order by name`.execute(db)
+  return rows.map(({ name }) => name).filter((name) => !(name in MIGRATIONS))
+}
