@@ -16,6 +16,13 @@ const DimensionsIn = z.strictObject({
   blaauw_coefficient: figure(0.05, 5, "A'' of blaauw-1984").optional(),
 })
 
+/** A speed as replies have it, so that a class that was read can be written back; of its figures one counts. */
+const ReplySpeed = z.strictObject({
+  mps: z.number().optional(),
+  kn: z.number().optional(),
+  kmh: figure(0.36, 144, 'km/h, which counts'),
+})
+
 /** Fields of a class at the edge, by the name they have inside. */
 export const FIELD_NAMES = {
   length: 'length_m',
@@ -28,7 +35,7 @@ export const FIELD_NAMES = {
   centralCoefficient: 'blaauw_coefficient',
 } as const satisfies Record<keyof ClassDimensions, string>
 
-/** A class of the caller's own, as it comes; what replies add is accepted and ignored. */
+/** A class of the caller's own, as it comes; what replies add is accepted. */
 export const VesselClassIn = z
   .strictObject({
     label: Label,
@@ -47,15 +54,15 @@ export const VesselClassIn = z
       20,
       'least speed through the water at which the rudder answers',
     ),
-    max_speed: z.unknown().optional().describe('of a reply, ignored'),
-    min_steerage_speed: z.unknown().optional().describe('of a reply, ignored'),
+    max_speed: ReplySpeed.optional().describe('of a reply; counts where max_speed_* is left out'),
+    min_steerage_speed: ReplySpeed.optional().describe('of a reply, likewise'),
     basis: z.record(z.string().max(100), z.enum(['standard', 'typical'])).optional(),
     source: Text.optional(),
   })
   .check(
     crossCheck((value, report) => {
-      checkSpeed(value, 'max_speed', true, report)
-      checkSpeed(value, 'min_steerage_speed', true, report)
+      checkSpeed(value, 'max_speed', value.max_speed === undefined, report)
+      checkSpeed(value, 'min_steerage_speed', value.min_steerage_speed === undefined, report)
     }),
   )
   .meta({ id: 'VesselClassInput', description: "A class of vessels of the caller's own." })
@@ -75,6 +82,10 @@ function toDimensions(wire: DimensionsWire): ClassDimensions {
   }
 }
 
+/** The speed that was given, else that of a reply, km/h. */
+const kmhOf = (given: number | undefined, replied: { readonly kmh: number } | undefined): number =>
+  given === undefined ? (replied?.kmh ?? NaN) : toKmh(given)
+
 /** The class that a caller writes under an id. */
 export function toVesselClass(id: string, wire: z.output<typeof VesselClassIn>): VesselClass {
   const names = Object.entries(FIELD_NAMES) as [VesselField & keyof ClassDimensions, string][]
@@ -87,8 +98,8 @@ export function toVesselClass(id: string, wire: z.output<typeof VesselClassIn>):
     isInlandMotorVessel: false,
     laden: toDimensions(laden),
     ...(empty && { empty: toDimensions(empty) }),
-    maxSpeedKmh: toKmh(speedOf(wire, 'max_speed') ?? NaN),
-    minSteerageSpeedKmh: toKmh(speedOf(wire, 'min_steerage_speed') ?? NaN),
+    maxSpeedKmh: kmhOf(speedOf(wire, 'max_speed'), wire.max_speed),
+    minSteerageSpeedKmh: kmhOf(speedOf(wire, 'min_steerage_speed'), wire.min_steerage_speed),
     standard: names.filter(([, name]) => wire.basis?.[name] === 'standard').map(([field]) => field),
     source: wire.source ?? 'given by the caller',
   }

@@ -47,13 +47,15 @@ const conditionsReply = ({ situation, direction }: Decision) => ({
 })
 
 function reproducibility(resolved: Resolved, context: ReplyContext) {
-  const { record } = resolved
+  const { record, classRevision } = resolved
+  const isOfRegistry = record !== undefined || classRevision !== undefined
   return {
     service_version: context.serviceVersion,
     method_version: METHOD_VERSION,
     input_hash: inputHash(resolved),
     segment_revision: record?.revision,
-    registry_revision: record && context.registryRevision,
+    vessel_class_revision: classRevision,
+    registry_revision: isOfRegistry ? context.registryRevision : undefined,
   }
 }
 

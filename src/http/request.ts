@@ -36,7 +36,13 @@ export type AdvisoryWire = z.output<typeof AdvisoryRequest>
 /** What a request rests on, and the registry segment it names. */
 export interface Resolved extends Inputs {
   readonly record?: SegmentRecord
+  /** of a class of the caller's own */
+  readonly classRevision?: number | undefined
 }
+
+/** Revision of a class that the registry holds; undefined for built-in classes and described vessels. */
+export const classRevisionOf = (id: string | undefined, registry: Registry): number | undefined =>
+  id === undefined ? undefined : registry.findClass(id)?.revision
 
 export function segmentNotFound(id: string, registry: Registry): Fault {
   const ids = registry.segments().map((segment) => segment.id)
@@ -115,6 +121,7 @@ export function resolve(wire: AdvisoryWire, registry: Registry): Resolved {
   return {
     ...resolveSegment(wire.segment, registry),
     vessel: toVessel(wire.vessel, registry),
+    classRevision: classRevisionOf(wire.vessel.class, registry),
     conditions: toConditions(wire.conditions ?? {}, registry),
     options: toOptions(wire.options ?? {}),
   }

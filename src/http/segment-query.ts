@@ -7,7 +7,7 @@ import type { SegmentFilter, SegmentRecord } from '../store/registry.ts'
 import { Id } from './fields.ts'
 import { SIGN_UNIT_NAMES, toConditions, toOptions } from './options.schema.ts'
 import { enumParameter, numberParameter } from './parameters.ts'
-import { refuseCalibration, segmentNotFound, segmentOf, type Resolved } from './request.ts'
+import { classRevisionOf, refuseCalibration, segmentNotFound, segmentOf, type Resolved } from './request.ts'
 import type { View } from './service.ts'
 import { toVessel } from './vessel.schema.ts'
 
@@ -80,6 +80,7 @@ export function askedOf(query: AdvisoryQuery, { registry }: View): Omit<Resolved
   const { vessel_class, loading, draught_m, direction, water_level_m, current_mps, sign_unit, sign_step } =
     query
   return {
+    classRevision: classRevisionOf(vessel_class, registry),
     vessel: toVessel(
       {
         class: vessel_class,

@@ -136,7 +136,7 @@ describe('a class of our own', () => {
   })
 
   test.each([
-    ['nothing', {}, ['#/dimensions required', '#/hull required', '#/max_speed_mps one-of', '#/min_steerage_speed_mps one-of', '#/name required']], // prettier-ignore
+    ['nothing', {}, ['# one-of', '# one-of', '#/dimensions required', '#/hull required', '#/name required']], // prettier-ignore
     ['a wrong hull', workboat({ hull: 'submarine' }), ['#/hull not-in-list']],
     ['an unknown field', workboat({ colour: 'red' }), ['#/colour unknown-field']],
     ['a negative beam', workboat({ dimensions: { laden: { ...LADEN, beam_m: -6 } } }), ['#/dimensions/laden/beam_m out-of-range']], // prettier-ignore
