@@ -31,11 +31,11 @@ export interface Uncalibrated {
 /** The answer in brief: what a row of a table holds. */
 export interface Brief {
   readonly decision: Decision
-  readonly byDirection?: Readonly<Record<Direction, Decision>>
-  readonly sign?: Sign
+  readonly byDirection?: Readonly<Record<Direction, Decision>> | undefined
+  readonly sign?: Sign | undefined
   /** at the recommendation; at minimum steerage when no speed is safe */
   readonly effects: Effects
-  readonly uncalibrated?: Uncalibrated
+  readonly uncalibrated?: Uncalibrated | undefined
   readonly cautions: readonly Caution[]
 }
 
@@ -44,7 +44,7 @@ export interface Advisory extends Brief {
   readonly criteria: readonly CriterionReport[]
   readonly waveMethods: readonly WaveReport[]
   readonly squatMethods: readonly SquatReport[]
-  readonly curve?: Curve
+  readonly curve?: Curve | undefined
   readonly assumptions: readonly Assumption[]
 }
 
@@ -133,12 +133,11 @@ export function adviseBriefly(
   const sign = main.outcome === 'no-safe-speed' ? undefined : signOfDecision(main)
   return {
     decision: main,
-    ...(byDirection && { byDirection }),
-    ...(sign && { sign }),
+    byDirection,
+    sign,
     effects,
-    ...(options.waveFactor !== undefined && {
-      uncalibrated: withoutFactor(segment, vessel, conditions, options),
-    }),
+    uncalibrated:
+      options.waveFactor === undefined ? undefined : withoutFactor(segment, vessel, conditions, options),
     cautions: [...cautionsAt(situation, effects, main.direction), ...decisionCautions(main, sign)],
   }
 }
@@ -149,11 +148,16 @@ export function advise(segment: Segment, vessel: Vessel, conditions: Conditions,
   const { decision } = brief
   const speed = speedOfFigures(decision)
   return {
-    ...brief,
+    decision,
+    byDirection: brief.byDirection,
+    sign: brief.sign,
+    effects: brief.effects,
+    uncalibrated: brief.uncalibrated,
+    cautions: brief.cautions,
     criteria: criterionReports(decision, speed),
     waveMethods: waveReports(decision.situation, speed),
     squatMethods: squatReports(decision.situation, speed),
-    ...(options.hasCurve && { curve: speedCurve(decision) }),
+    curve: options.hasCurve ? speedCurve(decision) : undefined,
     assumptions: assumptionsOf(decision.situation),
   }
 }

@@ -13,8 +13,8 @@ import { problemResponses } from './problems.ts'
 import { toPair } from './reply-parts.ts'
 import { toAdvisoryReply, toAssessmentReply } from './reply.ts'
 import { AdvisoryReply, AssessmentReply, InverseReply, SensitivityReply } from './reply.schema.ts'
-import { ADVISORY_FIELDS, AdvisoryRequest, resolve } from './request.ts'
-import { viewOf, type Service, type View } from './service.ts'
+import { ADVISORY_FIELDS, AdvisoryRequest, namesRegistry, resolve, type AdvisoryWire } from './request.ts'
+import { viewOf, viewWithoutRegistry, type Service, type View } from './service.ts'
 import { UncertaintyFields, toHalves } from './uncertainty.schema.ts'
 
 const SAILED_FIELDS = {
@@ -100,6 +100,9 @@ export function advisoryRoutes(service: Service): Routes {
   }
 }
 
+const viewFor = (body: AdvisoryWire, service: Service): View | Promise<View> =>
+  namesRegistry(body) ? viewOf(service) : viewWithoutRegistry(service)
+
 const contextOf = ({ registry, serviceVersion }: View) => ({
   serviceVersion,
   registryRevision: registry.revision,
@@ -120,7 +123,7 @@ function addAdvisory(app: App, service: Service): void {
     handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
-      const view = await viewOf(service)
+      const view = await viewFor(body, service)
       const resolved = resolve(body, view.registry)
       const { segment, vessel, conditions, options } = resolved
       const advisory = advise(segment, vessel, conditions, options)
@@ -142,7 +145,7 @@ function addEffects(app: App, service: Service): void {
     handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
-      const view = await viewOf(service)
+      const view = await viewFor(body, service)
       const resolved = resolve(body, view.registry)
       const { segment, vessel, conditions, options } = resolved
       const assessment = assess(segment, vessel, conditions, options, toSailed(body))
@@ -165,7 +168,7 @@ function addSensitivity(app: App, service: Service): void {
     handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
-      const view = await viewOf(service)
+      const view = await viewFor(body, service)
       const { base, inputs } = sensitivityOf(resolve(body, view.registry), toHalves(body.uncertainty))
       return {
         ...labelled(body.label),
@@ -189,7 +192,7 @@ function addInverse(app: App, service: Service): void {
     handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
-      const view = await viewOf(service)
+      const view = await viewFor(body, service)
       const inverse = inverseOf(resolve(body, view.registry), toSailed(body), body.vary)
       return { ...labelled(body.label), ...toInverseReply(inverse) }
     },

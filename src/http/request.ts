@@ -2,6 +2,7 @@ import { z } from 'zod'
 import type { Inputs } from '../advisory/uncertainty.ts'
 import { Fault, type FaultItem } from '../domain/fault.ts'
 import type { Segment } from '../domain/segment.ts'
+import { findVesselClass } from '../domain/vessel-classes.ts'
 import type { Registry, SegmentRecord } from '../store/registry.ts'
 import { Label } from './fields.ts'
 import { nearestFirst } from './nearest.ts'
@@ -109,6 +110,12 @@ export function refuseCalibration(segment: SegmentWire, options: OptionsWire | u
   const id = options?.calibration_id === undefined ? segment.calibration_id : options.calibration_id
   if (id === undefined || id === null || options?.wave_factor !== undefined) return
   throw new Fault('calibration-not-found', `There is no calibration ${id}`, { facts: { calibration_id: id } })
+}
+
+/** Whether a request names a segment of the registry, or a class that is not built in. */
+export function namesRegistry({ segment, vessel, conditions }: AdvisoryWire): boolean {
+  const classes = [vessel.class, conditions?.meeting_vessel?.class]
+  return segment.id !== undefined || classes.some((id) => id !== undefined && !findVesselClass(id))
 }
 
 /**

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import type { FastifyReply, FastifyRequest } from 'fastify'
+import { LRUCache } from 'lru-cache'
 import { z } from 'zod'
 import { advise } from '../advisory/advise.ts'
 import { METHOD_VERSION } from '../advisory/catalogue.ts'
@@ -7,6 +7,7 @@ import { Fault } from '../domain/fault.ts'
 import type { App, Routes } from './app-type.ts'
 import { SegmentCollection, SegmentFeature, toFeature } from './feature.schema.ts'
 import { inputHash } from './input-hash.ts'
+import { toFiniteJson } from './json.ts'
 import { list, listOf } from './list.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { PAGE_FIELDS, slice } from './paging.ts'
@@ -61,18 +62,32 @@ export function etagOf(resolved: Resolved, serviceVersion: string): string {
   return `"${createHash('sha256').update(content).digest('base64url').slice(0, 27)}"`
 }
 
-function adviseSegment(
-  request: FastifyRequest,
-  reply: FastifyReply,
-  resolved: Resolved,
+/** An answer as it went out. */
+interface Answered {
+  readonly etag: string
+  readonly text: string
+}
+
+/** Answers that are kept, for boards that ask the same again and again; each is some 15 KB. */
+const KEPT_ANSWERS = 1000
+
+/** The answer to a query on a segment: one that is kept while the registry is as it was, or a new one. */
+function answerTo(
+  url: string,
+  resolve: () => Resolved,
   view: View,
-): unknown {
-  const etag = etagOf(resolved, view.serviceVersion)
-  void reply.header('etag', etag).header('cache-control', 'private, no-cache')
-  if (isKnown(request, etag)) return notModified(reply)
+  kept: LRUCache<string, Answered>,
+): Answered {
+  const key = `${view.registry.revision} ${url}`
+  const known = kept.get(key)
+  if (known) return known
+  const resolved = resolve()
   const { segment, vessel, conditions, options } = resolved
   const context = { serviceVersion: view.serviceVersion, registryRevision: view.registry.revision }
-  return toAdvisoryReply(advise(segment, vessel, conditions, options), resolved, context, {})
+  const reply = toAdvisoryReply(advise(segment, vessel, conditions, options), resolved, context, {})
+  const answered = { etag: etagOf(resolved, view.serviceVersion), text: toFiniteJson(reply) }
+  kept.set(key, answered)
+  return answered
 }
 
 /** The segments that the service knows, their advisories and their history. */
@@ -133,6 +148,7 @@ function addSegment(app: App, service: Service): void {
 }
 
 function addAdvisory(app: App, service: Service): void {
+  const kept = new LRUCache<string, Answered>({ max: KEPT_ANSWERS })
   app.get('/v1/segments/:id/advisory', {
     schema: {
       operationId: 'getSegmentAdvisory',
@@ -147,8 +163,10 @@ function addAdvisory(app: App, service: Service): void {
     handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const view = await openView(service, reply)
-      const record = recordOf(request.params.id, view)
-      return adviseSegment(request, reply, resolveQuery(record, request.query, view), view)
+      const resolve = () => resolveQuery(recordOf(request.params.id, view), request.query, view)
+      const { etag, text } = answerTo(request.url, resolve, view, kept)
+      void reply.header('etag', etag).header('cache-control', 'private, no-cache')
+      return isKnown(request, etag) ? notModified(reply) : reply.send(text)
     },
   })
 }

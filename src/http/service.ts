@@ -22,6 +22,20 @@ export async function viewOf({ store, serviceVersion }: Service): Promise<View> 
   return { registry: await store.current(), serviceVersion }
 }
 
+/** A request that names nothing of the registry need not look at it. */
+export const viewWithoutRegistry = ({ serviceVersion }: Service): View => ({
+  registry: EMPTY,
+  serviceVersion,
+})
+
+const EMPTY: Registry = {
+  revision: 0,
+  findSegment: () => undefined,
+  segments: () => [],
+  findClass: () => undefined,
+  classes: () => [],
+}
+
 /** The view of a request on the registry, whose revision its reply names. */
 export async function openView(service: Service, reply: FastifyReply): Promise<View> {
   const view = await viewOf(service)

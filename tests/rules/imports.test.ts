@@ -13,6 +13,7 @@ interface Rule {
 const HTTP_PACKAGES = [
   'fastify',
   '@fastify/*',
+  'lru-cache',
   'zod',
   'csv-*',
   'fastest-levenshtein',
