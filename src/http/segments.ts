@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto'
+import type { FastifyReply, FastifyRequest } from 'fastify'
 import { LRUCache } from 'lru-cache'
 import { z } from 'zod'
 import { advise } from '../advisory/advise.ts'
@@ -25,7 +26,7 @@ import {
   SegmentParams,
   toFilter,
 } from './segment-query.ts'
-import { openView, type Service, type View } from './service.ts'
+import { openView, viewOf, type Service, type View } from './service.ts'
 
 const ListQuery = z.strictObject({
   ...FILTER_FIELDS,
@@ -71,23 +72,34 @@ interface Answered {
 /** Answers that are kept, for boards that ask the same again and again; each is some 15 KB. */
 const KEPT_ANSWERS = 1000
 
-/** The answer to a query on a segment: one that is kept while the registry is as it was, or a new one. */
-function answerTo(
-  url: string,
-  resolve: () => Resolved,
-  view: View,
-  kept: LRUCache<string, Answered>,
-): Answered {
-  const key = `${view.registry.revision} ${url}`
-  const known = kept.get(key)
-  if (known) return known
-  const resolved = resolve()
+type Kept = LRUCache<string, Answered>
+
+/** What a kept answer is found by: the state of the registry, the query, and the form that is asked for. */
+const keyOf = (request: FastifyRequest, { registry }: View): string =>
+  `${registry.revision} ${request.headers.accept ?? ''} ${request.url}`
+
+function answerTo(resolved: Resolved, view: View): Answered {
   const { segment, vessel, conditions, options } = resolved
   const context = { serviceVersion: view.serviceVersion, registryRevision: view.registry.revision }
   const reply = toAdvisoryReply(advise(segment, vessel, conditions, options), resolved, context, {})
-  const answered = { etag: etagOf(resolved, view.serviceVersion), text: toFiniteJson(reply) }
-  kept.set(key, answered)
-  return answered
+  return { etag: etagOf(resolved, view.serviceVersion), text: toFiniteJson(reply) }
+}
+
+function sendAnswer(request: FastifyRequest, reply: FastifyReply, { etag, text }: Answered): FastifyReply {
+  void reply.header('etag', etag).header('cache-control', 'private, no-cache')
+  return isKnown(request, etag) ? notModified(reply) : reply.send(text)
+}
+
+/** Answers a query that was answered before while the registry is as it was: it needs no second check. */
+function answerKept(service: Service, kept: Kept) {
+  return async (request: FastifyRequest, reply: FastifyReply): Promise<FastifyReply | undefined> => {
+    const view = await viewOf(service)
+    const known = kept.get(keyOf(request, view))
+    if (!known) return undefined
+    negotiate(request, reply, ['json'])
+    void reply.header('registry-revision', String(view.registry.revision))
+    return sendAnswer(request, reply, known)
+  }
 }
 
 /** The segments that the service knows, their advisories and their history. */
@@ -148,8 +160,9 @@ function addSegment(app: App, service: Service): void {
 }
 
 function addAdvisory(app: App, service: Service): void {
-  const kept = new LRUCache<string, Answered>({ max: KEPT_ANSWERS })
+  const kept: Kept = new LRUCache({ max: KEPT_ANSWERS })
   app.get('/v1/segments/:id/advisory', {
+    onRequest: answerKept(service, kept),
     schema: {
       operationId: 'getSegmentAdvisory',
       tags: ['segments'],
@@ -163,10 +176,10 @@ function addAdvisory(app: App, service: Service): void {
     handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const view = await openView(service, reply)
-      const resolve = () => resolveQuery(recordOf(request.params.id, view), request.query, view)
-      const { etag, text } = answerTo(request.url, resolve, view, kept)
-      void reply.header('etag', etag).header('cache-control', 'private, no-cache')
-      return isKnown(request, etag) ? notModified(reply) : reply.send(text)
+      const resolved = resolveQuery(recordOf(request.params.id, view), request.query, view)
+      const answered = answerTo(resolved, view)
+      kept.set(keyOf(request, view), answered)
+      return sendAnswer(request, reply, answered)
     },
   })
 }
