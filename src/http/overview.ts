@@ -6,12 +6,11 @@ import { overviewPage } from '../report/overview.ts'
 import type { Routes } from './app-type.ts'
 import { Id } from './fields.ts'
 import { answersOf } from './layer.ts'
-import { VARY } from './negotiate.ts'
 import { SIGN_UNIT_NAMES } from './options.schema.ts'
 import { enumParameter, numberParameter } from './parameters.ts'
+import { sendPage } from './page.ts'
 import { problemResponses } from './problems.ts'
 import { askedOf } from './segment-query.ts'
-import { PAGE_POLICY } from './segment-views.ts'
 import { openView, type Service } from './service.ts'
 
 /** What the page shows before anyone chooses. */
@@ -58,12 +57,7 @@ export function overviewRoutes(service: Service): Routes {
           classes: [...VESSEL_CLASSES, ...own].map(({ id, name }) => ({ id, name })),
           serviceVersion: view.serviceVersion,
         })
-        return reply
-          .header('content-security-policy', PAGE_POLICY)
-          .header('cache-control', 'private, no-cache')
-          .header('vary', VARY)
-          .type('text/html; charset=utf-8')
-          .send(page)
+        return sendPage(reply, page)
       },
     })
   }

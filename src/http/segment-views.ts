@@ -7,9 +7,10 @@ import { segmentSheet } from '../report/sheet.ts'
 import { speedCurveSvg } from '../report/speed-curve.ts'
 import type { App, Routes } from './app-type.ts'
 import { inputHash } from './input-hash.ts'
-import { formatParameter, negotiate, VARY } from './negotiate.ts'
+import { formatParameter, negotiate } from './negotiate.ts'
 import { integerParameter } from './parameters.ts'
 import { isKnown, notModified } from './preconditions.ts'
+import { sendPage } from './page.ts'
 import { problemResponses } from './problems.ts'
 import { SegmentCurveReply } from './reply.schema.ts'
 import { toSegmentCurveReply } from './reply.ts'
@@ -23,10 +24,6 @@ import {
 } from './segment-query.ts'
 import { etagOf } from './segments.ts'
 import { openView, type Service, type View } from './service.ts'
-
-/** Pages bring everything with them and run nothing. */
-export const PAGE_POLICY =
-  "default-src 'none'; style-src 'unsafe-inline'; img-src data:; form-action 'self'; frame-ancestors 'self'"
 
 const adviseAll = ({ segment, vessel, conditions, options }: Resolved): Advisory =>
   advise(segment, vessel, conditions, options)
@@ -124,12 +121,7 @@ function addSheet(app: App, service: Service): void {
         inputHash: inputHash(asked),
         made: service.now(),
       })
-      return reply
-        .header('content-security-policy', PAGE_POLICY)
-        .header('cache-control', 'private, no-cache')
-        .header('vary', VARY)
-        .type('text/html; charset=utf-8')
-        .send(page)
+      return sendPage(reply, page)
     },
   })
 }
