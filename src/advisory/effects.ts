@@ -3,7 +3,7 @@ import { FRESH_WATER_DENSITY, SEA_WATER_DENSITY } from '../hydro/constants.ts'
 import { waveEnergy } from '../hydro/energy.ts'
 import { lengthFroudeNumber } from '../hydro/froude.ts'
 import { frontWaveHeight, meanDrawdown } from '../hydro/primary-wave.ts'
-import { firstArrival, wakeAt, type Wake } from '../hydro/wedge.ts'
+import { cuspPeriodAt, firstArrival, wakeAt, type Wake } from '../hydro/wedge.ts'
 import { bankWave } from './criteria/bank-wave.ts'
 import { bankDrawdown, bankReturnCurrent, bankSternWave } from './primary.ts'
 import { regimeAt, type Regime } from './regime.ts'
@@ -46,18 +46,30 @@ export interface Effects {
   readonly banks: readonly [BankEffects, BankEffects]
 }
 
+const densityOf = ({ setting }: Situation): number =>
+  setting.isInland ? FRESH_WATER_DENSITY : SEA_WATER_DENSITY
+
+/** Energy of the secondary waves at both banks alone, as in `effectsAt`, J per metre of crest; NaN where it is unknown. */
+export function waveEnergies(situation: Situation, speed: number): readonly [number, number] {
+  const { distances, depth } = situation.section
+  const period = cuspPeriodAt(speed, depth)
+  const density = densityOf(situation)
+  const at = (distance: number) =>
+    waveEnergy(secondaryWave(situation, speed, distance).height, period, density)
+  return [at(distances[0]), at(distances[1])]
+}
+
 function bankEffects(situation: Situation, index: 0 | 1, speed: number, wake: Wake): BankEffects {
-  const { isConfined, isInland } = situation.setting
+  const { isConfined } = situation.setting
   const distance = situation.section.distances[index]
   const secondary = secondaryWave(situation, speed, distance).height
-  const density = isInland ? FRESH_WATER_DENSITY : SEA_WATER_DENSITY
   return {
     side: situation.segment.banks[index].side,
     distance,
     waveHeight: bankWave(situation, index, speed).height,
     drawdown: isConfined ? bankDrawdown(situation, index, speed) : NaN,
     returnCurrent: isConfined ? bankReturnCurrent(situation, index, speed) : NaN,
-    waveEnergy: waveEnergy(secondary, wake.period, density),
+    waveEnergy: waveEnergy(secondary, wake.period, densityOf(situation)),
     firstArrival: firstArrival(distance, speed, wake.halfAngle),
   }
 }

@@ -5,6 +5,8 @@ import { layerRoutes } from './layer.ts'
 import { matrixRoutes } from './matrix.ts'
 import { methodRoutes } from './methods.ts'
 import { overviewRoutes } from './overview.ts'
+import { passageColumnRoutes } from './passage-columns.ts'
+import { passageRoutes } from './passages.ts'
 import { segmentImportRoutes } from './segment-import.ts'
 import { segmentViewRoutes } from './segment-views.ts'
 import { segmentWriteRoutes } from './segment-writes.ts'
@@ -22,6 +24,8 @@ export function serviceRoutes(service: Service): Routes[] {
     segmentViewRoutes(service),
     segmentWriteRoutes(service),
     segmentImportRoutes(service),
+    passageRoutes(service),
+    passageColumnRoutes,
     layerRoutes(service),
     vesselClassRoutes(service),
     methodRoutes,

@@ -24,13 +24,14 @@ const HTTP_PACKAGES = [
 const TABLE: Readonly<Record<string, Rule>> = {
   domain: { src: [], packages: [] },
   hydro: { src: [], packages: [] },
-  geo: { src: ['domain'], packages: ['@turf/*'] },
+  geo: { src: ['domain'], packages: ['@turf/*', 'flatbush'] },
   advisory: { src: ['domain', 'hydro'], packages: [] },
+  passages: { src: ['domain', 'hydro', 'geo', 'advisory'], packages: ['d3-array'] },
   report: { src: ['domain', 'advisory', 'store (types)'], packages: ['d3-*'] },
   store: { src: ['domain', 'geo'], packages: ['kysely', 'better-sqlite3', 'pg', 'node:*'] },
   access: { src: ['domain', 'store (types)'], packages: ['node:*'] },
   http: {
-    src: ['domain', 'geo', 'advisory', 'report', 'access', 'store (types)'],
+    src: ['domain', 'geo', 'advisory', 'passages', 'report', 'access', 'store (types)'],
     packages: HTTP_PACKAGES,
   },
   'config.ts': { src: [], packages: ['zod'] },

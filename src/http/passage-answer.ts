@@ -1,0 +1,121 @@
+import type { Finding, PassageCheck } from '../passages/check.ts'
+import type { PassageEvent } from '../passages/events.ts'
+import type { LogRow } from '../passages/position-report.ts'
+import { csvRow, type CsvCell } from './csv-write.ts'
+import { toFiniteJson } from './json.ts'
+import { summaryParts, toEventRow, toReportRow } from './passage-lines.ts'
+import {
+  EVENT_COLUMN_NAMES,
+  GROUP_COLUMN_NAMES,
+  REPORT_COLUMN_NAMES,
+  type GroupRow,
+  type SummaryWire,
+} from './passages.schema.ts'
+
+/** A log as it is read. */
+export interface Log {
+  readonly rows: AsyncIterable<readonly LogRow[]>
+  /** columns that no field has the name of; known when the log is read */
+  readonly ignoredColumns: () => readonly string[]
+}
+
+export interface AnswerSettings {
+  readonly format: 'ndjson' | 'csv'
+  readonly detail: 'reports' | 'events' | 'summary'
+  readonly about: Pick<SummaryWire, 'parameters' | 'reproducibility'>
+}
+
+/** Rows that are checked before other requests have their turn: some 10 ms of work. */
+const ROWS_AT_ONCE = 250
+/** Characters that are handed on together. */
+const PIECE = 32_768
+
+const jsonLine = (type: string, value: object): string => `${toFiniteJson({ type, ...value })}\n`
+
+function csvLine<Column extends string>(
+  columns: readonly Column[],
+  row: Readonly<Record<Column, CsvCell>>,
+): string {
+  return csvRow(columns.map((column) => row[column]))
+}
+
+/** A histogram in a cell: its counts, joined as every list is. */
+const groupCells = ({ histogram_kn, ...group }: GroupRow): Record<keyof GroupRow, CsvCell> => ({
+  ...group,
+  histogram_kn: histogram_kn.counts.map(String),
+})
+
+const COLUMNS = {
+  reports: REPORT_COLUMN_NAMES,
+  events: EVENT_COLUMN_NAMES,
+  summary: GROUP_COLUMN_NAMES,
+} as const
+
+/** How the parts of an answer are written: one table as CSV, or every kind of line. */
+interface Writers {
+  readonly head: string
+  readonly report: (finding: Finding) => string
+  readonly event: (event: PassageEvent) => string
+}
+
+const NOTHING = (): string => ''
+
+function writersOf({ format, detail }: AnswerSettings): Writers {
+  if (format === 'csv') {
+    return {
+      head: csvRow(COLUMNS[detail]),
+      report:
+        detail === 'reports' ? (finding) => csvLine(REPORT_COLUMN_NAMES, toReportRow(finding)) : NOTHING,
+      event: detail === 'events' ? (event) => csvLine(EVENT_COLUMN_NAMES, toEventRow(event)) : NOTHING,
+    }
+  }
+  return {
+    head: '',
+    report: detail === 'reports' ? (finding) => jsonLine('report', toReportRow(finding)) : NOTHING,
+    event: detail === 'summary' ? NOTHING : (event) => jsonLine('event', toEventRow(event)),
+  }
+}
+
+function ending(check: PassageCheck, log: Log, { format, detail, about }: AnswerSettings): string {
+  const { read, by_status, rejected, ...totals } = summaryParts(check.summary())
+  if (format === 'csv') {
+    if (detail !== 'summary') return ''
+    return totals.groups.map((group) => csvLine(GROUP_COLUMN_NAMES, groupCells(group))).join('')
+  }
+  const { from, to, ...rest } = totals
+  const reports = { read, by_status, rejected, ignored_columns: [...log.ignoredColumns()] }
+  return jsonLine('summary', { complete: true, from, to, reports, ...rest, ...about })
+}
+
+/**
+ * The answer to a log, piece by piece as it is read; with events or the summary only, nothing before the log has ended.
+ * Ending it early ends the reading.
+ */
+export async function* passageAnswer(
+  log: Log,
+  check: PassageCheck,
+  settings: AnswerSettings,
+): AsyncGenerator<string> {
+  const write = writersOf(settings)
+  const isHeld = settings.detail !== 'reports'
+  let text = write.head
+  let taken = 0
+  for await (const rows of log.rows) {
+    for (const row of rows) {
+      text += write.report(check.take(row))
+      for (const event of check.takeEvents()) text += write.event(event)
+      taken += 1
+      if (taken % ROWS_AT_ONCE === 0) await new Promise(setImmediate)
+      if (isHeld || text.length < PIECE) continue
+      yield text
+      text = ''
+    }
+    // what is made is not kept back until more of the log comes
+    if (isHeld || text === '') continue
+    yield text
+    text = ''
+  }
+  check.end()
+  for (const event of check.takeEvents()) text += write.event(event)
+  yield text + ending(check, log, settings)
+}

@@ -1,0 +1,144 @@
+import type { Readable } from 'node:stream'
+import type { FastifyRequest } from 'fastify'
+import { Fault } from '../domain/fault.ts'
+import { detachedText } from '../passages/cells.ts'
+import { type Layout, layoutOf } from '../passages/layout.ts'
+import type { LogRow } from '../passages/position-report.ts'
+import { type Refusal, unreadableRow } from '../passages/rejection.ts'
+import { reportOfCells, reportOfObject } from '../passages/row-reader.ts'
+import { cellsOfLine, type Delimiter, delimiterOf } from './csv-cells.ts'
+import { type Line, MAX_LINE_BYTES, readLines } from './lines.ts'
+import { readTextLines } from './text-lines.ts'
+import type { Log } from './passage-answer.ts'
+import { refused } from './validation.ts'
+
+/** The log in a body, CSV or NDJSON as its content type says. */
+export function openLog(request: FastifyRequest, stream: Readable): Log {
+  const isCsv = request.headers['content-type']?.toLowerCase().startsWith('text/csv') === true
+  return isCsv ? readLogCsv(stream) : readLogNdjson(stream)
+}
+
+const TOO_LONG: Refusal = {
+  reason: 'line-too-long',
+  detail: `The line is longer than ${MAX_LINE_BYTES} bytes`,
+}
+const NOT_UTF8: Refusal = { reason: 'not-utf-8', detail: 'The line is not UTF-8' }
+const NOT_JSON: Refusal = { reason: 'not-json', detail: 'The line is not JSON' }
+const BROKEN_QUOTE: Refusal = {
+  reason: 'quote-unreadable',
+  detail:
+    'With its quotes the row does not come to the cells of the header; quote the whole cell and double those inside',
+}
+
+const rejected = (line: number, refusal: Refusal): LogRow => ({ rejected: unreadableRow(line, refusal) })
+
+/** Whether a line holds nothing; a usual one is told by its first letter. */
+const isBlank = (line: string): boolean => line === '' || (line.charCodeAt(0) <= BLANK && line.trim() === '')
+const BLANK = 32
+
+/**
+ * Rows of a log in CSV, `,` or `;` as the header shows; every physical line but the header and empty ones is a row.
+ * A header that cannot be used is thrown before the first row; a line that cannot be read is a rejected row.
+ */
+export function readLogCsv(stream: Readable): Log {
+  const reader = new CsvLog()
+  return { rows: csvRows(stream, reader), ignoredColumns: () => reader.ignoredColumns }
+}
+
+async function* csvRows(stream: Readable, reader: CsvLog): AsyncGenerator<LogRow[]> {
+  for await (const lines of readTextLines(stream)) {
+    const rows = reader.read(lines)
+    if (rows.length > 0) yield rows
+  }
+  reader.assertHeader()
+}
+
+/** A log of which the header comes first. */
+class CsvLog {
+  #layout: Layout | undefined
+  #delimiter: Delimiter = ','
+  #number = 0
+
+  get ignoredColumns(): readonly string[] {
+    return this.#layout?.ignoredColumns ?? []
+  }
+
+  read(lines: readonly (string | undefined)[]): LogRow[] {
+    const rows: LogRow[] = []
+    for (const line of lines) {
+      this.#number += 1
+      if (line !== undefined && isBlank(line)) continue
+      if (this.#layout) rows.push(this.#row(line, this.#layout))
+      else this.#readHeader(line)
+    }
+    return rows
+  }
+
+  assertHeader(): void {
+    if (!this.#layout) throw new Fault('malformed-csv', 'The body is empty: send a header line and rows')
+  }
+
+  #readHeader(line: string | undefined): void {
+    if (line === undefined) {
+      throw new Fault('line-too-long', TOO_LONG.detail, { facts: { limit: MAX_LINE_BYTES } })
+    }
+    this.#delimiter = delimiterOf(line)
+    const { layout, errors } = layoutOf(cellsOfLine(line, this.#delimiter), this.#number)
+    if (errors) throw refused(errors)
+    this.#layout = layout
+  }
+
+  #row(line: string | undefined, layout: Layout): LogRow {
+    if (line === undefined) return rejected(this.#number, TOO_LONG)
+    const cells = cellsOfLine(line, this.#delimiter)
+    const row = reportOfCells(cells, layout, this.#number)
+    const reason = row.rejected?.reason
+    if (reason !== 'cells-missing' && reason !== 'cells-too-many') return row
+    return line.includes('"') ? this.#plainRow(line, cells, layout) : row
+  }
+
+  /** A row of which the cells do not fit the header: as if its quotes were letters, else refused for them. */
+  #plainRow(line: string, cells: readonly string[], layout: Layout): LogRow {
+    const plain = line.split(this.#delimiter)
+    const isPlain = plain.length === layout.names.length
+    const row = reportOfCells(isPlain ? plain : cells, layout, this.#number)
+    const isStray = cells.some((cell) => cell.includes('"'))
+    return row.rejected && !isPlain && isStray ? { rejected: { ...row.rejected, ...BROKEN_QUOTE } } : row
+  }
+}
+
+/** Most names of unknown keys that are kept, and the most letters of one. */
+const MAX_UNKNOWN = 100
+const MAX_NAME = 64
+
+/** Rows of a log in NDJSON; every physical line but empty ones is a row. A line that cannot be read is a rejected row. */
+export function readLogNdjson(stream: Readable): Log {
+  const unknown = new Set<string>()
+  const onUnknownKey = (key: string): void => {
+    if (unknown.size >= MAX_UNKNOWN) return
+    const name = key.slice(0, MAX_NAME)
+    if (!unknown.has(name)) unknown.add(detachedText(name))
+  }
+  return { rows: ndjsonRows(stream, onUnknownKey), ignoredColumns: () => [...unknown] }
+}
+
+async function* ndjsonRows(stream: Readable, onUnknownKey: (key: string) => void): AsyncGenerator<LogRow[]> {
+  for await (const lines of readLines(stream)) {
+    const rows: LogRow[] = []
+    for (const line of lines) {
+      if (line.fault || !isBlank(line.text)) rows.push(ndjsonRow(line, onUnknownKey))
+    }
+    if (rows.length > 0) yield rows
+  }
+}
+
+function ndjsonRow(line: Line, onUnknownKey: (key: string) => void): LogRow {
+  if (line.fault) return rejected(line.number, line.fault.code === 'line-too-long' ? TOO_LONG : NOT_UTF8)
+  let value: unknown
+  try {
+    value = JSON.parse(line.text)
+  } catch {
+    return rejected(line.number, NOT_JSON)
+  }
+  return reportOfObject(value, line.number, onUnknownKey)
+}

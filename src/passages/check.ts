@@ -1,0 +1,194 @@
+import { EventFinder, type PassageEvent } from './events.ts'
+import { Groups, type PassageGroup } from './groups.ts'
+import { Judge } from './judge.ts'
+import type { Judgement, Judging } from './judgement.ts'
+import { PassageFinder } from './passage.ts'
+import type { Fairway, Placement } from './placement.ts'
+import { STATUSES, type LogRow, type Status } from './position-report.ts'
+import { Timeline, type Mark } from './timeline.ts'
+import { Tracks } from './tracks.ts'
+import { Fleet, type Convoy, type FindClass, type VesselGuess } from './vessel-guess.ts'
+
+/** Rejected rows that are told one by one; all are counted. */
+const MOST_REJECTED = 1000
+
+/** What a log is checked against, and how. */
+export interface CheckSettings {
+  readonly fairways: readonly Fairway[]
+  readonly findClass: FindClass
+  readonly judging: Judging
+  readonly convoy: Convoy
+  /** s between reports that still belong together, and that reports may go back in time */
+  readonly maxGap: number
+  readonly minEventReports: number
+}
+
+/** What became of a row of a log. */
+export interface Finding {
+  readonly row: LogRow
+  readonly status: Status
+  readonly reason: string | undefined
+  readonly placement: Placement | undefined
+  readonly guess: VesselGuess | undefined
+  readonly judgement: Judgement | undefined
+}
+
+/** Everything that a log says, added up. Times in s since 1970; NaN for an empty log. */
+export interface CheckSummary {
+  readonly from: number
+  readonly to: number
+  readonly read: number
+  readonly byStatus: Readonly<Record<Status, number>>
+  readonly rejected: readonly { readonly line: number; readonly reason: string }[]
+  /** with a matched report */
+  readonly vessels: number
+  readonly passages: number
+  readonly certainEvents: number
+  readonly doubtfulEvents: number
+  readonly groups: readonly PassageGroup[]
+}
+
+/** Reports that say where a vessel was: they enter its timeline, others do not. */
+const IN_TIMELINE: ReadonlySet<Status> = new Set<Status>([
+  'matched',
+  'stationary',
+  'outside-fairway',
+  'ambiguous',
+  'no-segment',
+])
+
+interface Followed {
+  readonly timeline: Timeline
+  readonly events: EventFinder
+  readonly passages: PassageFinder
+  classId: string
+  isMatched: boolean
+}
+
+/**
+ * Checks the reports of a log one after the other: places each, holds it against the recommended maximum, and gathers
+ * events, passages and totals. Memory grows with the vessels and passages, not with the rows.
+ */
+export class PassageCheck {
+  readonly #settings: CheckSettings
+  readonly #tracks: Tracks
+  readonly #fleet: Fleet
+  readonly #judge: Judge
+  readonly #vessels = new Map<string, Followed>()
+  readonly #groups = new Groups()
+  readonly #byStatus = Object.fromEntries(STATUSES.map((status) => [status, 0])) as Record<Status, number>
+  readonly #rejected: { line: number; reason: string }[] = []
+  #events: PassageEvent[] = []
+  #certain = 0
+  #doubtful = 0
+  #from = NaN
+  #to = NaN
+
+  constructor(settings: CheckSettings) {
+    this.#settings = settings
+    this.#tracks = new Tracks(settings.fairways, { maxGap: settings.maxGap })
+    this.#fleet = new Fleet(settings.convoy, settings.findClass)
+    this.#judge = new Judge(settings.judging)
+  }
+
+  /** Takes the next row of the log. */
+  take(row: LogRow): Finding {
+    const finding = this.#find(row)
+    this.#byStatus[finding.status] += 1
+    if (finding.status === 'rejected' && this.#rejected.length < MOST_REJECTED) {
+      const line = row.report?.line ?? row.rejected?.line ?? 0
+      this.#rejected.push({ line, reason: finding.reason ?? '' })
+    }
+    return finding
+  }
+
+  /** Events that have closed since the last call. */
+  takeEvents(): readonly PassageEvent[] {
+    const events = this.#events
+    this.#events = []
+    return events
+  }
+
+  /** After the last row: closes what is open. */
+  end(): void {
+    for (const { timeline, events, passages, classId } of this.#vessels.values()) {
+      timeline.end((mark) => {
+        events.take(mark)
+        passages.take(mark, mark.judgement?.guess.classId ?? classId)
+      })
+      events.end()
+      passages.end()
+    }
+  }
+
+  /** Totals, after `end`. */
+  summary(): CheckSummary {
+    return {
+      from: this.#from,
+      to: this.#to,
+      read: Object.values(this.#byStatus).reduce((sum, count) => sum + count, 0),
+      byStatus: { ...this.#byStatus },
+      rejected: this.#rejected,
+      vessels: [...this.#vessels.values()].filter(({ isMatched }) => isMatched).length,
+      passages: this.#groups.passages,
+      certainEvents: this.#certain,
+      doubtfulEvents: this.#doubtful,
+      groups: this.#groups.summed(),
+    }
+  }
+
+  #find(row: LogRow): Finding {
+    if (row.rejected) return refused(row, row.rejected.reason)
+    const { report } = row
+    const guess = this.#fleet.guess(report)
+    if (!guess) return refused(row, 'vessel-class-unknown')
+    this.#from = Number.isNaN(this.#from) ? report.time : Math.min(this.#from, report.time)
+    this.#to = Number.isNaN(this.#to) ? report.time : Math.max(this.#to, report.time)
+    const placement = this.#tracks.place(report)
+    const { status } = placement
+    const judgement = status === 'matched' ? this.#judge.judge(report, placement, guess) : undefined
+    if (IN_TIMELINE.has(status)) this.#follow({ report, placement, judgement }, guess)
+    const reason = status === 'matched' && !judgement ? 'vessel-does-not-fit' : placement.reason
+    return { row, status, reason, placement, guess, judgement }
+  }
+
+  #follow(mark: Mark, guess: VesselGuess): void {
+    const vessel = this.#vesselOf(mark.report.vesselKey)
+    vessel.classId = guess.classId
+    vessel.isMatched ||= mark.placement.status === 'matched'
+    vessel.timeline.add(mark, (settled) => {
+      vessel.events.take(settled)
+      vessel.passages.take(settled, settled.judgement?.guess.classId ?? vessel.classId)
+    })
+  }
+
+  #vesselOf(key: string): Followed {
+    const known = this.#vessels.get(key)
+    if (known) return known
+    const { maxGap, minEventReports, judging } = this.#settings
+    const vessel: Followed = {
+      timeline: new Timeline(maxGap),
+      events: new EventFinder(this.#judge, maxGap, minEventReports, (event) => {
+        this.#events.push(event)
+        if (event.certainty === 'certain') this.#certain += 1
+        else this.#doubtful += 1
+      }),
+      passages: new PassageFinder(maxGap, judging.tolerance, (passage) => {
+        this.#groups.add(passage)
+      }),
+      classId: '',
+      isMatched: false,
+    }
+    this.#vessels.set(key, vessel)
+    return vessel
+  }
+}
+
+const refused = (row: LogRow, reason: string): Finding => ({
+  row,
+  status: 'rejected',
+  reason,
+  placement: undefined,
+  guess: undefined,
+  judgement: undefined,
+})

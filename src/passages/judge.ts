@@ -1,0 +1,193 @@
+import { cautionsAt } from '../advisory/cautions.ts'
+import { currentAlong } from '../advisory/direction.ts'
+import { effectsAt, waveEnergies, type Effects } from '../advisory/effects.ts'
+import type { Conditions } from '../domain/conditions.ts'
+import type { Vessel } from '../domain/vessel.ts'
+import { maxOf, Maxima, postedOverGround, type Bound, type Maximum } from './maxima.ts'
+import {
+  NOT_COMPUTED,
+  sailedFigures,
+  type Judgement,
+  type Judging,
+  type PassageVerdict,
+} from './judgement.ts'
+import type { PassageCaution } from './passage-cautions.ts'
+import type { Placement } from './placement.ts'
+import type { PositionReport } from './position-report.ts'
+import type { VesselGuess } from './vessel-guess.ts'
+
+/** One loading of the vessel, held against its own maximum. */
+interface Assessed {
+  readonly maximum: Maximum
+  readonly max: number
+  readonly exceeds: boolean
+}
+
+/** The stricter of two: without a safe speed before any, else the lower maximum. */
+function stricter(a: Assessed, b: Assessed): Assessed {
+  if (Number.isNaN(a.max)) return a
+  return Number.isNaN(b.max) || b.max < a.max ? b : a
+}
+
+function verdictOf(all: readonly Assessed[]): PassageVerdict {
+  if (all.every(({ max }) => Number.isNaN(max))) return 'no-safe-speed'
+  const exceeding = all.filter(({ exceeds }) => exceeds).length
+  if (exceeding === 0) return 'within'
+  return exceeding === all.length ? 'exceeds' : 'depends-on-draught'
+}
+
+/** The loading whose figures are shown: the stricter one; where both are exceeded, one that has a maximum. */
+function shown([first, second]: readonly [Assessed, ...Assessed[]]): Assessed {
+  if (!second) return first
+  const strict = stricter(first, second)
+  const other = strict === first ? second : first
+  return Number.isNaN(strict.max) && other.exceeds && !Number.isNaN(other.max) ? other : strict
+}
+
+/** Holds matched reports against the recommended maximum. */
+export class Judge {
+  readonly #judging: Judging
+  readonly #maxima = new Maxima()
+
+  constructor(judging: Judging) {
+    this.#judging = judging
+  }
+
+  /**
+   * @param placement  of status `matched`
+   * @returns undefined when the vessel does not fit the water in any loading
+   */
+  judge(report: PositionReport, placement: Placement, guess: VesselGuess): Judgement | undefined {
+    const conditions = this.#conditionsOf(report, placement)
+    const slow = this.#surelyWithin(report, placement, guess, conditions)
+    if (slow) return slow
+    const all = guess.variants.flatMap((vessel) => this.#assess(report, placement, vessel, conditions))
+    const [first, ...rest] = all
+    if (!first) return undefined
+    const chosen = shown([first, ...rest])
+    const { maximum, max } = chosen
+    const { situation, vessel, decision } = maximum
+    const throughWater = report.speed - currentAlong(conditions, decision.direction)
+    const effects = throughWater > 0 ? effectsAt(situation, throughWater) : undefined
+    const postedLimit = postedOverGround(decision)
+    const { isFull } = this.#judging
+    return {
+      guess,
+      vessel,
+      conditions,
+      throughWater,
+      distances: maximum.distances,
+      outcome: decision.outcome,
+      governing: decision.governing.criterion.id,
+      maxOverGround: max,
+      sailingLineMax: isFull ? this.#lineMax(maximum, placement, conditions) : NaN,
+      excess: report.speed - max,
+      verdict: verdictOf(all),
+      postedLimit,
+      postedExcess: report.speed - postedLimit,
+      ...sailedFigures(effects, maximum.leftBank),
+      cautions: isFull ? cautionsOf(chosen, effects, guess, all.length) : [],
+    }
+  }
+
+  /**
+   * What an error of position to the side does to a maximum over ground, m/s: mean of both ways.
+   *
+   * @param shift  m
+   */
+  effectOfOffset(judgement: Judgement, placement: Placement, shift: number): number {
+    const { vessel, conditions, maxOverGround } = judgement
+    if (this.#judging.position === 'sailing-line') return 0
+    const changes = [-shift, shift]
+      .map((by) => {
+        const moved = { ...placement, offset: placement.offset + by }
+        const found = this.#maxima.actual(moved, vessel, conditions)
+        return found ? Math.abs(maxOf(found.decision) - maxOverGround) : NaN
+      })
+      .filter((change) => !Number.isNaN(change))
+    return changes.length === 0 ? 0 : changes.reduce((sum, change) => sum + change, 0) / changes.length
+  }
+
+  /** A report so slow that earlier maxima tell that it is within, with nothing more than totals need. */
+  #surelyWithin(
+    report: PositionReport,
+    placement: Placement,
+    guess: VesselGuess,
+    conditions: Conditions,
+  ): Judgement | undefined {
+    const { isFull, position } = this.#judging
+    const throughWater = report.speed - currentAlong(conditions, conditions.direction)
+    const hasDirection = conditions.current === 0 || conditions.direction !== undefined
+    if (isFull || position === 'sailing-line' || !hasDirection || !(throughWater > 0)) return undefined
+    const bounds = guess.variants.map((vessel) => this.#maxima.bound(placement, vessel, conditions))
+    if (!bounds.every((bound) => bound && report.speed <= bound.speed)) return undefined
+    const [laden, empty] = bounds
+    // of two loadings the figures are those of the lower maximum
+    if (!laden || (empty && !isLower(laden, empty))) return undefined
+    const [vessel] = guess.variants
+    const seen = this.#maxima.seen(placement, vessel, conditions)
+    if (!seen) return undefined
+    const energies = waveEnergies(seen.situation, throughWater)
+    return {
+      guess,
+      vessel,
+      conditions,
+      throughWater,
+      ...NOT_COMPUTED,
+      verdict: 'within',
+      postedLimit: laden.postedLimit,
+      postedExcess: report.speed - laden.postedLimit,
+      waveEnergies: seen.leftBank === 0 ? energies : [energies[1], energies[0]],
+    }
+  }
+
+  #conditionsOf(report: PositionReport, { direction }: Placement): Conditions {
+    const { waterLevel, current } = this.#judging
+    return {
+      waterLevel: Number.isNaN(report.waterLevel) ? waterLevel : report.waterLevel,
+      current: Number.isNaN(report.current) ? current : report.current,
+      isWaterLevelGiven: true,
+      isCurrentGiven: true,
+      ...(direction && { direction }),
+    }
+  }
+
+  #assess(
+    report: PositionReport,
+    placement: Placement,
+    vessel: Vessel,
+    conditions: Conditions,
+  ): readonly Assessed[] {
+    const { position, tolerance } = this.#judging
+    const maximum =
+      position === 'actual'
+        ? this.#maxima.actual(placement, vessel, conditions)
+        : this.#maxima.onSailingLine(placement, vessel, conditions)
+    if (!maximum) return []
+    const max = maxOf(maximum.decision)
+    // without a safe speed every speed exceeds
+    return [{ maximum, max, exceeds: Number.isNaN(max) || report.speed - max > tolerance }]
+  }
+
+  #lineMax({ vessel, decision }: Maximum, placement: Placement, conditions: Conditions): number {
+    if (this.#judging.position === 'sailing-line') return maxOf(decision)
+    const found = this.#maxima.onSailingLine(placement, vessel, conditions)
+    return found ? maxOf(found.decision) : NaN
+  }
+}
+
+const isLower = (a: Bound, b: Bound): boolean => a.before <= b.before && a.after <= b.after
+
+function cautionsOf(
+  { maximum }: Assessed,
+  effects: Effects | undefined,
+  guess: VesselGuess,
+  fitting: number,
+): string[] {
+  const own: PassageCaution[] = [...maximum.cautions]
+  if (guess.basis === 'tow-hull-only') own.push('convoy-size-unknown')
+  if (fitting < guess.variants.length) own.push('laden-does-not-fit')
+  const { situation, decision } = maximum
+  const ofAdvisory = effects ? cautionsAt(situation, effects, decision.direction) : []
+  return [...ofAdvisory.map(({ code }) => code), ...own]
+}
