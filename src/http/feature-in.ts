@@ -146,11 +146,12 @@ function placed(
   remarks: readonly Remark[],
 ): Read {
   try {
-    const { findings } = toRegistrySegment(wire, line)
+    const length = lineLength(line)
+    const { findings } = toRegistrySegment(wire, { line, length })
     const ofPlace = findings
       .filter(({ level }) => level === 'remark')
       .map((finding) => remarkOf(finding, `${at}/properties`, id))
-    const content = { id, line, length: lineLength(line), bbox: boundingBox(line), properties: wire }
+    const content = { id, line, length, bbox: boundingBox(line), properties: wire }
     return { content, faults: [], remarks: [...remarks, ...ofPlace] }
   } catch (error) {
     if (!(error instanceof Fault) || error.code !== 'impossible-input') throw error

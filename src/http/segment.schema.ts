@@ -191,16 +191,21 @@ export function checkGeometry(segment: Checked, report: Report): void {
   } else checkBankDistances(segment, report)
 }
 
-/** Two lines, two distances, or one distance and the width, give the section. */
+/** A line or a distance on each side, or one distance and the width, give the section. */
 function checkBankDistances(segment: Checked, report: Report): void {
   const { left, right } = { left: {}, right: {}, ...(segment.banks as object) } as Record<
     'left' | 'right',
     { distance_m?: unknown; line?: unknown }
   >
   if (left.line !== undefined || right.line !== undefined) {
-    if (left.line !== undefined && right.line !== undefined) return
-    const missing = left.line === undefined ? 'left' : 'right'
-    report(['banks', missing, 'line'], 'required', 'is required: both banks have a line, or neither')
+    for (const [side, bank] of Object.entries({ left, right })) {
+      if (bank.line !== undefined || bank.distance_m !== undefined) continue
+      report(
+        ['banks', side, 'distance_m'],
+        'required',
+        'is required: the other bank has a line, this one has none',
+      )
+    }
     return
   }
   const given = [left, right].filter((bank) => bank.distance_m !== undefined).length
