@@ -1,5 +1,5 @@
 import type { SectionShape, Station } from '../domain/segment.ts'
-import { placesBetween } from './between.ts'
+import { rowsBetween } from './between.ts'
 import type { GeometryFinding } from './finding.ts'
 import {
   figuresAlong,
@@ -98,14 +98,12 @@ function withBetween(
   sources: StationSources,
   placed: readonly Placed[],
   candidates: readonly Candidate[],
-  figuresAt: (along: number) => Figures,
 ): Candidate[] {
   const pairs = candidates.slice(1).flatMap((b, i) => {
     const a = candidates[i]
     return a && a.shape.kind !== 'profile' && b.shape.kind !== 'profile' ? [[a, b] as const] : []
   })
-  const made = placesBetween(pairs).map((along): Candidate => {
-    const figures = figuresAt(along)
+  const made = rowsBetween(pairs).map(({ along, figures }): Candidate => {
     const shape = shapeBetween(sources, placed, along)
     const bottomWidth = shape.kind === 'trapezoid' ? shape.bottomWidth : undefined
     const width = figures[1] + figures[2]
@@ -160,7 +158,7 @@ function bottomFindings(stations: readonly Station[]): GeometryFinding[] {
  * Depth is interpolated linearly by chainage between given stations and held beyond them. Distances come from the
  * bank lines where there are any, else from the single figures, else interpolated from the stations. A station with
  * its own cross-section is kept as it is; between two trapezoids described alike their measure is interpolated.
- * Where figures change much, stations are put between: see `placesBetween`.
+ * Where figures change much, stations are put between: see `rowsBetween`.
  *
  * @error stations are left out where linear interpolation between those kept gives the depth within 0.01 m and each
  *   distance within 0.1 m (the width within 0.2 m); the least and the greatest depth, distances and width are kept exactly
@@ -184,7 +182,7 @@ export function stationsOf(sources: StationSources): MergedStations {
     ),
   )
   const kept = candidates.filter((_, i) => indices.has(i))
-  const stations = withBetween(sources, placed, kept, figuresAt).map((candidate, index) =>
+  const stations = withBetween(sources, placed, kept).map((candidate, index) =>
     toStation(candidate, index, isUniform(sources) ? undefined : sources.scale.chainageAt(candidate.along)),
   )
   const [first, ...rest] = stations

@@ -84,7 +84,11 @@ export const ReceptorFields = z
       .enum(['left', 'right', 'nearer', 'farther'])
       .describe('looking downstream, or as the banks are given'),
     distance_m: figure(0.1, 20000, 'from the sailing line, m'),
-    chainage_m: figure(-1e7, 1e7, 'm').optional(),
+    chainage_m: figure(
+      -1e7,
+      1e7,
+      'of a registry segment: it counts at this place alone, where a station is put for it; left out, or where one section describes the whole segment, it counts all along, m',
+    ).optional(),
     max_wave_height_m: figure(0.01, 10, 'm; required except for moored small craft').optional(),
   })
   .check(
@@ -138,7 +142,11 @@ export const StationFields = z
       }
     }),
   )
-  .meta({ id: 'Station', description: 'Depth and width at a place along a segment.' })
+  .meta({
+    id: 'Station',
+    description:
+      'Depth and width at a place along a segment; both are interpolated by chainage between stations.',
+  })
 
 const COMMON = {
   name: Text.optional(),
@@ -236,8 +244,17 @@ export const RegistrySegmentFields = z
     banks: z
       .strictObject({ label: Label, left: RegistryBankFields, right: RegistryBankFields })
       .optional()
-      .describe('in place of bank_distance_m; left and right looking downstream'),
-    stations: z.array(StationFields).min(1).max(5000).optional(),
+      .describe(
+        'in place of bank_distance_m; left and right looking downstream, each by its line or its distance',
+      ),
+    stations: z
+      .array(StationFields)
+      .min(1)
+      .max(5000)
+      .optional()
+      .describe(
+        'in any order. Where figures differ by more than 2 % between neighbours, others are put between',
+      ),
   })
   .check(
     crossCheck((segment, report) => {

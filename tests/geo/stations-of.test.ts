@@ -102,8 +102,8 @@ test('falling chainages keep the order of the sailing line', () => {
   const { stations } = merge({ scale, given: [given(4100, 3, 30, 30), given(4900, 5, 30, 30)] })
   expect(stations.map(({ index, chainage, depth }) => [index, chainage, depth])).toEqual([
     [0, 4900, 5],
-    // ln(5/3)/ln(1.05) is 10.47: ten are put between
-    [11, 4100, 3],
+    // ln(5/3) / ln 1.02 is 25.8: 25 are put between
+    [26, 4100, 3],
   ])
 })
 
@@ -246,26 +246,26 @@ test('a smooth widening of 2000 stations leaves a few', () => {
 })
 
 test('between stations whose figures differ there are others, straight between them and marked', () => {
-  const { stations } = mergeAll({ given: [given(0, 4, 30, 30), given(1000, 3.6, 33, 30)] })
+  const { stations } = mergeAll({ given: [given(0, 4, 30, 30), given(1000, 3.85, 31, 30)] })
   expect(stations.map(({ index, isBetween }) => [index, isBetween])).toEqual([
     [0, undefined],
     [1, true],
-    [2, true],
-    [3, undefined],
+    [2, undefined],
   ])
-  // the depth falls by 1/1.05 first after 4 / 1.05 / 0.0004 m less than 10000 m
+  // the depth, 4 m less 0.15 m in 1000 m, is the first to change by a fiftieth: at 4 m / 1.02
   const [, second] = rows(stations)
-  expectClose(second![0]!, 476.19047619, { abs: 1e-6 })
-  expectClose(second![1]!, 3.80952380952, { abs: 1e-9 })
-  expectClose(second![3]!, 31.42857142857, { abs: 1e-9 })
+  expectClose(second![0]!, 522.87581699, { abs: 1e-6 })
+  expectClose(second![1]!, 3.92156862745, { abs: 1e-9 })
+  expectClose(second![3]!, 30.52287581699, { abs: 1e-9 })
 })
 
 test('bank lines have stations put between too, where they run apart', () => {
   const { stations } = mergeAll({
-    banks: fromLines([0, 20, 30], [1000, 40, 30]),
+    banks: fromLines([0, 20, 30], [1000, 30, 30]),
     single: { depth: 4 },
   })
-  expect(stations).toHaveLength(16)
+  // ln 1.5 / ln 1.02 is 20.5: 20 between the two
+  expect(stations).toHaveLength(22)
   expect(stations.every(({ depth, width, distances }) => depth === 4 && width === distances[0] + 30)).toBe(
     true,
   )
