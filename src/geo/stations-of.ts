@@ -71,9 +71,10 @@ const isUniform = ({ banks, given }: StationSources): boolean => banks.length ==
 function placesOf(sources: StationSources, placed: readonly Placed[], inside: readonly Placed[]): number[] {
   if (isUniform(sources)) return [0]
   const known = [...sources.banks.map(({ along }) => along), ...inside.map(({ along }) => along)]
-  const ends = known.length > 0 ? known : [0, sources.length]
+  // figures run on to a station outside, so that the ends have their own
+  const ends = inside.length < placed.length || known.length === 0 ? [0, sources.length] : []
   const wanted = (sources.wanted ?? []).filter((along) => !isBesideProfile(placed, along))
-  return distinct([...ends, ...wanted])
+  return distinct([...known, ...ends, ...wanted])
 }
 
 function candidateAt(

@@ -124,6 +124,14 @@ test('a station outside the segment only serves to interpolate, with a remark', 
   })
 })
 
+test('with a station outside the end on its side has its own figures', () => {
+  const { stations } = merge({ given: [given(-1000, 2, 30, 30), given(1000, 4, 30, 30)] })
+  expect(rows(stations)).toEqual([
+    [0, 3, 60, 30, 30],
+    [1000, 4, 60, 30, 30],
+  ])
+})
+
 test('with all stations outside both ends are interpolated', () => {
   const { stations } = merge({ given: [given(-1000, 2, 30, 30), given(3000, 4, 30, 30)] })
   expect(rows(stations)).toEqual([
