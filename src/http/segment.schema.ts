@@ -1,11 +1,11 @@
 import { z } from 'zod'
 import { BANK_KINDS, BED_KINDS, DIRECTIONS, RECEPTOR_KINDS } from '../domain/segment.ts'
 import { crossCheck, type Report } from './cross-check.ts'
+import { CrossSectionFields, Slope } from './cross-section.schema.ts'
 import { checkSpeed, figure, Id, Label, speedFields, Text } from './fields.ts'
 import { GroupFields } from './group.schema.ts'
 
 const Distance = figure(0.1, 20000, 'sailing line to the waterline at the datum, m')
-const Slope = figure(0, 20, 'horizontal over vertical')
 
 const BANK = {
   label: Label,
@@ -32,48 +32,6 @@ const BankLine = z
 const RegistryBankFields = z
   .strictObject({ ...BANK, line: BankLine.optional() })
   .meta({ id: 'RegistryBank', description: 'One bank of a registry segment, by its line or by a distance.' })
-
-const ProfilePoint = z.tuple([z.number().min(-20000).max(20000), z.number().min(-100).max(150)])
-
-const Profile = z
-  .strictObject({
-    label: Label,
-    profile: z
-      .array(ProfilePoint)
-      .min(3)
-      .max(2000)
-      .describe(
-        '[offset_m, bed_depth_m]: offset from the sailing line, positive to the right looking downstream, strictly rising; depth positive below the datum',
-      ),
-  })
-  .check(
-    crossCheck(({ profile }, report) => {
-      if (!Array.isArray(profile) || !profile.every((point) => Array.isArray(point))) return
-      profile.forEach(([offset], i) => {
-        const before = profile[i - 1]?.[0]
-        if (before !== undefined && !(offset > before)) {
-          report(['profile', i, 0], 'out-of-range', `must be above the offset before it, ${before}`)
-        }
-      })
-      const first = profile[0]?.[0] ?? 0
-      const last = profile.at(-1)?.[0] ?? 0
-      if (first > 0 || last < 0) {
-        report(
-          ['profile'],
-          'out-of-range',
-          'must reach from left of the sailing line to right of it: offset 0 lies outside',
-        )
-      }
-    }),
-  )
-
-export const CrossSectionFields = z
-  .union([
-    z.strictObject({ label: Label, bottom_width_m: figure(0, 20000, 'm') }),
-    z.strictObject({ label: Label, slope_h_per_v: Slope }),
-    Profile,
-  ])
-  .meta({ id: 'CrossSection', description: 'A trapezoid by bottom width or slope, or a surveyed profile.' })
 
 export const ReceptorFields = z
   .strictObject({
