@@ -53,11 +53,14 @@ async function ask(url: string): Promise<Row[]> {
     .map((line) => JSON.parse(line) as Row)
 }
 
+/** A maximum with one decimal, rounded down: what is shown is never more than what was found. */
+const atMost = (speed: number): string => (Math.floor(speed * 10 + 1e-9) / 10).toFixed(1)
+
 /** What a cell says: the sign, the reason in short, or why there is no figure. */
 function cellOf(row: Row | undefined): string {
   if (!row || row.problem_code !== null) return 'does not fit'
   if (row.outcome === 'no-safe-speed') return `none (${row.governing_criterion ?? ''})`
-  const speed = row.sign_value === null ? (row.max_over_ground_kmh ?? 0).toFixed(1) : String(row.sign_value)
+  const speed = row.sign_value === null ? atMost(row.max_over_ground_kmh ?? 0) : String(row.sign_value)
   return `${speed} (${row.governing_criterion ?? ''})`
 }
 

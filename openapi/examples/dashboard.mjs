@@ -52,13 +52,14 @@ const readings = new Map(
     .map((reading) => reading.split('=')),
 )
 
+/** A maximum with one decimal, rounded down: what is shown is never more than what was found. */
+const atMost = (speed) => (Math.floor(speed * 10 + 1e-9) / 10).toFixed(1)
+
 /** What a board shows for a segment. */
 function shown({ outcome, sign_value, sign_unit, max_over_ground_kmh, problem_detail }) {
   if (problem_detail) return `no answer (${problem_detail})`
   if (outcome === 'no-safe-speed') return 'no safe speed'
-  return sign_value === null
-    ? `${max_over_ground_kmh.toFixed(1)} km/h, no sign`
-    : `${sign_value} ${sign_unit}`
+  return sign_value === null ? `${atMost(max_over_ground_kmh)} km/h, no sign` : `${sign_value} ${sign_unit}`
 }
 
 const etags = new Map()

@@ -4,7 +4,7 @@ import { permissibleVelocity } from '../hydro/permissible-velocity.ts'
 import { isSteady } from '../hydro/primary-wave.ts'
 import { WAVE_METHODS } from '../hydro/waves/all.ts'
 import type { Caution } from './caution.ts'
-import { bankOfReceptor } from './criteria/receptor-wave.ts'
+import { bankOfReceptor, isAt } from './criteria/receptor-wave.ts'
 import { currentAlong } from './direction.ts'
 import type { Effects } from './effects.ts'
 import { bankDrawdown } from './primary.ts'
@@ -112,7 +112,7 @@ function meeting(situation: Situation, speed: number): Caution | undefined {
 function mooringDrawdown(situation: Situation, speed: number): Caution[] {
   const cautions: Caution[] = []
   situation.segment.receptors.forEach((receptor, i) => {
-    if (receptor.kind !== 'moored-small-craft') return
+    if (receptor.kind !== 'moored-small-craft' || !isAt(receptor, situation.station)) return
     const drawdown = bankDrawdown(situation, bankOfReceptor(situation, receptor), speed)
     if (!(drawdown > MOORING_DRAWDOWN)) return
     cautions.push({

@@ -57,6 +57,8 @@ export type SectionShape =
 /** The water at one place along the sailing line, at the datum. */
 export interface Station {
   readonly index: number
+  /** whether it was put between two others, where figures change much from one to the other */
+  readonly isBetween?: true
   /** m along the waterway; absent for a segment described in a request */
   readonly chainage?: number
   /** bed below the datum at the sailing line, m */
@@ -75,7 +77,10 @@ export interface Receptor {
   readonly side: Side
   /** from the sailing line, m */
   readonly distance: number
+  /** m along the waterway */
   readonly chainage?: number
+  /** index of the station that it lies at; absent: it counts at every one */
+  readonly station?: number
   readonly maxWaveHeight?: number
 }
 

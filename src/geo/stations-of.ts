@@ -1,42 +1,18 @@
 import type { SectionShape, Station } from '../domain/segment.ts'
-import type { BankStation } from './banks.ts'
-import type { ChainageScale } from './chainage-scale.ts'
+import { rowsBetween } from './between.ts'
 import type { GeometryFinding } from './finding.ts'
-import { interpolate, type Sample } from './interpolate.ts'
+import {
+  figuresAlong,
+  isBesideProfile,
+  placedStations,
+  SAME_STATION,
+  shapeBetween,
+  type Figures,
+  type Placed,
+  type StationSources,
+} from './station-figures.ts'
 import { thinned, type Tolerances } from './thin.ts'
 import { widthFindings } from './widths.ts'
-
-/** A station as it is given, its figures complete: m at the datum. */
-export interface GivenStation {
-  /** m along the waterway */
-  readonly chainage: number
-  readonly depth: number
-  /** to the waterlines, in the order of the segment's banks */
-  readonly distances: readonly [number, number]
-  /** its own cross-section, if it has one */
-  readonly shape?: SectionShape
-}
-
-/** Figures that hold all along a segment, m; each takes the place of those of the stations. */
-export interface SingleFigures {
-  readonly depth?: number
-  readonly distances?: readonly [number, number]
-}
-
-export interface StationSources {
-  /** n ≥ 0, in any order of chainage */
-  readonly given: readonly GivenStation[]
-  readonly single: SingleFigures
-  /** n ≥ 0, along rising */
-  readonly banks: readonly BankStation[]
-  /** of stations without their own */
-  readonly shape: SectionShape
-  readonly scale: Pick<ChainageScale, 'chainageAt' | 'distanceAt'>
-  /** of the sailing line, m */
-  readonly length: number
-  /** what may be lost by leaving a station out, m; default 0.01 in depth and 0.1 in each distance */
-  readonly tolerances?: Tolerances
-}
 
 export interface MergedStations {
   /** n ≥ 1 in the order of the sailing line */
@@ -49,15 +25,8 @@ const DEPTH_TOLERANCE = 0.01
 const DISTANCE_TOLERANCE = 0.1
 const TOLERANCES: Tolerances = [DEPTH_TOLERANCE, DISTANCE_TOLERANCE, DISTANCE_TOLERANCE]
 
-/** Places closer than this, m, are one station. */
-const SAME_STATION = 0.01
 /** Slack of the ends of a segment for stations, m. */
 const END_SLACK = 1
-
-/** A given station by its place along the sailing line. */
-interface Placed extends GivenStation {
-  readonly along: number
-}
 
 function outsideFindings(outside: readonly Placed[], length: number): GeometryFinding[] {
   const [first] = outside
@@ -79,82 +48,89 @@ function outsideFindings(outside: readonly Placed[], length: number): GeometryFi
   ]
 }
 
-/** One station where several are given at a place: the last, as in the order of the request. */
-function placedStations({ given, scale }: StationSources): Placed[] {
-  const placed = given.map((station): Placed => ({ ...station, along: scale.distanceAt(station.chainage) }))
-  const sorted = placed.toSorted((a, b) => a.along - b.along)
-  return sorted.filter((station, i) => (sorted[i + 1]?.along ?? Infinity) - station.along > SAME_STATION)
-}
-
-/** Distances at a place: from the bank lines where there are any, else single figures, else the stations. */
-function distanceSamples(sources: StationSources, placed: readonly Placed[], bank: 0 | 1): Sample[] {
-  const side = bank === 0 ? 'left' : 'right'
-  const ofLines = sources.banks.flatMap(({ along, ...station }) => {
-    const found = station[side]
-    return found ? [{ along, value: found.distance }] : []
-  })
-  if (ofLines.length > 0) return ofLines
-  const single = sources.single.distances?.[bank]
-  if (single !== undefined) return [{ along: 0, value: single }]
-  return placed.map(({ along, distances }) => ({ along, value: distances[bank] }))
-}
-
-function depthSamples({ single }: StationSources, placed: readonly Placed[]): Sample[] {
-  if (single.depth !== undefined) return [{ along: 0, value: single.depth }]
-  return placed.map(({ along, depth }) => ({ along, value: depth }))
-}
-
-/** Places of stations, m along the line, rising: those of the banks and of the given stations within the segment. */
-function placesOf(sources: StationSources, inside: readonly Placed[]): number[] {
-  const all = [...sources.banks.map(({ along }) => along), ...inside.map(({ along }) => along)]
-  const places = all
-    .sort((a, b) => a - b)
-    .filter((along, i, sorted) => i === 0 || along - (sorted[i - 1] ?? 0) > SAME_STATION)
-  if (places.length > 0 || sources.given.length === 0) return places
-  return [0, sources.length]
-}
-
-type Figures = readonly [depth: number, first: number, second: number]
-
+/** A place of the line with what is known there. */
 interface Candidate {
   readonly along: number
   readonly figures: Figures
-  readonly shape: SectionShape | undefined
+  readonly shape: SectionShape
+  /** whether it is kept even where it says nothing new */
+  readonly isNeeded: boolean
+  readonly isBetween?: boolean
 }
 
-function candidatesOf(
+/** Rising, and none so near to the one before that it is the same station. */
+const distinct = (places: readonly number[]): number[] =>
+  places
+    .toSorted((a, b) => a - b)
+    .filter((along, i, sorted) => i === 0 || along - (sorted[i - 1] ?? 0) > SAME_STATION)
+
+/** Whether the segment is one section all along. */
+const isUniform = ({ banks, given }: StationSources): boolean => banks.length === 0 && given.length === 0
+
+/** Places of stations, m along the line, rising: those of the banks, of the given stations, and the wanted ones. */
+function placesOf(sources: StationSources, placed: readonly Placed[], inside: readonly Placed[]): number[] {
+  if (isUniform(sources)) return [0]
+  const known = [...sources.banks.map(({ along }) => along), ...inside.map(({ along }) => along)]
+  // figures run on to a station outside, so that the ends have their own
+  const ends = inside.length < placed.length || known.length === 0 ? [0, sources.length] : []
+  const wanted = (sources.wanted ?? []).filter((along) => !isBesideProfile(placed, along))
+  return distinct([...known, ...ends, ...wanted])
+}
+
+function candidateAt(
   sources: StationSources,
   placed: readonly Placed[],
-  places: readonly number[],
-): Candidate[] {
-  const samples = [
-    depthSamples(sources, placed),
-    distanceSamples(sources, placed, 0),
-    distanceSamples(sources, placed, 1),
-  ] as const
-  if (samples.some(({ length }) => length === 0)) {
-    throw new RangeError('Depth and both distances need a station, a bank line or a single figure each')
-  }
-  return places.map((along) => {
-    const at = placed.find((station) => Math.abs(station.along - along) <= SAME_STATION)
+  figuresAt: (along: number) => Figures,
+  along: number,
+): Candidate {
+  const at = placed.find((station) => Math.abs(station.along - along) <= SAME_STATION)
+  const isWanted = sources.wanted?.some((place) => Math.abs(place - along) <= SAME_STATION) === true
+  return {
+    along,
     // a surveyed profile is the whole section: its own waterlines count, not those of the bank lines
-    const figures: Figures =
-      at?.shape?.kind === 'profile'
-        ? [at.depth, ...at.distances]
-        : [interpolate(samples[0], along), interpolate(samples[1], along), interpolate(samples[2], along)]
-    return { along, figures, shape: at?.shape }
-  })
+    figures: at?.shape?.kind === 'profile' ? [at.depth, ...at.distances] : figuresAt(along),
+    shape: at ? (at.shape ?? sources.shape) : shapeBetween(sources, placed, along),
+    isNeeded: isWanted || at?.shape !== undefined,
+  }
 }
 
-function toStation(figures: Figures, shape: SectionShape, index: number, chainage?: number): Station {
-  const [depth, first, second] = figures
+/** Candidates with those put between them where figures change much; none beside a surveyed profile. */
+function withBetween(
+  sources: StationSources,
+  placed: readonly Placed[],
+  candidates: readonly Candidate[],
+): Candidate[] {
+  const pairs = candidates.slice(1).flatMap((b, i) => {
+    const a = candidates[i]
+    return a && a.shape.kind !== 'profile' && b.shape.kind !== 'profile' ? [[a, b] as const] : []
+  })
+  const made = rowsBetween(pairs).map(({ along, figures }): Candidate => {
+    const shape = shapeBetween(sources, placed, along)
+    const bottomWidth = shape.kind === 'trapezoid' ? shape.bottomWidth : undefined
+    const width = figures[1] + figures[2]
+    return {
+      along,
+      figures,
+      // a bottom that is the segment's may be wider than the water where stations have their own
+      shape:
+        bottomWidth !== undefined && bottomWidth > width ? { kind: 'trapezoid', bottomWidth: width } : shape,
+      isNeeded: false,
+      isBetween: true,
+    }
+  })
+  return [...candidates, ...made].sort((a, b) => a.along - b.along)
+}
+
+function toStation(candidate: Candidate, index: number, chainage: number | undefined): Station {
+  const [depth, first, second] = candidate.figures
   return {
     index,
     ...(chainage !== undefined && { chainage }),
+    ...(candidate.isBetween && { isBetween: true }),
     depth,
     width: first + second,
     distances: [first, second],
-    shape,
+    shape: candidate.shape,
   }
 }
 
@@ -182,7 +158,8 @@ function bottomFindings(stations: readonly Station[]): GeometryFinding[] {
  *
  * Depth is interpolated linearly by chainage between given stations and held beyond them. Distances come from the
  * bank lines where there are any, else from the single figures, else interpolated from the stations. A station with
- * its own cross-section is kept as it is.
+ * its own cross-section is kept as it is; between two trapezoids described alike their measure is interpolated.
+ * Where figures change much, stations are put between: see `rowsBetween`.
  *
  * @error stations are left out where linear interpolation between those kept gives the depth within 0.01 m and each
  *   distance within 0.1 m (the width within 0.2 m); the least and the greatest depth, distances and width are kept exactly
@@ -194,21 +171,21 @@ export function stationsOf(sources: StationSources): MergedStations {
   const placed = placedStations(sources)
   const isInside = ({ along }: Placed) => along >= -END_SLACK && along <= sources.length + END_SLACK
   const inside = placed.filter(isInside)
-  const places = placesOf(sources, inside)
-  const isUniform = places.length === 0
-  const candidates = candidatesOf(sources, placed, isUniform ? [0] : places)
-  const kept = thinned(
-    candidates.map(({ along, figures }) => ({ along, figures })),
-    sources.tolerances ?? TOLERANCES,
-    candidates.map(({ shape }) => shape !== undefined),
+  const figuresAt = figuresAlong(sources, placed)
+  const candidates = placesOf(sources, placed, inside).map((along) =>
+    candidateAt(sources, placed, figuresAt, along),
   )
-  const stations = kept.flatMap((i, index) => {
-    const candidate = candidates[i]
-    if (!candidate) return []
-    const { along, figures, shape } = candidate
-    const chainage = isUniform ? undefined : sources.scale.chainageAt(along)
-    return [toStation(figures, shape ?? sources.shape, index, chainage)]
-  })
+  const indices = new Set(
+    thinned(
+      candidates,
+      sources.tolerances ?? TOLERANCES,
+      candidates.map(({ isNeeded }) => isNeeded),
+    ),
+  )
+  const kept = candidates.filter((_, i) => indices.has(i))
+  const stations = withBetween(sources, placed, kept).map((candidate, index) =>
+    toStation(candidate, index, isUniform(sources) ? undefined : sources.scale.chainageAt(candidate.along)),
+  )
   const [first, ...rest] = stations
   if (!first) throw new RangeError('A segment without a station')
   return {

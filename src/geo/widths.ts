@@ -1,6 +1,6 @@
 import type { GeometryFinding } from './finding.ts'
 import { interpolate } from './interpolate.ts'
-import type { StationSources } from './stations-of.ts'
+import type { Placed, StationSources } from './station-figures.ts'
 
 /** Difference between a given distance and that to a bank line that is worth a remark: m and share. */
 const SLACK = 5
@@ -14,12 +14,24 @@ interface Pair {
   readonly line: number
 }
 
+/** The distance that a station gives to a bank; where its sides are not known, that of the two which fits the line. */
+function givenDistance(
+  { distances, hasSides }: Pick<Placed, 'distances' | 'hasSides'>,
+  bank: 0 | 1,
+  line: number,
+) {
+  if (hasSides !== false) return distances[bank]
+  const [a, b] = distances
+  return Math.abs(a - line) <= Math.abs(b - line) ? a : b
+}
+
 /** A remark where given distances and those to the bank lines differ; the lines count. */
 export function widthFindings(
   { banks, single, scale }: StationSources,
-  inside: readonly { readonly along: number; readonly distances: readonly [number, number] }[],
+  inside: readonly Placed[],
 ): GeometryFinding[] {
-  const pairs = (['left', 'right'] as const).flatMap((side, bank): Pair[] => {
+  const pairs = (['left', 'right'] as const).flatMap((side): Pair[] => {
+    const bank = side === 'left' ? 0 : 1
     const lines = banks.flatMap(({ along, ...station }) => {
       const found = station[side]
       return found ? [{ along, value: found.distance }] : []
@@ -29,12 +41,10 @@ export function widthFindings(
     if (constant !== undefined) {
       return lines.map(({ along, value }) => ({ side, along, given: constant, line: value }))
     }
-    return inside.map(({ along, distances }) => ({
-      side,
-      along,
-      given: distances[bank] ?? NaN,
-      line: interpolate(lines, along),
-    }))
+    return inside.map((station) => {
+      const line = interpolate(lines, station.along)
+      return { side, along: station.along, given: givenDistance(station, bank, line), line }
+    })
   })
   const apart = ({ given, line }: Pair) => Math.abs(given - line)
   const differing = pairs.filter((pair) => apart(pair) > Math.max(SLACK, SLACK_SHARE * pair.line))

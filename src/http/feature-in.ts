@@ -6,6 +6,7 @@ import type { GeometryFinding } from '../geo/finding.ts'
 import { checkLine } from '../geo/line.ts'
 import { boundingBox, lineLength } from '../geo/measure.ts'
 import type { SegmentContent } from '../store/registry.ts'
+import { crsItems } from './crs.ts'
 import { ID_PATTERN } from './fields.ts'
 import { RegistrySegmentFields, type RegistrySegmentWire } from './segment.schema.ts'
 import { toRegistrySegment } from './to-registry-segment.ts'
@@ -21,7 +22,8 @@ export const FeatureIn = z
   })
   .meta({
     id: 'SegmentFeatureInput',
-    description: 'A GeoJSON feature: a sailing line, drawn downstream, and a segment object.',
+    description:
+      'A GeoJSON feature: a sailing line of [longitude, latitude], drawn downstream, and a segment object. A crs member is refused unless it names CRS84.',
   })
 
 export type FeatureWire = z.output<typeof FeatureIn>
@@ -125,7 +127,11 @@ export function readFeature(feature: FeatureWire, at: string, keepsUnknown: bool
   const properties = ownProperties(feature.properties, keepsUnknown)
   const parsed = RegistrySegmentFields.safeParse(properties, { error: () => '' })
   const faults: FaultItem[] = [
-    ...idItems(feature.id, at).map((item) => ({ ...item, ...(id && { feature_id: id }) })),
+    ...[
+      ...crsItems(feature, at),
+      ...idItems(feature.id, at),
+      ...crsItems(feature.geometry, `${at}/geometry`),
+    ].map((item) => ({ ...item, ...(id && { feature_id: id }) })),
     ...geometry.faults,
   ]
   if (!parsed.success) {
@@ -146,11 +152,12 @@ function placed(
   remarks: readonly Remark[],
 ): Read {
   try {
-    const { findings } = toRegistrySegment(wire, line)
+    const length = lineLength(line)
+    const { findings } = toRegistrySegment(wire, { line, length })
     const ofPlace = findings
       .filter(({ level }) => level === 'remark')
       .map((finding) => remarkOf(finding, `${at}/properties`, id))
-    const content = { id, line, length: lineLength(line), bbox: boundingBox(line), properties: wire }
+    const content = { id, line, length, bbox: boundingBox(line), properties: wire }
     return { content, faults: [], remarks: [...remarks, ...ofPlace] }
   } catch (error) {
     if (!(error instanceof Fault) || error.code !== 'impossible-input') throw error

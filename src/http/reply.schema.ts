@@ -54,7 +54,9 @@ const Head = {
   station: z
     .object({ index: z.int().min(0).max(1e6), chainage_m: z.number().optional() })
     .optional()
-    .describe('that governs along a registry segment'),
+    .describe(
+      'that governs along a registry segment. The index counts the stations that are computed with, in the order of the sailing line: those given and of the bank lines as far as they are needed, one at each receptor with a chainage, and those put between',
+    ),
   vessel: VesselReply,
   conditions: ConditionsReply,
 } as const

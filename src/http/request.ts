@@ -58,6 +58,19 @@ export function segmentNotFound(id: string, registry: Registry): Fault {
 function overridden(stored: RegistrySegmentWire, wire: SegmentWire): RegistrySegmentWire {
   const { id: _id, label: _label, ...given } = wire
   if (Object.keys(given).length === 0) return stored
+  return withOther(given.cross_section ? withoutSections(stored) : stored, given)
+}
+
+/** Stations whose own cross-sections make way for one that holds all along. */
+function withoutSections(stored: RegistrySegmentWire): RegistrySegmentWire {
+  if (!stored.stations) return stored
+  return { ...stored, stations: stored.stations.map(({ cross_section: _own, ...station }) => station) }
+}
+
+function withOther(
+  stored: RegistrySegmentWire,
+  given: Omit<SegmentWire, 'id' | 'label'>,
+): RegistrySegmentWire {
   // distances are given in one of two ways: what the request has replaces either
   if (given.bank_distance_m !== undefined) {
     const { banks: _banks, ...kept } = stored
@@ -77,7 +90,7 @@ const segments = new WeakMap<SegmentRecord, Segment>()
 export function segmentOf(record: SegmentRecord): Segment {
   const known = segments.get(record)
   if (known) return known
-  const { segment } = toRegistrySegment(record.properties, record.line, record)
+  const { segment } = toRegistrySegment(record.properties, record, record)
   segments.set(record, segment)
   return segment
 }
@@ -102,7 +115,7 @@ export function resolveSegment(
   const merged = overridden(stored, wire)
   if (merged === stored) return { segment: segmentOf(record), record }
   refuseIncomplete(merged)
-  return { segment: toRegistrySegment(merged, record.line, record).segment, record }
+  return { segment: toRegistrySegment(merged, record, record).segment, record }
 }
 
 /** No calibration exists yet, so that naming one is a fault and not a factor of one. */

@@ -7,6 +7,7 @@ import { typicalPosition } from '../geo/line-positions.ts'
 import type { Registry, SegmentContent } from '../store/registry.ts'
 import type { App, Routes } from './app-type.ts'
 import { acceptGeoJson } from './body.ts'
+import { crsItems } from './crs.ts'
 import { FeatureIn, readFeature, type FeatureWire, type Remark } from './feature-in.ts'
 import { negotiate } from './negotiate.ts'
 import { booleanParameter, enumParameter } from './parameters.ts'
@@ -33,7 +34,13 @@ const CollectionIn = z
     type: z.literal('FeatureCollection'),
     features: z.array(FeatureIn).min(1).max(MAX_FEATURES),
   })
-  .meta({ id: 'SegmentCollectionInput', description: 'A GeoJSON collection of segments with unique ids.' })
+  .meta({
+    id: 'SegmentCollectionInput',
+    description:
+      'A GeoJSON collection of segments with unique ids. A crs member is refused unless it names CRS84.',
+  })
+
+type CollectionWire = z.output<typeof CollectionIn>
 
 const Told = z.object({
   pointer: z.string(),
@@ -56,6 +63,8 @@ const ImportReply = z
     registry_revision: z.int().min(0).max(1e9),
     faults: z.array(Told).describe('of a dry run; otherwise they are a problem'),
     remarks: z.array(Told).describe('what is doubtful and was accepted'),
+    faults_truncated: z.literal(true).optional().describe('present when there are more than 1000 faults'),
+    remarks_truncated: z.literal(true).optional().describe('present when there are more than 1000 remarks'),
   })
   .meta({ id: 'SegmentImport', description: 'What an import made, or would make.' })
 
@@ -98,8 +107,10 @@ function lineStarts(features: readonly FeatureWire[]): LonLat[][] {
   })
 }
 
-async function readAll(features: readonly FeatureWire[], keepsUnknown: boolean): Promise<ReadAll> {
-  const all: ReadAll = { contents: [], faults: repeatedIds(features), remarks: [] }
+async function readAll(collection: CollectionWire, keepsUnknown: boolean): Promise<ReadAll> {
+  const { features } = collection
+  const faults = [...crsItems(collection, '#'), ...repeatedIds(features)]
+  const all: ReadAll = { contents: [], faults, remarks: [] }
   const near = typicalPosition(lineStarts(features)) ?? undefined
   for (const [i, feature] of features.entries()) {
     const { content, faults, remarks } = readFeature(feature, `#/features/${i}`, keepsUnknown, near)
@@ -127,12 +138,12 @@ function foreseen(contents: readonly SegmentContent[], registry: Registry) {
 async function importSegments(
   request: FastifyRequest,
   reply: FastifyReply,
-  { features }: z.output<typeof CollectionIn>,
+  wire: CollectionWire,
   query: z.output<typeof ImportQuery>,
   service: Service,
 ) {
   const isDry = query.dry_run ?? false
-  const { contents, faults, remarks } = await readAll(features, query.unknown === 'keep')
+  const { contents, faults, remarks } = await readAll(wire, query.unknown === 'keep')
   if (faults.length > 0 && !isDry) throw refusedFeatures(faults)
   const made = isDry
     ? foreseen(contents, await service.store.current())
@@ -140,13 +151,15 @@ async function importSegments(
   const { registry } = await openView(service, reply)
   return {
     dry_run: isDry,
-    features: features.length,
+    features: wire.features.length,
     created: made.created,
     updated: made.updated,
     unchanged: made.unchanged,
     registry_revision: registry.revision,
     faults: faults.slice(0, MAX_TOLD),
     remarks: remarks.slice(0, MAX_TOLD),
+    ...(faults.length > MAX_TOLD && { faults_truncated: true as const }),
+    ...(remarks.length > MAX_TOLD && { remarks_truncated: true as const }),
   }
 }
 

@@ -1,11 +1,11 @@
 import { z } from 'zod'
 import { BANK_KINDS, BED_KINDS, DIRECTIONS, RECEPTOR_KINDS } from '../domain/segment.ts'
 import { crossCheck, type Report } from './cross-check.ts'
+import { CrossSectionFields, Slope } from './cross-section.schema.ts'
 import { checkSpeed, figure, Id, Label, speedFields, Text } from './fields.ts'
 import { GroupFields } from './group.schema.ts'
 
 const Distance = figure(0.1, 20000, 'sailing line to the waterline at the datum, m')
-const Slope = figure(0, 20, 'horizontal over vertical')
 
 const BANK = {
   label: Label,
@@ -33,48 +33,6 @@ const RegistryBankFields = z
   .strictObject({ ...BANK, line: BankLine.optional() })
   .meta({ id: 'RegistryBank', description: 'One bank of a registry segment, by its line or by a distance.' })
 
-const ProfilePoint = z.tuple([z.number().min(-20000).max(20000), z.number().min(-100).max(150)])
-
-const Profile = z
-  .strictObject({
-    label: Label,
-    profile: z
-      .array(ProfilePoint)
-      .min(3)
-      .max(2000)
-      .describe(
-        '[offset_m, bed_depth_m]: offset from the sailing line, positive to the right looking downstream, strictly rising; depth positive below the datum',
-      ),
-  })
-  .check(
-    crossCheck(({ profile }, report) => {
-      if (!Array.isArray(profile) || !profile.every((point) => Array.isArray(point))) return
-      profile.forEach(([offset], i) => {
-        const before = profile[i - 1]?.[0]
-        if (before !== undefined && !(offset > before)) {
-          report(['profile', i, 0], 'out-of-range', `must be above the offset before it, ${before}`)
-        }
-      })
-      const first = profile[0]?.[0] ?? 0
-      const last = profile.at(-1)?.[0] ?? 0
-      if (first > 0 || last < 0) {
-        report(
-          ['profile'],
-          'out-of-range',
-          'must reach from left of the sailing line to right of it: offset 0 lies outside',
-        )
-      }
-    }),
-  )
-
-export const CrossSectionFields = z
-  .union([
-    z.strictObject({ label: Label, bottom_width_m: figure(0, 20000, 'm') }),
-    z.strictObject({ label: Label, slope_h_per_v: Slope }),
-    Profile,
-  ])
-  .meta({ id: 'CrossSection', description: 'A trapezoid by bottom width or slope, or a surveyed profile.' })
-
 export const ReceptorFields = z
   .strictObject({
     label: Label,
@@ -84,7 +42,11 @@ export const ReceptorFields = z
       .enum(['left', 'right', 'nearer', 'farther'])
       .describe('looking downstream, or as the banks are given'),
     distance_m: figure(0.1, 20000, 'from the sailing line, m'),
-    chainage_m: figure(-1e7, 1e7, 'm').optional(),
+    chainage_m: figure(
+      -1e7,
+      1e7,
+      'of a registry segment: it counts at this place alone, where a station is put for it; left out, or where one section describes the whole segment, it counts all along, m',
+    ).optional(),
     max_wave_height_m: figure(0.01, 10, 'm; required except for moored small craft').optional(),
   })
   .check(
@@ -138,7 +100,11 @@ export const StationFields = z
       }
     }),
   )
-  .meta({ id: 'Station', description: 'Depth and width at a place along a segment.' })
+  .meta({
+    id: 'Station',
+    description:
+      'Depth and width at a place along a segment; both are interpolated by chainage between stations.',
+  })
 
 const COMMON = {
   name: Text.optional(),
@@ -191,16 +157,21 @@ export function checkGeometry(segment: Checked, report: Report): void {
   } else checkBankDistances(segment, report)
 }
 
-/** Two lines, two distances, or one distance and the width, give the section. */
+/** A line or a distance on each side, or one distance and the width, give the section. */
 function checkBankDistances(segment: Checked, report: Report): void {
   const { left, right } = { left: {}, right: {}, ...(segment.banks as object) } as Record<
     'left' | 'right',
     { distance_m?: unknown; line?: unknown }
   >
   if (left.line !== undefined || right.line !== undefined) {
-    if (left.line !== undefined && right.line !== undefined) return
-    const missing = left.line === undefined ? 'left' : 'right'
-    report(['banks', missing, 'line'], 'required', 'is required: both banks have a line, or neither')
+    for (const [side, bank] of Object.entries({ left, right })) {
+      if (bank.line !== undefined || bank.distance_m !== undefined) continue
+      report(
+        ['banks', side, 'distance_m'],
+        'required',
+        'is required: the other bank has a line, this one has none',
+      )
+    }
     return
   }
   const given = [left, right].filter((bank) => bank.distance_m !== undefined).length
@@ -231,8 +202,17 @@ export const RegistrySegmentFields = z
     banks: z
       .strictObject({ label: Label, left: RegistryBankFields, right: RegistryBankFields })
       .optional()
-      .describe('in place of bank_distance_m; left and right looking downstream'),
-    stations: z.array(StationFields).min(1).max(5000).optional(),
+      .describe(
+        'in place of bank_distance_m; left and right looking downstream, each by its line or its distance',
+      ),
+    stations: z
+      .array(StationFields)
+      .min(1)
+      .max(5000)
+      .optional()
+      .describe(
+        'in any order. Where figures differ by more than 2 % between neighbours, others are put between',
+      ),
   })
   .check(
     crossCheck((segment, report) => {

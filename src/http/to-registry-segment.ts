@@ -1,20 +1,38 @@
 import type { FaultItem } from '../domain/fault.ts'
 import { impossible } from '../domain/fault.ts'
 import type { LonLat } from '../domain/position.ts'
-import type { Segment } from '../domain/segment.ts'
-import { measureBanks } from '../geo/banks.ts'
-import { axisOf } from '../geo/chainage.ts'
-import { chainageScale } from '../geo/chainage-scale.ts'
+import type { Segment, Station } from '../domain/segment.ts'
+import { measureBanks, type MeasuredBanks } from '../geo/banks.ts'
+import { axisOf, type Axis } from '../geo/chainage.ts'
+import { chainageScale, type ChainageScale } from '../geo/chainage-scale.ts'
 import type { GeometryFinding } from '../geo/finding.ts'
-import { stationsOf, type GivenStation } from '../geo/stations-of.ts'
-import { toShape } from './section-shape.ts'
+import type { GivenStation, SingleFigures } from '../geo/station-figures.ts'
+import { stationsOf } from '../geo/stations-of.ts'
+import { receptorItems, wantedPlaces } from './receptor-places.ts'
+import { isProfile, toShape } from './section-shape.ts'
 import type { RegistrySegmentWire } from './segment.schema.ts'
-import { assembled, stoneItems, toSegment, type Identity } from './to-segment.ts'
+import { assembled, stoneItems, type Identity } from './to-segment.ts'
+import { toStations } from './to-stations.ts'
 
 /** A registry segment as it is computed with, and what was noticed about its geometry. */
 export interface Placed {
   readonly segment: Segment
   readonly findings: readonly GeometryFinding[]
+}
+
+/** The sailing line of a segment and its length, m. */
+export interface Site {
+  readonly line: readonly LonLat[]
+  readonly length: number
+}
+
+/** What the figures of a segment come from, and what clashes among them. */
+interface Sources {
+  /** the one station of a segment that a single section describes */
+  readonly only?: Station
+  readonly given: readonly GivenStation[]
+  readonly single: SingleFigures
+  readonly items: readonly FaultItem[]
 }
 
 /** A station as it is given; where bank lines count, its own distances do not. */
@@ -26,6 +44,7 @@ function toGiven(station: NonNullable<RegistrySegmentWire['stations']>[number]):
     chainage,
     depth,
     distances: [left, right],
+    hasSides: station.left_distance_m !== undefined,
     ...(station.cross_section && { shape: toShape(station.cross_section) }),
   }
 }
@@ -34,49 +53,100 @@ function itemOf({ pointer, detail, facts }: GeometryFinding, at: string): FaultI
   return { pointer: `${at}${pointer}`, code: 'clash', detail, ...(facts && { facts }) }
 }
 
-/** Stations along the line, with the distances that its bank lines give. */
-function placedByLines(wire: RegistrySegmentWire, line: readonly LonLat[], identity?: Identity): Placed {
-  const { banks } = wire
-  if (!banks?.left.line || !banks.right.line) throw new RangeError('Both banks have a line')
-  const axis = axisOf(line)
-  const scale = chainageScale(axis.length, wire.chainage_from_m, wire.chainage_to_m)
-  const given = (wire.stations ?? []).map(toGiven)
-  const at = given.map(({ chainage }) => scale.distanceAt(chainage))
-  const measured = measureBanks(axis, { left: banks.left.line, right: banks.right.line }, { at })
-  const faults = measured.findings.filter(({ level }) => level === 'fault')
-  if (faults.length > 0) throw impossible(faults.map((finding) => itemOf(finding, '#/segment/banks')))
-  const merged = stationsOf({
-    given,
-    single: { ...(wire.depth_m !== undefined && { depth: wire.depth_m }) },
-    banks: measured.stations,
-    shape: toShape(wire.cross_section),
-    scale,
-    length: axis.length,
-  })
-  const wrong = [
-    ...[...scale.findings, ...merged.findings]
-      .filter(({ level }) => level === 'fault')
-      .map((finding) => itemOf(finding, '#/segment')),
-    ...stoneItems(wire),
-  ]
-  if (wrong.length > 0) throw impossible(wrong)
+const faultsAt = (findings: readonly GeometryFinding[], at: string): FaultItem[] =>
+  findings.filter(({ level }) => level === 'fault').map((finding) => itemOf(finding, at))
+
+/** With one bank line the other bank needs distances of its own side. */
+function otherSideItems(wire: RegistrySegmentWire): FaultItem[] {
+  const { banks, stations = [] } = wire
+  if (!banks || (banks.left.line && banks.right.line)) return []
+  const other = banks.left.line ? 'right' : 'left'
+  const isKnown =
+    banks[other].distance_m !== undefined ||
+    (stations.length > 0 && stations.every(({ left_distance_m: left }) => left !== undefined))
+  if (isKnown) return []
+  const detail = `The ${other} bank has no line: give its distance here, or left and right distances at every station`
+  return [{ pointer: `#/segment/banks/${other}/distance_m`, code: 'clash', detail }]
+}
+
+function sourcesByLines(wire: RegistrySegmentWire): Sources {
+  const distances = [wire.banks?.left.distance_m, wire.banks?.right.distance_m] as const
   return {
-    segment: assembled(wire, merged.stations, identity),
-    findings: [...scale.findings, ...measured.findings, ...merged.findings],
+    given: (wire.stations ?? []).map(toGiven),
+    single: { distances, ...(wire.depth_m !== undefined && { depth: wire.depth_m }) },
+    items: otherSideItems(wire),
   }
 }
 
+/** Figures as they are described; a segment without stations is one section, and given as single figures. */
+function sourcesAsDescribed(wire: RegistrySegmentWire): Sources {
+  const { stations, items } = toStations(wire)
+  const [first] = stations
+  if (!wire.stations && first) {
+    return { only: first, given: [], single: {}, items }
+  }
+  const given = stations.map(({ chainage = 0, depth, distances, shape }, i) => ({
+    chainage,
+    depth,
+    distances,
+    ...((shape.kind === 'profile' || wire.stations?.[i]?.cross_section) && { shape }),
+  }))
+  return { given, single: {}, items }
+}
+
+const hasLine = ({ banks }: RegistrySegmentWire): boolean =>
+  banks?.left.line !== undefined || banks?.right.line !== undefined
+
+function measured(wire: RegistrySegmentWire, axis: Axis, scale: ChainageScale): MeasuredBanks {
+  const { left, right } = wire.banks ?? {}
+  const stations = (wire.stations ?? []).map(({ chainage_m: chainage }) => chainage)
+  const at = [...stations.map(scale.distanceAt), ...wantedPlaces(wire, scale, axis.length)]
+  return measureBanks(
+    axis,
+    { ...(left?.line && { left: left.line }), ...(right?.line && { right: right.line }) },
+    { at },
+  )
+}
+
+const NO_BANKS: MeasuredBanks = { stations: [], findings: [] }
+
 /**
- * The segment of a registry feature: from bank lines where it has them, else as described.
+ * The segment of a registry feature: distances from bank lines where it has them, the rest as described.
  *
  * @throws Fault `impossible-input` with every pair of figures that clash
  */
-export function toRegistrySegment(
-  wire: RegistrySegmentWire,
-  line: readonly LonLat[],
-  identity?: Identity,
-): Placed {
-  const hasLines = wire.banks?.left.line !== undefined && wire.banks.right.line !== undefined
-  if (hasLines) return placedByLines(wire, line, identity)
-  return { segment: toSegment(wire, identity), findings: [] }
+export function toRegistrySegment(wire: RegistrySegmentWire, site: Site, identity?: Identity): Placed {
+  const axis = hasLine(wire) ? axisOf(site.line) : undefined
+  const length = axis?.length ?? site.length
+  const scale = chainageScale(length, wire.chainage_from_m, wire.chainage_to_m)
+  const banks = axis ? measured(wire, axis, scale) : NO_BANKS
+  // a surveyed profile of the whole segment is its section, whatever the lines say
+  const byLines = axis !== undefined && !isProfile(wire.cross_section)
+  const { only, given, single, items } = byLines ? sourcesByLines(wire) : sourcesAsDescribed(wire)
+  const faults = [
+    ...faultsAt(scale.findings, '#/segment'),
+    ...faultsAt(banks.findings, '#/segment/banks'),
+    ...items,
+    ...stoneItems(wire),
+    ...receptorItems(wire, scale, length),
+  ]
+  if (faults.length > 0) throw impossible(faults)
+  if (only) {
+    return { segment: assembled(wire, [only], identity), findings: [...scale.findings, ...banks.findings] }
+  }
+  const merged = stationsOf({
+    given,
+    single,
+    banks: byLines ? banks.stations : [],
+    shape: toShape(wire.cross_section),
+    scale,
+    length,
+    wanted: wantedPlaces(wire, scale, length),
+  })
+  const wrong = faultsAt(merged.findings, '#/segment')
+  if (wrong.length > 0) throw impossible(wrong)
+  return {
+    segment: assembled(wire, merged.stations, identity),
+    findings: [...scale.findings, ...banks.findings, ...merged.findings],
+  }
 }

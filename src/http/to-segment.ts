@@ -1,6 +1,6 @@
 import type { FaultItem } from '../domain/fault.ts'
 import { impossible } from '../domain/fault.ts'
-import type { Bank, PostedLimit, Receptor, Segment, Side } from '../domain/segment.ts'
+import type { Bank, PostedLimit, Receptor, Segment, Side, Station } from '../domain/segment.ts'
 import { speedOf } from './fields.ts'
 import { toGroup } from './group.schema.ts'
 import type { RegistrySegmentWire, SegmentWire } from './segment.schema.ts'
@@ -49,13 +49,25 @@ function toBanks(wire: AnySegmentWire): readonly [Bank, Bank] {
     : [toBank({}, 'nearer', kind), toBank({}, 'farther', kind)]
 }
 
-function toReceptor(wire: NonNullable<AnySegmentWire['receptors']>[number]): Receptor {
+/** Index of the station nearest to a chainage; undefined where one section describes the whole segment. */
+function stationAt(stations: readonly Station[], chainage: number | undefined): number | undefined {
+  if (chainage === undefined || stations.length < 2) return undefined
+  const away = ({ chainage: at = chainage }: Station) => Math.abs(at - chainage)
+  return stations.reduce((found, next) => (away(next) < away(found) ? next : found)).index
+}
+
+function toReceptor(
+  wire: NonNullable<AnySegmentWire['receptors']>[number],
+  stations: readonly Station[],
+): Receptor {
+  const station = stationAt(stations, wire.chainage_m)
   return {
     kind: wire.kind,
     side: wire.side,
     distance: wire.distance_m,
     ...(wire.name !== undefined && { name: wire.name }),
     ...(wire.chainage_m !== undefined && { chainage: wire.chainage_m }),
+    ...(station !== undefined && { station }),
     ...(wire.max_wave_height_m !== undefined && { maxWaveHeight: wire.max_wave_height_m }),
   }
 }
@@ -92,7 +104,7 @@ export function assembled(wire: AnySegmentWire, stations: Segment['stations'], i
     ...(wire.waterway !== undefined && { waterway: wire.waterway }),
     stations,
     banks: toBanks(wire),
-    receptors: (wire.receptors ?? []).map(toReceptor),
+    receptors: (wire.receptors ?? []).map((receptor) => toReceptor(receptor, stations)),
     postedLimits: (wire.posted_limits ?? []).map(toPostedLimit),
     confinement: wire.confinement ?? 'confined',
     ...(wire.bed_kind && { bedKind: wire.bed_kind }),
@@ -104,14 +116,14 @@ export function assembled(wire: AnySegmentWire, stations: Segment['stations'], i
 }
 
 /**
- * The segment of a request, or one of the registry without bank lines.
+ * The segment of a request.
  *
  * @throws Fault `impossible-input` with every pair of figures that clash
  */
-export function toSegment(wire: AnySegmentWire, identity?: Identity): Segment {
+export function toSegment(wire: AnySegmentWire): Segment {
   const { stations, items } = toStations(wire)
   const errors = [...items, ...stoneItems(wire)]
   const [first, ...rest] = stations
   if (errors.length > 0 || !first) throw impossible(errors)
-  return assembled(wire, [first, ...rest], identity)
+  return assembled(wire, [first, ...rest])
 }

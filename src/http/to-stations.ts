@@ -120,7 +120,7 @@ function placesOf(wire: AnySegmentWire): Place[] {
       nearer: wire.bank_distance_m ?? station.bank_distance_m,
       left: station.left_distance_m,
       right: station.right_distance_m,
-      section: wire.cross_section ?? station.cross_section,
+      section: station.cross_section ?? wire.cross_section,
       pointer: `#/segment/stations/${i}`,
     }))
   }

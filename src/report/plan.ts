@@ -94,7 +94,7 @@ function ends(naming: Naming): Markup[] {
   })
 }
 
-/** Stations of the survey, the one that governs marked. */
+/** Stations where something is known, and the one that governs, marked. */
 function stations(naming: Naming, advisory: Advisory): Markup[] {
   const { sketch } = naming
   const { segment, station: governs } = advisory.decision.situation
@@ -103,6 +103,7 @@ function stations(naming: Naming, advisory: Advisory): Markup[] {
     const share = shareOf(sketch, station.chainage)
     if (share === undefined) return markup``
     const isGoverning = station.index === governs.index
+    if (station.isBetween && !isGoverning) return markup``
     const [mark, a, b] = across(
       sketch,
       share,

@@ -5,7 +5,7 @@ const UNAVAILABLE = 'The database of the registry does not answer'
 const FULL = 'The database of the registry has no room left'
 
 /** A fault of the database with what it said as the cause: for the log, never for the caller. */
-function unavailable(cause: unknown, message = UNAVAILABLE): Fault {
+export function unavailable(cause: unknown, message = UNAVAILABLE): Fault {
   return withCause(new Fault('store-unavailable', message), cause)
 }
 

@@ -3,7 +3,8 @@ import { expect, test } from 'vitest'
 import type { Station } from '../../src/domain/segment.ts'
 import type { BankStation } from '../../src/geo/banks.ts'
 import { chainageScale } from '../../src/geo/chainage-scale.ts'
-import { stationsOf, type GivenStation, type StationSources } from '../../src/geo/stations-of.ts'
+import type { GivenStation, StationSources } from '../../src/geo/station-figures.ts'
+import { stationsOf } from '../../src/geo/stations-of.ts'
 import { evenly } from '../support/arbitraries.ts'
 import { expectClose } from '../support/expect-close.ts'
 
@@ -27,7 +28,7 @@ const given = (chainage: number, depth: number, left: number, right: number): Gi
   distances: [left, right],
 })
 
-const merge = (sources: Partial<StationSources>) =>
+const mergeAll = (sources: Partial<StationSources>) =>
   stationsOf({
     given: [],
     single: {},
@@ -37,6 +38,12 @@ const merge = (sources: Partial<StationSources>) =>
     length: 1000,
     ...sources,
   })
+
+/** Without the stations that are put between others. */
+function merge(sources: Partial<StationSources>) {
+  const { stations, findings } = mergeAll(sources)
+  return { stations: stations.filter(({ isBetween }) => !isBetween), findings }
+}
 
 const rows = (stations: readonly Station[]) =>
   stations.map(({ chainage, depth, width, distances }) => [chainage, depth, width, ...distances])
@@ -95,7 +102,8 @@ test('falling chainages keep the order of the sailing line', () => {
   const { stations } = merge({ scale, given: [given(4100, 3, 30, 30), given(4900, 5, 30, 30)] })
   expect(stations.map(({ index, chainage, depth }) => [index, chainage, depth])).toEqual([
     [0, 4900, 5],
-    [1, 4100, 3],
+    // ln(5/3) / ln 1.02 is 25.8: 25 are put between
+    [26, 4100, 3],
   ])
 })
 
@@ -114,6 +122,14 @@ test('a station outside the segment only serves to interpolate, with a remark', 
     code: 'station-outside',
     facts: { first_chainage_m: -1000 },
   })
+})
+
+test('with a station outside the end on its side has its own figures', () => {
+  const { stations } = merge({ given: [given(-1000, 2, 30, 30), given(1000, 4, 30, 30)] })
+  expect(rows(stations)).toEqual([
+    [0, 3, 60, 30, 30],
+    [1000, 4, 60, 30, 30],
+  ])
 })
 
 test('with all stations outside both ends are interpolated', () => {
@@ -235,4 +251,77 @@ test('a smooth widening of 2000 stations leaves a few', () => {
   )
   const { stations } = merge({ banks, single: { depth: 4 }, length: 20_000, scale: chainageScale(20_000) })
   expect(stations.length).toBeLessThan(20)
+})
+
+test('between stations whose figures differ there are others, straight between them and marked', () => {
+  const { stations } = mergeAll({ given: [given(0, 4, 30, 30), given(1000, 3.85, 31, 30)] })
+  expect(stations.map(({ index, isBetween }) => [index, isBetween])).toEqual([
+    [0, undefined],
+    [1, true],
+    [2, undefined],
+  ])
+  // the depth, 4 m less 0.15 m in 1000 m, is the first to change by a fiftieth: at 4 m / 1.02
+  const [, second] = rows(stations)
+  expectClose(second![0]!, 522.87581699, { abs: 1e-6 })
+  expectClose(second![1]!, 3.92156862745, { abs: 1e-9 })
+  expectClose(second![3]!, 30.52287581699, { abs: 1e-9 })
+})
+
+test('bank lines have stations put between too, where they run apart', () => {
+  const { stations } = mergeAll({
+    banks: fromLines([0, 20, 30], [1000, 30, 30]),
+    single: { depth: 4 },
+  })
+  // ln 1.5 / ln 1.02 is 20.5: 20 between the two
+  expect(stations).toHaveLength(22)
+  expect(stations.every(({ depth, width, distances }) => depth === 4 && width === distances[0] + 30)).toBe(
+    true,
+  )
+})
+
+test('a bottom width or a slope is straight between stations that have it, else that of the segment', () => {
+  const bottom = (bottomWidth: number) => ({ kind: 'trapezoid', bottomWidth }) as const
+  const slope = (n: number) => ({ kind: 'trapezoid', slope: n }) as const
+  const shapeAt500 = (a: GivenStation['shape'], b: GivenStation['shape']) =>
+    mergeAll({
+      given: [
+        { ...given(0, 3, 30, 30), ...(a && { shape: a }) },
+        { ...given(1000, 3, 30, 30), ...(b && { shape: b }) },
+      ],
+      wanted: [500],
+      shape: slope(3),
+    }).stations[1]!.shape
+  expect(shapeAt500(bottom(20), bottom(30))).toEqual(bottom(25))
+  expect(shapeAt500(slope(1), slope(2))).toEqual(slope(1.5))
+  expect(shapeAt500(slope(1), undefined)).toEqual(slope(2))
+  expect(shapeAt500(bottom(20), slope(2))).toEqual(slope(3))
+})
+
+test('beside a surveyed profile nothing is put between and no wanted place is made', () => {
+  const profile = { kind: 'profile', offsets: [-20, 0, 20], bedDepths: [0, 6, 0] } as const
+  const { stations } = mergeAll({
+    given: [given(0, 3, 30, 30), { ...given(500, 6, 20, 20), shape: profile }, given(1000, 3, 30, 30)],
+    wanted: [250, 750],
+  })
+  expect(rows(stations)).toEqual([
+    [0, 3, 60, 30, 30],
+    [500, 6, 40, 20, 20],
+    [1000, 3, 60, 30, 30],
+  ])
+})
+
+test('a wanted place is a station even where nothing changes, but not where one section holds all along', () => {
+  const banks = fromLines([0, 30, 40], [1000, 30, 40])
+  const alongs = (sources: Partial<StationSources>) => mergeAll(sources).stations.map((s) => s.chainage)
+  expect(alongs({ banks, single: { depth: 4 }, wanted: [620, 0, 1000] })).toEqual([0, 620, 1000])
+  expect(alongs({ single: { depth: 4, distances: [30, 30] }, wanted: [620] })).toEqual([undefined])
+})
+
+test('a distance whose side is not known is held against the line that it fits', () => {
+  const banks = fromLines([0, 40, 20], [1000, 40, 20])
+  const found = (first: number, second: number) =>
+    merge({ banks, given: [{ ...given(500, 3, first, second), hasSides: false }] }).findings
+  expect(found(20, 40)).toEqual([])
+  expect(found(20, 70)).toMatchObject([{ code: 'widths-differ', facts: { given_m: 20, line_m: 40 } }])
+  expect(merge({ banks, given: [given(500, 3, 20, 40)] }).findings).toHaveLength(1)
 })

@@ -208,6 +208,22 @@ describe('an import', () => {
     expect(problem.errors).toHaveLength(1000)
     expect(problem.errors_truncated).toBe(true)
   })
+
+  test('tells that there are more than 1000 faults or remarks', async () => {
+    const { post } = registryService()
+    const features = (number: number, properties: Json) =>
+      Array.from({ length: number }, (_, i) => canal(`s${i}`, properties))
+    const dry = async (number: number, properties: Json) => {
+      const reply = await post(`${IMPORT}?dry_run=true`, collection(...features(number, properties)))
+      const { faults, remarks, ...rest } = reply.json<Imported & Json>()
+      return [faults.length, rest['faults_truncated'], remarks.length, rest['remarks_truncated']]
+    }
+    const doubtful = { chainage_from_m: 0, chainage_to_m: 9000 }
+    expect(await dry(1000, { depth_m: -1 })).toEqual([1000, undefined, 0, undefined])
+    expect(await dry(1001, { depth_m: -1 })).toEqual([1000, true, 0, undefined])
+    expect(await dry(1000, doubtful)).toEqual([0, undefined, 1000, undefined])
+    expect(await dry(1001, doubtful)).toEqual([0, undefined, 1000, true])
+  })
 })
 
 describe('geometry', () => {
@@ -428,11 +444,11 @@ describe('bank lines', () => {
     }
   })
 
-  test('of one bank alone are refused, and short ones and other widths are remarks', async () => {
+  test('of one bank and nothing of the other are refused, and short ones and other widths are remarks', async () => {
     const one = { banks: { left: { line: lineString(CHANNEL.left) }, right: {} } }
     const reply = await registryService().post(IMPORT, collection(withLines('a', CHANNEL, one)))
     expect(faultsOf(expectProblem(reply, 400, 'invalid-request'))).toEqual([
-      '#/features/0/properties/banks/right/line required',
+      '#/features/0/properties/banks/right/distance_m required',
     ])
     const short = { ...CHANNEL, left: CHANNEL.left.slice(0, 20) }
     const stations = [{ chainage_m: 0, depth_m: 4, width_m: 90, left_distance_m: 30, right_distance_m: 60 }]

@@ -1,33 +1,17 @@
-import { existsSync } from 'node:fs'
-import { chromium, type Browser, type Page } from 'playwright-core'
+import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { VESSEL_CLASSES } from '../../src/domain/vessel-classes.ts'
 import { overviewPage } from '../../src/report/overview.ts'
 import { segmentSheet } from '../../src/report/sheet.ts'
+import { launchBrowser } from '../support/browser.ts'
 import { CASES, advisoryOf, changed, demo, sheetParts } from '../support/sheets.ts'
 
-const CHROMIUM = '/usr/bin/chromium'
 const WIDTHS = [390, 1280] as const
 
 let browser: Browser | undefined
 
 beforeAll(async () => {
-  if (!existsSync(CHROMIUM)) {
-    throw new Error(`${CHROMIUM} is missing: install it with "apt-get install chromium"`)
-  }
-  browser = await chromium.launch({
-    executablePath: CHROMIUM,
-    args: [
-      '--headless',
-      '--no-sandbox',
-      '--disable-gpu',
-      '--disable-quic',
-      '--no-first-run',
-      '--disable-background-networking',
-      '--disable-component-update',
-      '--disable-sync',
-    ],
-  })
+  browser = await launchBrowser()
 })
 
 afterAll(async () => {

@@ -37,6 +37,8 @@ export function registryService(
 ): RegistryService {
   const logged: string[] = []
   const parts = serviceParts(readConfig({ DATABASE_URL: 'sqlite::memory:', DEMO: 'false', ...environment }))
+  // a registry that cannot be opened is told by the replies
+  parts.opened.catch(() => undefined)
   const log = pino({ level: 'trace' }, { write: (line: string) => void logged.push(line) })
   const app = buildApp({ ...parts, log })
   whenDone(async () => {

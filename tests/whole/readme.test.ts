@@ -61,7 +61,8 @@ describe('the README', () => {
     const stated =
       /: ([\d.]+) km\/h, and (\d+) km\/h on the sign[\s\S]*?critical speed is ([\d.]+) km\/h/.exec(readme)
     expect(stated?.slice(1)).toEqual([
-      advisory.recommended_max_speed.over_ground.kmh.toFixed(2),
+      // a maximum is shown rounded down, as on the sheet
+      (Math.floor(advisory.recommended_max_speed.over_ground.kmh * 100) / 100).toFixed(2),
       String(advisory.recommended_max_speed.sign.value),
       advisory.critical_speed.through_water.kmh.toFixed(2),
     ])

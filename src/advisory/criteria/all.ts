@@ -4,7 +4,7 @@ import { clearanceCriterion } from './clearance.ts'
 import type { Criterion } from './criterion.ts'
 import { criticalRatioCriterion, depthFroudeCriterion } from './nearness.ts'
 import { drawdownCriterion, returnCurrentCriterion } from './primary-wave.ts'
-import { receptorWaveCriterion } from './receptor-wave.ts'
+import { isAt, receptorWaveCriterion } from './receptor-wave.ts'
 import { wakeWashCriterion } from './wake-wash.ts'
 
 /**
@@ -15,7 +15,7 @@ export function waterCriteria(situation: Situation): Criterion[] {
   const criteria = [criticalRatioCriterion(situation), depthFroudeCriterion(situation)]
   addForBanks(criteria, situation, bankWaveCriterion)
   situation.segment.receptors.forEach((receptor, i) => {
-    criteria.push(receptorWaveCriterion(situation, receptor, i))
+    if (isAt(receptor, situation.station)) criteria.push(receptorWaveCriterion(situation, receptor, i))
   })
   criteria.push(clearanceCriterion(situation))
   addForBanks(criteria, situation, drawdownCriterion)

@@ -1,4 +1,4 @@
-import type { Receptor } from '../../domain/segment.ts'
+import type { Receptor, Station } from '../../domain/segment.ts'
 import { WAVE_METHODS } from '../../hydro/waves/all.ts'
 import { bankSternWave, sternWaveFirstSpeed } from '../primary.ts'
 import { secondaryFirstSpeed, secondaryWave } from '../secondary-wave.ts'
@@ -12,6 +12,10 @@ export function bankOfReceptor(situation: Situation, receptor: Receptor): 0 | 1 
   if (receptor.side === first.side) return 0
   return receptor.side === second.side ? 1 : situation.nearer
 }
+
+/** Whether a receptor counts at a station: everywhere, or where it lies. */
+export const isAt = (receptor: Receptor, station: Station): boolean =>
+  receptor.station === undefined || receptor.station === station.index
 
 function limitOf(situation: Situation, receptor: Receptor): { limit: number; origin: Origin } {
   const requested = situation.options.limits.maxReceptorWaveHeight
