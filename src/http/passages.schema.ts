@@ -118,7 +118,7 @@ const EVENT_COLUMNS = {
   peak_max_over_ground_kn: number('recommended maximum at the peak, kn'),
   peak_excess_kn: number('kn'),
   mean_excess_kn: number('mean of the reports, kn'),
-  governing_criterion: z.enum(CRITERION_IDS).nullable(),
+  governing_criterion: z.enum(CRITERION_IDS),
   peak_bank_wave_height_m: number('higher one of both banks, m'),
   peak_critical_ratio: number('at the peak'),
   posted_peak_excess_kn: number('highest excess over the posted limit, kn'),

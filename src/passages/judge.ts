@@ -3,18 +3,23 @@ import { currentAlong } from '../advisory/direction.ts'
 import { effectsAt, waveEnergies, type Effects } from '../advisory/effects.ts'
 import type { Conditions } from '../domain/conditions.ts'
 import type { Vessel } from '../domain/vessel.ts'
-import { maxOf, Maxima, postedOverGround, type Bound, type Maximum } from './maxima.ts'
+import { maxOf, Maxima, postedOverGround, type Maximum } from './maxima.ts'
 import {
-  NOT_COMPUTED,
+  energiesOnly,
   sailedFigures,
+  UNMOVED,
   type Judgement,
   type Judging,
   type PassageVerdict,
+  type SailedFigures,
 } from './judgement.ts'
 import type { PassageCaution } from './passage-cautions.ts'
-import type { Placement } from './placement.ts'
+import type { Whereabouts } from './placement.ts'
 import type { PositionReport } from './position-report.ts'
 import type { VesselGuess } from './vessel-guess.ts'
+
+/** What of a report a judgement depends on, besides where it is. */
+export type Sailed = Pick<PositionReport, 'speed' | 'waterLevel' | 'current'>
 
 /** One loading of the vessel, held against its own maximum. */
 interface Assessed {
@@ -57,10 +62,8 @@ export class Judge {
    * @param placement  of status `matched`
    * @returns undefined when the vessel does not fit the water in any loading
    */
-  judge(report: PositionReport, placement: Placement, guess: VesselGuess): Judgement | undefined {
-    const conditions = this.#conditionsOf(report, placement)
-    const slow = this.#surelyWithin(report, placement, guess, conditions)
-    if (slow) return slow
+  judge(report: Sailed, placement: Whereabouts, guess: VesselGuess): Judgement | undefined {
+    const conditions = conditionsOf(report, placement, this.#judging)
     const all = guess.variants.flatMap((vessel) => this.#assess(report, placement, vessel, conditions))
     const [first, ...rest] = all
     if (!first) return undefined
@@ -68,9 +71,11 @@ export class Judge {
     const { maximum, max } = chosen
     const { situation, vessel, decision } = maximum
     const throughWater = report.speed - currentAlong(conditions, decision.direction)
-    const effects = throughWater > 0 ? effectsAt(situation, throughWater) : undefined
-    const postedLimit = postedOverGround(decision)
+    const verdict = verdictOf(all)
     const { isFull } = this.#judging
+    const isShown = isFull || verdict !== 'within'
+    const effects = isShown && throughWater > 0 ? effectsAt(situation, throughWater) : undefined
+    const postedLimit = postedOverGround(decision)
     return {
       guess,
       vessel,
@@ -82,10 +87,10 @@ export class Judge {
       maxOverGround: max,
       sailingLineMax: isFull ? this.#lineMax(maximum, placement, conditions) : NaN,
       excess: report.speed - max,
-      verdict: verdictOf(all),
+      verdict,
       postedLimit,
       postedExcess: report.speed - postedLimit,
-      ...sailedFigures(effects, maximum.leftBank),
+      ...figuresOf(maximum, throughWater, effects),
       cautions: isFull ? cautionsOf(chosen, effects, guess, all.length) : [],
     }
   }
@@ -95,7 +100,7 @@ export class Judge {
    *
    * @param shift  m
    */
-  effectOfOffset(judgement: Judgement, placement: Placement, shift: number): number {
+  effectOfOffset(judgement: Judgement, placement: Whereabouts, shift: number): number {
     const { vessel, conditions, maxOverGround } = judgement
     if (this.#judging.position === 'sailing-line') return 0
     const changes = [-shift, shift]
@@ -108,53 +113,9 @@ export class Judge {
     return changes.length === 0 ? 0 : changes.reduce((sum, change) => sum + change, 0) / changes.length
   }
 
-  /** A report so slow that earlier maxima tell that it is within, with nothing more than totals need. */
-  #surelyWithin(
-    report: PositionReport,
-    placement: Placement,
-    guess: VesselGuess,
-    conditions: Conditions,
-  ): Judgement | undefined {
-    const { isFull, position } = this.#judging
-    const throughWater = report.speed - currentAlong(conditions, conditions.direction)
-    const hasDirection = conditions.current === 0 || conditions.direction !== undefined
-    if (isFull || position === 'sailing-line' || !hasDirection || !(throughWater > 0)) return undefined
-    const bounds = guess.variants.map((vessel) => this.#maxima.bound(placement, vessel, conditions))
-    if (!bounds.every((bound) => bound && report.speed <= bound.speed)) return undefined
-    const [laden, empty] = bounds
-    // of two loadings the figures are those of the lower maximum
-    if (!laden || (empty && !isLower(laden, empty))) return undefined
-    const [vessel] = guess.variants
-    const seen = this.#maxima.seen(placement, vessel, conditions)
-    if (!seen) return undefined
-    const energies = waveEnergies(seen.situation, throughWater)
-    return {
-      guess,
-      vessel,
-      conditions,
-      throughWater,
-      ...NOT_COMPUTED,
-      verdict: 'within',
-      postedLimit: laden.postedLimit,
-      postedExcess: report.speed - laden.postedLimit,
-      waveEnergies: seen.leftBank === 0 ? energies : [energies[1], energies[0]],
-    }
-  }
-
-  #conditionsOf(report: PositionReport, { direction }: Placement): Conditions {
-    const { waterLevel, current } = this.#judging
-    return {
-      waterLevel: Number.isNaN(report.waterLevel) ? waterLevel : report.waterLevel,
-      current: Number.isNaN(report.current) ? current : report.current,
-      isWaterLevelGiven: true,
-      isCurrentGiven: true,
-      ...(direction && { direction }),
-    }
-  }
-
   #assess(
-    report: PositionReport,
-    placement: Placement,
+    report: Sailed,
+    placement: Whereabouts,
     vessel: Vessel,
     conditions: Conditions,
   ): readonly Assessed[] {
@@ -169,14 +130,33 @@ export class Judge {
     return [{ maximum, max, exceeds: Number.isNaN(max) || report.speed - max > tolerance }]
   }
 
-  #lineMax({ vessel, decision }: Maximum, placement: Placement, conditions: Conditions): number {
+  #lineMax({ vessel, decision }: Maximum, placement: Whereabouts, conditions: Conditions): number {
     if (this.#judging.position === 'sailing-line') return maxOf(decision)
     const found = this.#maxima.onSailingLine(placement, vessel, conditions)
     return found ? maxOf(found.decision) : NaN
   }
 }
 
-const isLower = (a: Bound, b: Bound): boolean => a.before <= b.before && a.after <= b.after
+/** The water of a report: what its row says, else what the call says. */
+export function conditionsOf(report: Sailed, { direction }: Whereabouts, judging: Judging): Conditions {
+  return {
+    waterLevel: Number.isNaN(report.waterLevel) ? judging.waterLevel : report.waterLevel,
+    current: Number.isNaN(report.current) ? judging.current : report.current,
+    isWaterLevelGiven: true,
+    isCurrentGiven: true,
+    ...(direction && { direction }),
+  }
+}
+
+function figuresOf(
+  { situation, leftBank }: Maximum,
+  throughWater: number,
+  effects: Effects | undefined,
+): SailedFigures {
+  if (effects) return sailedFigures(effects, leftBank)
+  if (!(throughWater > 0)) return UNMOVED
+  return energiesOnly(waveEnergies(situation, throughWater), leftBank)
+}
 
 function cautionsOf(
   { maximum }: Assessed,

@@ -31,9 +31,9 @@ export interface Judgement {
   readonly throughWater: number
   /** to the left and to the right waterline at the level, from the position as reported, m */
   readonly distances: readonly [left: number, right: number]
-  /** of the maximum that the verdict uses; undefined where it was not computed */
-  readonly outcome: Outcome | undefined
-  readonly governing: CriterionId | undefined
+  /** of the maximum that the verdict uses */
+  readonly outcome: Outcome
+  readonly governing: CriterionId
   /** that the verdict uses, over ground, m/s; NaN without a safe speed */
   readonly maxOverGround: number
   readonly sailingLineMax: number
@@ -42,7 +42,7 @@ export interface Judgement {
   /** over ground, m/s */
   readonly postedLimit: number
   readonly postedExcess: number
-  /** as sailed; NaN when the vessel does not move through the water, or no method covers it */
+  /** as sailed; NaN when the vessel does not move through the water, no method covers it, or totals do not need it */
   readonly depthFroudeNumber: number
   readonly criticalRatio: number
   readonly waveHeights: readonly [left: number, right: number]
@@ -51,32 +51,20 @@ export interface Judgement {
   readonly cautions: readonly string[]
 }
 
-type SailedFigures = Pick<Judgement, 'depthFroudeNumber' | 'criticalRatio' | 'waveHeights' | 'waveEnergies'>
+export type SailedFigures = Pick<
+  Judgement,
+  'depthFroudeNumber' | 'criticalRatio' | 'waveHeights' | 'waveEnergies'
+>
 
-const UNMOVED: SailedFigures = {
+export const UNMOVED: SailedFigures = {
   depthFroudeNumber: NaN,
   criticalRatio: NaN,
   waveHeights: [NaN, NaN],
   waveEnergies: [NaN, NaN],
 }
 
-/** Of a report so slow that it needs no maximum of its own. */
-export const NOT_COMPUTED = {
-  distances: [NaN, NaN],
-  outcome: undefined,
-  governing: undefined,
-  maxOverGround: NaN,
-  sailingLineMax: NaN,
-  excess: NaN,
-  depthFroudeNumber: NaN,
-  criticalRatio: NaN,
-  waveHeights: [NaN, NaN],
-  cautions: [],
-} as const
-
-/** What is kept of the effects of a report: a log may hold many at a time. */
-export function sailedFigures(effects: Effects | undefined, leftBank: 0 | 1): SailedFigures {
-  if (!effects) return UNMOVED
+/** What is kept of a report as sailed: a log may hold many at a time. */
+export function sailedFigures(effects: Effects, leftBank: 0 | 1): SailedFigures {
   const left = effects.banks[leftBank]
   const right = effects.banks[leftBank === 0 ? 1 : 0]
   return {
@@ -86,3 +74,9 @@ export function sailedFigures(effects: Effects | undefined, leftBank: 0 | 1): Sa
     waveEnergies: [left.waveEnergy, right.waveEnergy],
   }
 }
+
+/** What totals need of a report that is within its maximum. */
+export const energiesOnly = (energies: readonly [number, number], leftBank: 0 | 1): SailedFigures => ({
+  ...UNMOVED,
+  waveEnergies: leftBank === 0 ? energies : [energies[1], energies[0]],
+})

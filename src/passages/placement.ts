@@ -29,3 +29,6 @@ export interface Placement {
   /** of motion along the fairway; undefined when it cannot be told */
   readonly direction: Direction | undefined
 }
+
+/** What of a placement a maximum depends on. */
+export type Whereabouts = Pick<Placement, 'fairway' | 'chainage' | 'offset' | 'direction'>
