@@ -11,6 +11,7 @@ import { serviceRoutes } from './http/service-routes.ts'
 import { deferredStore } from './store/deferred.ts'
 import { openStore } from './store/open.ts'
 import type { Store } from './store/registry.ts'
+import { JudgeThreads } from './threads/judge-threads.ts'
 
 /** Examples and the invented waterway that the service shows, found from the sources and from the build alike. */
 const EXAMPLES = new URL('../openapi/examples/', import.meta.url)
@@ -32,7 +33,14 @@ export function serviceParts(config: Config, onLostConnection?: (error: Error) =
   const now = () => new Date().toISOString()
   const opening = openRegistry(config, now, onLostConnection)
   const store = deferredStore(config.databaseUrl.startsWith('sqlite:') ? 'sqlite' : 'postgres', opening)
-  const service: Service = { store, serviceVersion: version, now, bodyTimeout: config.requestTimeout }
+  const judges = new JudgeThreads()
+  const service: Service = {
+    store,
+    serviceVersion: version,
+    now,
+    bodyTimeout: config.requestTimeout,
+    judges,
+  }
   return {
     config,
     service,
@@ -52,7 +60,10 @@ export function serviceParts(config: Config, onLostConnection?: (error: Error) =
     routes: serviceRoutes(service),
     versions: { service: version, methods: METHOD_VERSION },
     isReady: async () => ({ registryRevision: (await store.current()).revision, database: store.kind }),
-    onClose: () => store.close(),
+    onClose: async () => {
+      await judges.end()
+      await store.close()
+    },
     examples: readExamples(),
     findExample: async () => {
       const registry = await store.current()

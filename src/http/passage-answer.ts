@@ -1,7 +1,10 @@
-import type { Finding, PassageCheck } from '../passages/check.ts'
+import type { Finding, PassageCheck, PlacedRow } from '../passages/check.ts'
 import type { PassageEvent } from '../passages/events.ts'
+import type { Judgement } from '../passages/judgement.ts'
 import type { LogRow } from '../passages/position-report.ts'
+import type { JudgeSession } from '../threads/judge-threads.ts'
 import { csvRow, type CsvCell } from './csv-write.ts'
+import { inOrder } from './in-order.ts'
 import { toFiniteJson } from './json.ts'
 import { summaryParts, toEventRow, toReportRow } from './passage-lines.ts'
 import {
@@ -27,8 +30,8 @@ export interface AnswerSettings {
 
 /** Rows that are checked before other requests have their turn: some 10 ms of work. */
 const ROWS_AT_ONCE = 250
-/** Characters that are handed on together. */
-const PIECE = 32_768
+/** Pieces that are judged at a time: some wait at each thread while one is written. */
+const PIECES_AT_ONCE = 12
 
 const jsonLine = (type: string, value: object): string => `${toFiniteJson({ type, ...value })}\n`
 
@@ -87,6 +90,29 @@ function ending(check: PassageCheck, log: Log, { format, detail, about }: Answer
   return jsonLine('summary', { complete: true, from, to, reports, ...rest, ...about })
 }
 
+/** Rows placed, and judged where they are matched. */
+async function judged(
+  rows: readonly LogRow[],
+  check: PassageCheck,
+  session: JudgeSession,
+): Promise<readonly (readonly [PlacedRow, Judgement | undefined])[]> {
+  const placed = rows.map((row) => check.place(row))
+  const matched = placed.flatMap((row) => row.matched ?? [])
+  const judgements = matched.length > 0 ? await session.judge(matched) : []
+  let next = 0
+  return placed.map((row) => [row, row.matched ? judgements[next++] : undefined])
+}
+
+/** Batches of rows cut so that other requests have their turn between them. */
+async function* pieces(batches: AsyncIterable<readonly LogRow[]>): AsyncGenerator<readonly LogRow[]> {
+  for await (const batch of batches) {
+    for (let from = 0; from < batch.length; from += ROWS_AT_ONCE) {
+      yield batch.slice(from, from + ROWS_AT_ONCE)
+      await new Promise(setImmediate)
+    }
+  }
+}
+
 /**
  * The answer to a log, piece by piece as it is read; with events or the summary only, nothing before the log has ended.
  * Ending it early ends the reading.
@@ -94,26 +120,28 @@ function ending(check: PassageCheck, log: Log, { format, detail, about }: Answer
 export async function* passageAnswer(
   log: Log,
   check: PassageCheck,
+  session: JudgeSession,
   settings: AnswerSettings,
 ): AsyncGenerator<string> {
   const write = writersOf(settings)
   const isHeld = settings.detail !== 'reports'
   let text = write.head
-  let taken = 0
-  for await (const rows of log.rows) {
-    for (const row of rows) {
-      text += write.report(check.take(row))
-      for (const event of check.takeEvents()) text += write.event(event)
-      taken += 1
-      if (taken % ROWS_AT_ONCE === 0) await new Promise(setImmediate)
-      if (isHeld || text.length < PIECE) continue
+  try {
+    for await (const rows of inOrder(
+      pieces(log.rows),
+      (rows) => judged(rows, check, session),
+      PIECES_AT_ONCE,
+    )) {
+      for (const [placed, judgement] of rows) {
+        text += write.report(check.conclude(placed, judgement))
+        for (const event of check.takeEvents()) text += write.event(event)
+      }
+      if (isHeld || text === '') continue
       yield text
       text = ''
     }
-    // what is made is not kept back until more of the log comes
-    if (isHeld || text === '') continue
-    yield text
-    text = ''
+  } finally {
+    session.close()
   }
   check.end()
   for (const event of check.takeEvents()) text += write.event(event)

@@ -137,8 +137,11 @@ async function respond(
   const log = openLog(request, bodyStream(request))
   const view = await openView(service, reply)
   const parameters = parametersOf(query)
-  const check = new PassageCheck(settingsOf(parameters, view))
-  const answer = passageAnswer(log, check, {
+  const settings = settingsOf(parameters, view)
+  const check = new PassageCheck(settings)
+  const { judging, fairways } = settings
+  const session = service.judges.open({ judging, fairways, judge: check.judge })
+  const answer = passageAnswer(log, check, session, {
     format,
     detail: parameters.detail,
     about: {

@@ -1,5 +1,6 @@
 import type { FastifyReply } from 'fastify'
 import type { Registry, Store } from '../store/registry.ts'
+import type { JudgeThreads } from '../threads/judge-threads.ts'
 
 /** What routes answer from. */
 export interface Service {
@@ -9,6 +10,7 @@ export interface Service {
   readonly now: () => string
   /** ms in which a body that is read as a whole has to arrive */
   readonly bodyTimeout: number
+  readonly judges: JudgeThreads
 }
 
 /** What one request is answered from: the registry does not change under it. */

@@ -1,6 +1,6 @@
 import { EventFinder, type PassageEvent } from './events.ts'
 import { Groups, type PassageGroup } from './groups.ts'
-import { Judge } from './judge.ts'
+import { Judge, type MatchedReport } from './judge.ts'
 import type { Judgement, Judging } from './judgement.ts'
 import { PassageFinder } from './passage.ts'
 import type { Fairway, Placement } from './placement.ts'
@@ -33,7 +33,13 @@ export interface Finding {
   readonly judgement: Judgement | undefined
 }
 
-/** Everything that a log says, added up. Times in s since 1970; NaN for an empty log. */
+/** A row of a log in its place. */
+export interface PlacedRow extends Omit<Finding, 'judgement'> {
+  /** what is judged; undefined unless the status is `matched` */
+  readonly matched: MatchedReport | undefined
+}
+
+/** Everything that a log says, added up. Times in s since 1970; not finite for an empty log. */
 export interface CheckSummary {
   readonly from: number
   readonly to: number
@@ -81,8 +87,8 @@ export class PassageCheck {
   #events: PassageEvent[] = []
   #certain = 0
   #doubtful = 0
-  #from = NaN
-  #to = NaN
+  #from = Infinity
+  #to = -Infinity
 
   constructor(settings: CheckSettings) {
     this.#settings = settings
@@ -91,15 +97,41 @@ export class PassageCheck {
     this.#judge = new Judge(settings.judging)
   }
 
-  /** Takes the next row of the log. */
-  take(row: LogRow): Finding {
-    const finding = this.#find(row)
-    this.#byStatus[finding.status] += 1
-    if (finding.status === 'rejected' && this.#rejected.length < MOST_REJECTED) {
-      const line = row.report?.line ?? row.rejected?.line ?? 0
-      this.#rejected.push({ line, reason: finding.reason ?? '' })
+  /** Places the next row of the log. */
+  place(row: LogRow): PlacedRow {
+    if (row.rejected) return refused(row, row.rejected.reason)
+    const { report } = row
+    const guess = this.#fleet.guess(report)
+    if (!guess) return refused(row, 'vessel-class-unknown')
+    const placement = this.#tracks.place(report)
+    const matched = placement.status === 'matched' ? { report, placement, guess } : undefined
+    return { row, status: placement.status, reason: placement.reason, placement, guess, matched }
+  }
+
+  /**
+   * Takes a placed row up, in the order of the log.
+   *
+   * @param judgement  of a matched report; undefined when the vessel does not fit the water
+   */
+  conclude(placed: PlacedRow, judgement: Judgement | undefined): Finding {
+    const { row, status, placement, guess } = placed
+    const reason = status === 'matched' && !judgement ? 'vessel-does-not-fit' : placed.reason
+    this.#byStatus[status] += 1
+    if (row.rejected || !placement || !guess) {
+      const { line } = row.rejected ?? row.report
+      if (this.#rejected.length < MOST_REJECTED) this.#rejected.push({ line, reason: reason ?? '' })
+      return { row, status, reason, placement, guess, judgement: undefined }
     }
-    return finding
+    const { report } = row
+    this.#from = Math.min(this.#from, report.time)
+    this.#to = Math.max(this.#to, report.time)
+    if (IN_TIMELINE.has(status)) this.#follow({ report, placement, judgement }, guess)
+    return { row, status, reason, placement, guess, judgement }
+  }
+
+  /** What judges the matched reports of this log. */
+  get judge(): Judge {
+    return this.#judge
   }
 
   /** Events that have closed since the last call. */
@@ -137,21 +169,6 @@ export class PassageCheck {
     }
   }
 
-  #find(row: LogRow): Finding {
-    if (row.rejected) return refused(row, row.rejected.reason)
-    const { report } = row
-    const guess = this.#fleet.guess(report)
-    if (!guess) return refused(row, 'vessel-class-unknown')
-    this.#from = Number.isNaN(this.#from) ? report.time : Math.min(this.#from, report.time)
-    this.#to = Number.isNaN(this.#to) ? report.time : Math.max(this.#to, report.time)
-    const placement = this.#tracks.place(report)
-    const { status } = placement
-    const judgement = status === 'matched' ? this.#judge.judge(report, placement, guess) : undefined
-    if (IN_TIMELINE.has(status)) this.#follow({ report, placement, judgement }, guess)
-    const reason = status === 'matched' && !judgement ? 'vessel-does-not-fit' : placement.reason
-    return { row, status, reason, placement, guess, judgement }
-  }
-
   #follow(mark: Mark, guess: VesselGuess): void {
     const vessel = this.#vesselOf(mark.report.vesselKey)
     vessel.classId = guess.classId
@@ -184,11 +201,11 @@ export class PassageCheck {
   }
 }
 
-const refused = (row: LogRow, reason: string): Finding => ({
+const refused = (row: LogRow, reason: string): PlacedRow => ({
   row,
   status: 'rejected',
   reason,
   placement: undefined,
   guess: undefined,
-  judgement: undefined,
+  matched: undefined,
 })

@@ -21,6 +21,13 @@ import type { VesselGuess } from './vessel-guess.ts'
 /** What of a report a judgement depends on, besides where it is. */
 export type Sailed = Pick<PositionReport, 'speed' | 'waterLevel' | 'current'>
 
+/** A report to be judged. */
+export interface MatchedReport {
+  readonly report: Sailed
+  readonly placement: Whereabouts
+  readonly guess: VesselGuess
+}
+
 /** One loading of the vessel, held against its own maximum. */
 interface Assessed {
   readonly maximum: Maximum
@@ -62,7 +69,7 @@ export class Judge {
    * @param placement  of status `matched`
    * @returns undefined when the vessel does not fit the water in any loading
    */
-  judge(report: Sailed, placement: Whereabouts, guess: VesselGuess): Judgement | undefined {
+  judge({ report, placement, guess }: MatchedReport): Judgement | undefined {
     const conditions = conditionsOf(report, placement, this.#judging)
     const all = guess.variants.flatMap((vessel) => this.#assess(report, placement, vessel, conditions))
     const [first, ...rest] = all

@@ -52,7 +52,7 @@ function judged(
   judging: Partial<Judging> = {},
 ) {
   const judge = new Judge({ ...JUDGING, ...judging })
-  return judge.judge(positionReport(given), placement(where), guess)
+  return judge.judge({ report: positionReport(given), placement: placement(where), guess })
 }
 
 describe('the maximum of a report', () => {
@@ -145,7 +145,7 @@ describe('what is told beside', () => {
   it('the effect of ten metres to the side is that of the maxima there', () => {
     const judge = new Judge(JUDGING)
     const where = placement({ offset: 0 })
-    const found = judge.judge(positionReport(), where, BARGE)
+    const found = judge.judge({ report: positionReport(), placement: where, guess: BARGE })
     if (!found) throw new Error('the barge fits')
     const [vessel] = BARGE.variants
     const here = maximum(vessel, 18, 22)

@@ -27,11 +27,12 @@ const TABLE: Readonly<Record<string, Rule>> = {
   geo: { src: ['domain'], packages: ['@turf/*', 'flatbush'] },
   advisory: { src: ['domain', 'hydro'], packages: [] },
   passages: { src: ['domain', 'hydro', 'geo', 'advisory'], packages: ['d3-array'] },
+  threads: { src: ['passages'], packages: ['node:*'] },
   report: { src: ['domain', 'advisory', 'store (types)'], packages: ['d3-*'] },
   store: { src: ['domain', 'geo'], packages: ['kysely', 'better-sqlite3', 'pg', 'node:*'] },
   access: { src: ['domain', 'store (types)'], packages: ['node:*'] },
   http: {
-    src: ['domain', 'geo', 'advisory', 'passages', 'report', 'access', 'store (types)'],
+    src: ['domain', 'geo', 'advisory', 'passages', 'report', 'access', 'store (types)', 'threads (types)'],
     packages: HTTP_PACKAGES,
   },
   'config.ts': { src: [], packages: ['zod'] },

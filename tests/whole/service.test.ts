@@ -20,7 +20,7 @@ test('the service tells that it is alive and ready', async () => {
   expect(ready.body).toEqual({
     status: 'ready',
     service_version: '0.1.0',
-    method_version: '1',
+    method_version: '2',
     registry_revision: 1,
     database: 'sqlite',
   })

@@ -1,0 +1,39 @@
+/**
+ * Works on the items of a source, some at a time, and hands the results on in the order of the items, each as soon as it
+ * and those before it are ready, also while the source has nothing new. Ending early ends the source.
+ *
+ * @param atOnce  items that are worked on at a time, ≥ 1
+ */
+export async function* inOrder<Item, Result>(
+  source: AsyncIterable<Item>,
+  work: (item: Item) => Promise<Result>,
+  atOnce: number,
+): AsyncGenerator<Result> {
+  const iterator = source[Symbol.asyncIterator]()
+  const working: Promise<{ readonly result: Result }>[] = []
+  let next: Promise<{ readonly item: IteratorResult<Item> }> | undefined
+  const pull = () => iterator.next().then((item) => ({ item }))
+  try {
+    next = pull()
+    while (next || working.length > 0) {
+      const [oldest] = working
+      const canTake = next && working.length < atOnce
+      const ready = await Promise.race([...(oldest ? [oldest] : []), ...(canTake && next ? [next] : [])])
+      if ('result' in ready) {
+        void working.shift()
+        yield ready.result
+      } else if (ready.item.done === true) {
+        next = undefined
+      } else {
+        const started = work(ready.item.value).then((result) => ({ result }))
+        // it is seen when its turn comes
+        started.catch(() => undefined)
+        working.push(started)
+        next = pull()
+      }
+    }
+  } finally {
+    next?.catch(() => undefined)
+    await iterator.return?.()
+  }
+}
