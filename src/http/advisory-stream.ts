@@ -106,8 +106,8 @@ function fullLine(item: Item, { registry, serviceVersion }: View, requestId: str
   }
 }
 
-/** Lines that are answered before the caller is given what there is. */
-const LINES_AT_ONCE = 10
+/** Lines that are answered before the caller is given what there is: some 2 ms of work (own choice, measured). */
+const LINES_AT_ONCE = 20
 
 const csvOf = (row: CompactRow): string => csvRow(COMPACT_COLUMNS.map((column) => row[column]))
 
