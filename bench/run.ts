@@ -140,9 +140,13 @@ async function http(): Promise<void> {
   const [first] = (await once(server.stdout, 'data')) as [Buffer]
   const url = first.toString().trim()
   try {
-    await pairs('POST /v1/advisories against an echo route', '0.60', post, [
+    await pairs('POST /v1/advisories against an echo that validates and stringifies', '0.60', post, [
       `${url}/v1/advisories`,
       `${url}/bench/echo`,
+    ])
+    await pairs('POST /v1/advisories against an echo that validates and has its text ready', '', post, [
+      `${url}/v1/advisories`,
+      `${url}/bench/echo-ready`,
     ])
     await pairs('GET …/advisory of a segment against a still reply', '0.70', get, [
       `${url}/v1/segments/harrow-long-pound/advisory?vessel_class=cemt-iv&water_level_m=0.1`,

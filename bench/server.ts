@@ -18,9 +18,15 @@ const compact: unknown = JSON.parse(
   readFileSync(new URL('../openapi/examples/createAdvisoryMatrix.reply.json', import.meta.url), 'utf8'),
 )
 
-/** Same validation and same reply as an advisory, and no hydraulics. */
+const text = JSON.stringify(reply)
+
+/** Same hooks, same validation and same reply bytes as an advisory, and no hydraulics; the second has them ready. */
 const echo: Routes = (app) => {
-  app.post('/bench/echo', { schema: { body: AdvisoryRequest, response: { 200: z.unknown() } } }, () => reply)
+  const schema = { body: AdvisoryRequest, response: { 200: z.unknown() } }
+  app.post('/bench/echo', { schema }, () => reply)
+  app.post('/bench/echo-ready', { schema }, (_request, response) =>
+    response.type('application/json; charset=utf-8').send(text),
+  )
 }
 
 async function* bareLines(stream: ReturnType<typeof bodyStream>, answer: unknown): AsyncGenerator<string> {
@@ -46,8 +52,6 @@ const bareStream: Routes = (app) => {
     done()
   })
 }
-
-const text = JSON.stringify(reply)
 
 /** The same bytes as an advisory of a segment, made beforehand. */
 const still: Routes = (app) => {

@@ -6,8 +6,10 @@ import { sensitivityOf, type InputSwing } from '../advisory/sensitivity.ts'
 import type { Decision } from '../advisory/decide.ts'
 import { Fault } from '../domain/fault.ts'
 import type { App, Routes } from './app-type.ts'
+import { advisoryText } from './advisory-text.ts'
 import { crossCheck } from './cross-check.ts'
 import { checkSpeed, speedFields, speedOf } from './fields.ts'
+import { inARow } from './in-a-row.ts'
 import { negotiate, formatParameter } from './negotiate.ts'
 import { problemResponses } from './problems.ts'
 import { toPair } from './reply-parts.ts'
@@ -120,6 +122,7 @@ function addAdvisory(app: App, service: Service): void {
       body: AdvisoryRequest,
       response: { 200: AdvisoryReply, ...PROBLEMS },
     },
+    preValidation: inARow,
     handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request
@@ -127,7 +130,7 @@ function addAdvisory(app: App, service: Service): void {
       const resolved = resolve(body, view.registry)
       const { segment, vessel, conditions, options } = resolved
       const advisory = advise(segment, vessel, conditions, options)
-      return toAdvisoryReply(advisory, resolved, contextOf(view), body)
+      return advisoryText(toAdvisoryReply(advisory, resolved, contextOf(view), body))
     },
   })
 }
@@ -142,6 +145,7 @@ function addEffects(app: App, service: Service): void {
       body: EffectsRequest,
       response: { 200: AssessmentReply, ...PROBLEMS },
     },
+    preValidation: inARow,
     handler: async (request, reply) => {
       negotiate(request, reply, ['json'])
       const { body } = request

@@ -4,6 +4,7 @@ import { z } from 'zod'
 import { advise, adviseBriefly } from '../advisory/advise.ts'
 import { Fault } from '../domain/fault.ts'
 import type { App, Routes } from './app-type.ts'
+import { advisoryText } from './advisory-text.ts'
 import { StreamLine } from './compact.schema.ts'
 import { COMPACT_COLUMNS, toCompactRow, toProblemRow, type CompactRow } from './compact.ts'
 import { readCsvRows } from './csv.ts'
@@ -92,24 +93,23 @@ function compactLine(item: Item, { registry }: View, isCsv: boolean): CompactRow
   }
 }
 
-function fullLine(item: Item, { registry, serviceVersion }: View, requestId: string): unknown {
+function fullLine(item: Item, { registry, serviceVersion }: View, requestId: string): string {
   try {
     const wire = parse(AdvisoryRequest, item.read())
     const resolved = resolve(wire, registry)
     const { segment, vessel, conditions, options } = resolved
     const context = { serviceVersion, registryRevision: registry.revision }
     const advisory = advise(segment, vessel, conditions, options)
-    return toAdvisoryReply(advisory, resolved, context, { line: item.line, label: wire.label })
+    return advisoryText(toAdvisoryReply(advisory, resolved, context, { line: item.line, label: wire.label }))
   } catch (error) {
-    return { line: item.line, problem: toProblem(toFault(error), requestId) }
+    return toFiniteJson({ line: item.line, problem: toProblem(toFault(error), requestId) })
   }
 }
 
-/** Lines that are answered before the caller is given what there is. */
-const LINES_AT_ONCE = 10
+/** Lines that are answered before the caller is given what there is: some 2 ms of work (own choice, measured). */
+const LINES_AT_ONCE = 20
 
 const csvOf = (row: CompactRow): string => csvRow(COMPACT_COLUMNS.map((column) => row[column]))
-const jsonLine = (value: unknown): string => `${toFiniteJson(value)}\n`
 
 async function* answered(
   items: Items,
@@ -201,7 +201,7 @@ async function respond(
   }
   const isCompact = isCsvIn || detail === 'compact'
   const toLine = isCompact
-    ? (item: Item, view: View) => jsonLine(compactLine(item, view, isCsvIn))
-    : (item: Item, view: View) => jsonLine(fullLine(item, view, request.id))
+    ? (item: Item, view: View) => `${toFiniteJson(compactLine(item, view, isCsvIn))}\n`
+    : (item: Item, view: View) => `${fullLine(item, view, request.id)}\n`
   return sendStream(reply, answered(items, '', service, toLine))
 }

@@ -6,9 +6,9 @@ import { advise } from '../advisory/advise.ts'
 import { METHOD_VERSION } from '../advisory/catalogue.ts'
 import { Fault } from '../domain/fault.ts'
 import type { App, Routes } from './app-type.ts'
+import { advisoryText } from './advisory-text.ts'
 import { SegmentCollection, SegmentFeature, toFeature } from './feature.schema.ts'
 import { inputHash } from './input-hash.ts'
-import { toFiniteJson } from './json.ts'
 import { list, listOf } from './list.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { PAGE_FIELDS, slice } from './paging.ts'
@@ -82,7 +82,7 @@ function answerTo(resolved: Resolved, view: View): Answered {
   const { segment, vessel, conditions, options } = resolved
   const context = { serviceVersion: view.serviceVersion, registryRevision: view.registry.revision }
   const reply = toAdvisoryReply(advise(segment, vessel, conditions, options), resolved, context, {})
-  return { etag: etagOf(resolved, view.serviceVersion), text: toFiniteJson(reply) }
+  return { etag: etagOf(resolved, view.serviceVersion), text: advisoryText(reply) }
 }
 
 function sendAnswer(request: FastifyRequest, reply: FastifyReply, { etag, text }: Answered): FastifyReply {
