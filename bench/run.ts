@@ -9,6 +9,7 @@ import { assess } from '../src/advisory/assess.ts'
 import { decide } from '../src/advisory/decide.ts'
 import { resolve, type AdvisoryWire } from '../src/http/request.ts'
 import { fileRegistry } from '../src/store/file-registry.ts'
+import { passageRows } from './passages.ts'
 import { registryRows } from './registry.ts'
 
 /**
@@ -167,6 +168,7 @@ async function http(): Promise<void> {
 
 await kernel()
 rows.push(...(await registryRows()))
+rows.push(...(await passageRows()))
 await http()
 process.stdout.write(
   `${cpus().length} × ${cpus()[0]?.model ?? 'unknown processor'}, Node ${process.version}\n`,

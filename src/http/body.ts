@@ -37,7 +37,7 @@ export const unsupportedType = (accepted: readonly string[]): Fault =>
   new Fault('unsupported-media-type', `Send the body as ${accepted.join(' or ')}`, { facts: { accepted } })
 
 /** The body as it was before compression. Nothing but gzip is read. */
-export function decoded(request: FastifyRequest, payload: IncomingMessage): Readable {
+export function decoded(request: FastifyRequest, payload: Readable): Readable {
   const encoding = request.headers['content-encoding']?.trim().toLowerCase() ?? 'identity'
   if (encoding === 'identity') return payload
   if (encoding !== 'gzip' && encoding !== 'x-gzip') {
@@ -52,7 +52,7 @@ export function decoded(request: FastifyRequest, payload: IncomingMessage): Read
  * The body through another stream, which may fail or be given up without harm to the connection: destroying the
  * body itself would close the socket before a reply could be written.
  */
-export function detached<Through extends Duplex>(payload: IncomingMessage, through: Through): Through {
+export function detached<Through extends Duplex>(payload: Readable, through: Through): Through {
   payload.pipe(through)
   payload.once('error', (error) => through.destroy(error))
   through.once('close', () => {

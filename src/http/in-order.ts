@@ -1,6 +1,7 @@
 /**
  * Works on the items of a source, some at a time, and hands the results on in the order of the items, each as soon as it
- * and those before it are ready, also while the source has nothing new. Ending early ends the source.
+ * and those before it are ready, also while the source has nothing new. Ending early ends the source; a source that fails
+ * ends the work at once.
  *
  * @param atOnce  items that are worked on at a time, ≥ 1
  */
@@ -11,14 +12,21 @@ export async function* inOrder<Item, Result>(
 ): AsyncGenerator<Result> {
   const iterator = source[Symbol.asyncIterator]()
   const working: Promise<{ readonly result: Result }>[] = []
-  let next: Promise<{ readonly item: IteratorResult<Item> }> | undefined
-  const pull = () => iterator.next().then((item) => ({ item }))
+  let failure: { readonly error: unknown } | undefined
+  const pull = () => {
+    const pulled = iterator.next().then((item) => ({ item }))
+    pulled.catch((error: unknown) => {
+      failure = { error }
+    })
+    return pulled
+  }
+  let next: ReturnType<typeof pull> | undefined = pull()
   try {
-    next = pull()
     while (next || working.length > 0) {
       const [oldest] = working
       const canTake = next && working.length < atOnce
       const ready = await Promise.race([...(oldest ? [oldest] : []), ...(canTake && next ? [next] : [])])
+      if (failure) throw failure.error
       if ('result' in ready) {
         void working.shift()
         yield ready.result
@@ -33,7 +41,6 @@ export async function* inOrder<Item, Result>(
       }
     }
   } finally {
-    next?.catch(() => undefined)
     await iterator.return?.()
   }
 }

@@ -15,15 +15,34 @@ export type Line =
   | { readonly number: number; readonly text: string; readonly fault?: undefined }
   | { readonly number: number; readonly fault: Fault; readonly text?: undefined }
 
+interface LineBodies {
+  readonly types?: readonly ('ndjson' | 'csv')[]
+  /**
+   * Pieces, of up to 64 KiB, that are read before they are asked for. When they are more than what the system holds for a
+   * connection, a caller that goes away is noticed at once, and not when all that it had sent is worked off.
+   */
+  readonly readAhead?: number
+}
+
 /** Inside `app.register`: makes the routes of this scope take streams of lines, of any length, instead of JSON. */
-export function acceptLines(scope: App, types: readonly ('ndjson' | 'csv')[] = ['ndjson', 'csv']): void {
+export function acceptLines(scope: App, { types = ['ndjson', 'csv'], readAhead = 1 }: LineBodies = {}): void {
   const accepted = types.map((type) => MEDIA_TYPES[type])
   scope.removeAllContentTypeParsers()
   scope.addContentTypeParser(accepted, (request: FastifyRequest, payload: IncomingMessage, done) => {
+    const body = detached(
+      payload,
+      new PassThrough({
+        // pieces stay pieces: a buffer of bytes would be handed on as one
+        readableObjectMode: true,
+        readableHighWaterMark: readAhead,
+        // more than a piece, so that the connection is not paused after each
+        writableHighWaterMark: readAhead * 65_536,
+      }),
+    )
     try {
-      const source = decoded(request, payload)
-      done(null, source === payload ? detached(payload, new PassThrough()) : source)
+      done(null, decoded(request, body))
     } catch (error) {
+      body.destroy()
       done(error as Error)
     }
   })

@@ -34,8 +34,6 @@ type Judged = Pick<
   | 'wave_height_right_m'
   | 'wave_energy_left_j_per_m'
   | 'wave_energy_right_j_per_m'
-  | 'bank_distance_left_m'
-  | 'bank_distance_right_m'
   | 'cautions'
 >
 
@@ -61,8 +59,6 @@ const NOT_JUDGED: Judged = {
   wave_height_right_m: null,
   wave_energy_left_j_per_m: null,
   wave_energy_right_j_per_m: null,
-  bank_distance_left_m: null,
-  bank_distance_right_m: null,
   cautions: null,
 }
 
@@ -89,8 +85,6 @@ function judgedColumns({ vessel, conditions, ...judgement }: Judgement): Judged 
     wave_height_right_m: finite(judgement.waveHeights[1]),
     wave_energy_left_j_per_m: finite(judgement.waveEnergies[0]),
     wave_energy_right_j_per_m: finite(judgement.waveEnergies[1]),
-    bank_distance_left_m: judgement.distances[0],
-    bank_distance_right_m: judgement.distances[1],
     cautions: judgement.cautions.join(';'),
   }
 }
@@ -107,7 +101,15 @@ const placedColumns = ({ fairway, chainage, offset, direction }: Placement): Pla
 })
 
 /** A row of the log with what became of it. */
-export function toReportRow({ row, status, reason, placement, guess, judgement }: Finding): ReportRow {
+export function toReportRow({
+  row,
+  status,
+  reason,
+  placement,
+  guess,
+  judgement,
+  distances,
+}: Finding): ReportRow {
   const said = row.report ?? row.rejected
   const placed = placement ? placedColumns(placement) : NOWHERE
   const judged = judgement ? judgedColumns(judgement) : NOT_JUDGED
@@ -122,8 +124,8 @@ export function toReportRow({ row, status, reason, placement, guess, judgement }
     segment_id: placed.segment_id,
     chainage_m: placed.chainage_m,
     offset_m: placed.offset_m,
-    bank_distance_left_m: judged.bank_distance_left_m,
-    bank_distance_right_m: judged.bank_distance_right_m,
+    bank_distance_left_m: finite(distances?.[0] ?? NaN),
+    bank_distance_right_m: finite(distances?.[1] ?? NaN),
     direction: placed.direction,
     vessel_class: guess?.classId ?? null,
     loading: judged.loading,

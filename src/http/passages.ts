@@ -84,11 +84,14 @@ function settingsOf(parameters: Parameters, view: View): CheckSettings {
   }
 }
 
+/** Pieces of a log that are read ahead, 16 MiB: more than Linux holds for a connection at both ends, unless told otherwise. */
+const READ_AHEAD = 256
+
 /** Position reports against recommended maxima, as they come. */
 export function passageRoutes(service: Service): Routes {
   return (app) => {
     void app.register((scope: App, _options, done) => {
-      acceptLines(scope)
+      acceptLines(scope, { readAhead: READ_AHEAD })
       addRoute(scope, service)
       done()
     })

@@ -1,10 +1,11 @@
 import { EventFinder, type PassageEvent } from './events.ts'
 import { Groups, type PassageGroup } from './groups.ts'
-import { Judge, type MatchedReport } from './judge.ts'
+import { conditionsOf, Judge, type MatchedReport } from './judge.ts'
 import type { Judgement, Judging } from './judgement.ts'
+import { bankDistances } from './maxima.ts'
 import { PassageFinder } from './passage.ts'
 import type { Fairway, Placement } from './placement.ts'
-import { STATUSES, type LogRow, type Status } from './position-report.ts'
+import { STATUSES, type LogRow, type PositionReport, type Status } from './position-report.ts'
 import { Timeline, type Mark } from './timeline.ts'
 import { Tracks } from './tracks.ts'
 import { Fleet, type Convoy, type FindClass, type VesselGuess } from './vessel-guess.ts'
@@ -31,10 +32,12 @@ export interface Finding {
   readonly placement: Placement | undefined
   readonly guess: VesselGuess | undefined
   readonly judgement: Judgement | undefined
+  /** to the left and to the right waterline, m; undefined where the position is not in the water of a fairway, or it is not asked for */
+  readonly distances: readonly [left: number, right: number] | undefined
 }
 
 /** A row of a log in its place. */
-export interface PlacedRow extends Omit<Finding, 'judgement'> {
+export interface PlacedRow extends Omit<Finding, 'judgement' | 'distances'> {
   /** what is judged; undefined unless the status is `matched` */
   readonly matched: MatchedReport | undefined
 }
@@ -62,6 +65,9 @@ const IN_TIMELINE: ReadonlySet<Status> = new Set<Status>([
   'ambiguous',
   'no-segment',
 ])
+
+/** Reports whose position is within a fairway. */
+const IN_WATER: ReadonlySet<Status> = new Set<Status>(['matched', 'stationary', 'ambiguous'])
 
 interface Followed {
   readonly timeline: Timeline
@@ -120,13 +126,20 @@ export class PassageCheck {
     if (row.rejected || !placement || !guess) {
       const { line } = row.rejected ?? row.report
       if (this.#rejected.length < MOST_REJECTED) this.#rejected.push({ line, reason: reason ?? '' })
-      return { row, status, reason, placement, guess, judgement: undefined }
+      return { row, status, reason, placement, guess, judgement: undefined, distances: undefined }
     }
     const { report } = row
     this.#from = Math.min(this.#from, report.time)
     this.#to = Math.max(this.#to, report.time)
     if (IN_TIMELINE.has(status)) this.#follow({ report, placement, judgement }, guess)
-    return { row, status, reason, placement, guess, judgement }
+    const distances = judgement?.distances ?? this.#distances(report, placement)
+    return { row, status, reason, placement, guess, judgement, distances }
+  }
+
+  #distances(report: PositionReport, placement: Placement): Finding['distances'] {
+    const { judging } = this.#settings
+    if (!judging.isFull || !IN_WATER.has(placement.status)) return undefined
+    return bankDistances(placement, conditionsOf(report, placement, judging).waterLevel)
   }
 
   /** What judges the matched reports of this log. */

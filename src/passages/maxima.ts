@@ -116,10 +116,18 @@ interface Seen extends Pick<Maximum, 'distances' | 'leftBank' | 'cautions'> {
   readonly water: ActualWater
 }
 
-function seenBy(placement: Whereabouts, vessel: Vessel, { waterLevel }: Conditions): Seen {
+/** To the left and to the right waterline at a water level, from the position as reported, m. */
+export const bankDistances = (placement: Whereabouts, waterLevel: number): readonly [number, number] =>
+  seenBy(placement, { beam: 0 }, { waterLevel }).distances
+
+function seenBy(
+  placement: Whereabouts,
+  { beam }: Pick<Vessel, 'beam'>,
+  { waterLevel }: Pick<Conditions, 'waterLevel'>,
+): Seen {
   const { segment, station } = waterOf(placement)
   const { offset } = placement
-  const water = waterFrom(segment, station, offset, waterLevel, vessel.beam)
+  const water = waterFrom(segment, station, offset, waterLevel, beam)
   const hasSides = segment.banks[1].side === 'right'
   const leftBank = hasSides || offset < 0 ? 0 : 1
   const isAlike = station.distances[0] === station.distances[1]

@@ -80,3 +80,21 @@ it('ends the source when it is given up', async () => {
   }
   expect(isEnded).toBe(true)
 })
+
+it('fails at once when the source does, whatever is still worked on', async () => {
+  let fail: (error: Error) => void = () => undefined
+  async function* failing(): AsyncGenerator<number> {
+    yield 0
+    yield 1
+    await new Promise((_, reject) => {
+      fail = reject
+    })
+  }
+  const work = (item: number) => (item === 0 ? Promise.resolve(0) : new Promise<number>(() => undefined))
+  const results = inOrder(failing(), work, 4)
+  expect(await results.next()).toEqual({ done: false, value: 0 })
+  const second = results.next()
+  await wait(5)
+  fail(new Error('gone'))
+  await expect(second).rejects.toThrow('gone')
+})

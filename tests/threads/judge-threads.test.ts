@@ -43,20 +43,23 @@ const threads = new JudgeThreads({ threads: 1, alone: 0 })
 afterAll(() => threads.end())
 
 describe('a thread', () => {
-  it.each([true, false])('gives the judgements that are made here, to the last digit (full: %s)', async (isFull) => {
-    const log = logOf(isFull)
-    const reports = reportsOf(200)
-    const here = reports.map((report) => new Judge(log.judging).judge(report))
-    const session = threads.open(log)
-    const [first, second] = await Promise.all([
-      session.judge(reports.slice(0, 120)),
-      session.judge(reports.slice(120)),
-    ])
-    session.close()
-    expect([...first, ...second]).toEqual(here)
-    expect(here.filter((judgement) => judgement === undefined).length).toBeGreaterThan(10)
-    expect(new Set(here.map((judgement) => judgement?.verdict)).size).toBeGreaterThan(3)
-  })
+  it.each([true, false])(
+    'gives the judgements that are made here, to the last digit (full: %s)',
+    async (isFull) => {
+      const log = logOf(isFull)
+      const reports = reportsOf(200)
+      const here = reports.map((report) => new Judge(log.judging).judge(report))
+      const session = threads.open(log)
+      const [first, second] = await Promise.all([
+        session.judge(reports.slice(0, 120)),
+        session.judge(reports.slice(120)),
+      ])
+      session.close()
+      expect([...first, ...second]).toEqual(here)
+      expect(here.filter((judgement) => judgement === undefined).length).toBeGreaterThan(10)
+      expect(new Set(here.map((judgement) => judgement?.verdict)).size).toBeGreaterThan(3)
+    },
+  )
 
   it('serves logs side by side', async () => {
     const reports = reportsOf(60)
