@@ -4,6 +4,7 @@ import type { Judgement } from '../passages/judgement.ts'
 import type { LogRow } from '../passages/position-report.ts'
 import type { JudgeSession } from '../threads/judge-threads.ts'
 import { csvRow, type CsvCell } from './csv-write.ts'
+import { HeldText } from './held-text.ts'
 import { inOrder } from './in-order.ts'
 import { toFiniteJson } from './json.ts'
 import { summaryParts, toEventRow, toReportRow } from './passage-lines.ts'
@@ -124,7 +125,8 @@ export async function* passageAnswer(
   settings: AnswerSettings,
 ): AsyncGenerator<string> {
   const write = writersOf(settings)
-  const isHeld = settings.detail !== 'reports'
+  const held = settings.detail === 'reports' ? undefined : new HeldText()
+  const closedEvents = (): string => check.takeEvents().map(write.event).join('')
   let text = write.head
   try {
     for await (const rows of inOrder(
@@ -134,16 +136,17 @@ export async function* passageAnswer(
     )) {
       for (const [placed, judgement] of rows) {
         text += write.report(check.conclude(placed, judgement))
-        for (const event of check.takeEvents()) text += write.event(event)
+        text += closedEvents()
       }
-      if (isHeld || text === '') continue
-      yield text
+      if (held) held.add(text)
+      else if (text !== '') yield text
       text = ''
     }
   } finally {
     session.close()
   }
   check.end()
-  for (const event of check.takeEvents()) text += write.event(event)
-  yield text + ending(check, log, settings)
+  if (held) yield* held.pieces()
+  // the head of a table without rows is still there
+  yield text + closedEvents() + ending(check, log, settings)
 }

@@ -152,6 +152,14 @@ describe('the answer', () => {
     const [summary] = await checked(app, `${HEADER}\n`)
     expect(summary).toMatchObject({ from: null, to: null, reports: { read: 0 }, passages: 0, groups: [] })
   })
+  test.each(['reports', 'events', 'summary'])(
+    'to a log of a header only is the head of the table of %s',
+    async (detail) => {
+      const { app } = buildService()
+      const reply = await post(app, `${PATH}?detail=${detail}&format=csv`, `${HEADER}\n`, CSV)
+      expect(reply.body).toMatch(/^[a-z_,0-9]+\r\n$/)
+    },
+  )
 })
 
 describe('parameters', () => {
