@@ -3,6 +3,7 @@ import type { Inputs } from '../advisory/uncertainty.ts'
 import type { Conditions, Options } from '../domain/conditions.ts'
 import type { Bank, Group, PostedLimit, Receptor, SectionShape, Segment, Station } from '../domain/segment.ts'
 import type { Vessel } from '../domain/vessel.ts'
+import { DEFAULT_OPTIONS } from './options.schema.ts'
 
 // Canonical JSON (RFC 8785) sorts the names of fields and writes numbers as JavaScript does. Every object below names its
 // fields in that order, so that JSON.stringify gives the canonical form at once; fields left out are not written.
@@ -125,7 +126,32 @@ export const inputContent = ({ segment, vessel, conditions, options }: Inputs) =
   vessel: vesselContent(vessel, segment.maxDraught !== undefined),
 })
 
+/** Canonical JSON of what many requests share: segments of the registry, and options that no one gave. */
+const shared = new WeakMap<object, string>()
+
+function sharedText<Item extends object>(
+  item: Item,
+  isShared: boolean,
+  content: (item: Item) => object,
+): string {
+  if (!isShared) return JSON.stringify(content(item))
+  const known = shared.get(item)
+  if (known !== undefined) return known
+  const text = JSON.stringify(content(item))
+  shared.set(item, text)
+  return text
+}
+
+/** The canonical JSON of `inputContent`. */
+function inputText({ segment, vessel, conditions, options }: Inputs): string {
+  const conditionsText = JSON.stringify(conditionsContent(conditions))
+  const optionsText = sharedText(options, options === DEFAULT_OPTIONS, optionsContent)
+  const segmentText = sharedText(segment, segment.revision !== undefined, segmentContent)
+  const vesselText = JSON.stringify(vesselContent(vessel, segment.maxDraught !== undefined))
+  return `{"conditions":${conditionsText},"options":${optionsText},"segment":${segmentText},"vessel":${vesselText}}`
+}
+
 /** SHA-256 over the canonical JSON of `inputContent`. Names, labels and attributes are not in it. */
 export function inputHash(inputs: Inputs): string {
-  return `sha256:${hash('sha256', JSON.stringify(inputContent(inputs)))}`
+  return `sha256:${hash('sha256', inputText(inputs))}`
 }

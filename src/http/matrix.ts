@@ -124,7 +124,7 @@ function axesOf(wire: MatrixWire, registry: Registry) {
       conditions: toConditions(item, registry),
       label: 'label' in item ? item.label : undefined,
     })),
-    options: toOptions(wire.options ?? {}),
+    options: toOptions(wire.options),
   }
 }
 

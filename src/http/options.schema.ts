@@ -89,7 +89,15 @@ function toLimits(wire: z.output<typeof LimitsFields>): RequestedLimits {
   }
 }
 
-export function toOptions(wire: OptionsWire): Options {
+/** Options of a request that gives none. */
+export const DEFAULT_OPTIONS: Options = optionsOf({})
+
+/** The options of a request; without any always the same object. */
+export function toOptions(wire: OptionsWire | undefined): Options {
+  return wire === undefined ? DEFAULT_OPTIONS : optionsOf(wire)
+}
+
+function optionsOf(wire: OptionsWire): Options {
   return {
     ...(Array.isArray(wire.wave_methods) && { waveMethods: wire.wave_methods }),
     combine: wire.combine ?? 'highest',

@@ -143,6 +143,6 @@ export function resolve(wire: AdvisoryWire, registry: Registry): Resolved {
     vessel: toVessel(wire.vessel, registry),
     classRevision: classRevisionOf(wire.vessel.class, registry),
     conditions: toConditions(wire.conditions ?? {}, registry),
-    options: toOptions(wire.options ?? {}),
+    options: toOptions(wire.options),
   }
 }
