@@ -6,6 +6,7 @@ import { findVesselClass } from '../src/domain/vessel-classes.ts'
 import { axisOf, bearingAt, positionAt } from '../src/geo/chainage.ts'
 import { cellsOfLine } from '../src/http/csv-cells.ts'
 import { readFeature, type FeatureWire } from '../src/http/feature-in.ts'
+import { DEFAULT_OPTIONS } from '../src/http/options.schema.ts'
 import { passageAnswer } from '../src/http/passage-answer.ts'
 import { readLogCsv } from '../src/http/passage-rows.ts'
 import { toRegistrySegment } from '../src/http/to-registry-segment.ts'
@@ -30,6 +31,7 @@ function fairways(): Fairway[] {
       id: content.id,
       line: content.line,
       segment: toRegistrySegment(content.properties, content).segment,
+      options: DEFAULT_OPTIONS,
       chainageFrom: typeof from === 'number' ? from : undefined,
       chainageTo: typeof to === 'number' ? to : undefined,
     }

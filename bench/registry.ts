@@ -62,9 +62,9 @@ export async function registryRows(): Promise<{ what: string; value: string; bar
       conditions: toConditions({}, registry),
       options: toOptions({}),
     }
-    await answersOf(registry.segments(), asked)
+    await answersOf(registry.segments(), asked, registry)
     const cpuBefore = cpuSeconds()
-    const answers = await answersOf(registry.segments(), asked)
+    const answers = await answersOf(registry.segments(), asked, registry)
     const layer = cpuSeconds() - cpuBefore
 
     const beforeLooks = performance.now()

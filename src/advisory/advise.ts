@@ -69,7 +69,7 @@ function withoutFactor(
   conditions: Conditions,
   options: Options,
 ): Uncalibrated {
-  const { waveFactor: _, ...plain } = options
+  const { waveFactor: _factor, calibration: _calibration, ...plain } = options
   const { main } = decide(segment, vessel, conditions, plain)
   const isSafe = main.outcome !== 'no-safe-speed'
   return {
@@ -136,8 +136,9 @@ export function adviseBriefly(
     byDirection,
     sign,
     effects,
-    uncalibrated:
-      options.waveFactor === undefined ? undefined : withoutFactor(segment, vessel, conditions, options),
+    uncalibrated: main.situation.waveFactors.isCorrected
+      ? withoutFactor(segment, vessel, conditions, options)
+      : undefined,
     cautions: [...cautionsAt(situation, effects, main.direction), ...decisionCautions(main, sign)],
   }
 }

@@ -56,6 +56,7 @@ export function speedCautions(situation: Situation, effects: Effects): Caution[]
     REGIME_CAUTIONS[effects.regime],
     situation.setting.isConfined && !isSteady(situation.setting, effects.speed) ? NO_STEADY_FLOW : undefined,
     outsideRange(situation, effects.speed),
+    beyondCalibration(situation, effects.speed),
     bankSuction(situation, effects),
     meeting(situation, effects.speed),
     ...mooringDrawdown(situation, effects.speed),
@@ -77,6 +78,19 @@ function outsideRange(situation: Situation, speed: number): Caution | undefined 
     severity: 'info',
     text: 'Some wave methods are outside their range here; their values are shown and do not count.',
     facts: { methods },
+  }
+}
+
+/** Factors hold for what was measured: a higher or a lower speed is extrapolated. */
+function beyondCalibration({ options }: Situation, speed: number): Caution | undefined {
+  if (!options.calibration || options.waveFactor !== undefined) return undefined
+  const [least, greatest] = options.calibration.coverage.speed
+  if (speed >= least && speed <= greatest) return undefined
+  return {
+    code: 'beyond-calibration',
+    severity: 'caution',
+    text: 'The speed is outside those at which waves were measured on this water: the factors are extrapolated.',
+    facts: { speed_mps: speed, measured_from_mps: least, measured_to_mps: greatest },
   }
 }
 

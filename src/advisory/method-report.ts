@@ -12,6 +12,8 @@ export interface WaveReport {
   readonly outside: readonly Outside[]
   /** at the nearer bank, m */
   readonly height: number
+  /** measured over computed height that the figures are corrected by; undefined without one */
+  readonly factor: number | undefined
   /** first speed at which this method alone, in its range, reaches the limit of a bank, m/s; Infinity when never */
   readonly firstSpeed: number
   readonly reference: string
@@ -26,6 +28,9 @@ export interface SquatReport {
 }
 
 const BANKS = [0, 1] as const
+
+/** What keeps a method out that has no factor on a calibrated water. */
+const NOT_CALIBRATED: readonly Outside[] = [{ quantity: 'calibration', value: 'none' }]
 
 /** Nothing keeps a method out. */
 const INSIDE: readonly Outside[] = []
@@ -58,7 +63,9 @@ function firstSpeedAtBank(
 export function waveReports(situation: Situation, speed: number): WaveReport[] {
   const limits = BANKS.map((bank) => bankLimits(situation, bank))
   const distance = situation.section.distances[situation.nearer]
+  const { byMethod, without, isCorrected } = situation.waveFactors
   return WAVE_METHODS.map((method, i) => {
+    const isWithout = (without & (1 << i)) !== 0
     const interval = situation.waveBands.intervals[i]
     let firstSpeed = Infinity
     for (const bank of BANKS) {
@@ -70,8 +77,9 @@ export function waveReports(situation: Situation, speed: number): WaveReport[] {
       id: method.id,
       outside: isInRange(situation.waveBands, i, speed)
         ? INSIDE
-        : outsideAt(method, situation.setting, speed),
+        : [...outsideAt(method, situation.setting, speed), ...(isWithout ? NOT_CALIBRATED : [])],
       height: heightByMethod(situation, i, speed, distance),
+      factor: isCorrected && !isWithout ? byMethod[i] : undefined,
       firstSpeed,
       reference: method.reference,
     }

@@ -13,11 +13,13 @@ export interface SecondaryWave {
 
 const UNKNOWN: SecondaryWave = { height: NaN, method: -1 }
 
+const factorAt = (situation: Situation, index: number): number => situation.waveFactors.byMethod[index] ?? 1
+
 /** Height by one method alone with the water's factor, m, whatever its range; NaN where it has no value. */
 export function heightByMethod(situation: Situation, index: number, speed: number, distance: number): number {
   const method = WAVE_METHODS[index]
   if (!method?.hasCoefficients(situation.setting)) return NaN
-  return situation.waveFactor * method.height(situation.setting, speed, distance)
+  return factorAt(situation, index) * method.height(situation.setting, speed, distance)
 }
 
 /**
@@ -99,7 +101,7 @@ function firstSpeedByMethod(
   from: number,
   to: number,
 ): number {
-  const bare = height / situation.waveFactor
+  const bare = height / factorAt(situation, index)
   return WAVE_METHODS[index]?.firstSpeed(situation.setting, bare, distance, from, to) ?? Infinity
 }
 

@@ -13,6 +13,7 @@ import { SQUAT_METHODS } from '../hydro/squat/all.ts'
 import { WAVE_METHODS } from '../hydro/waves/all.ts'
 import { impossibleItems } from './possible.ts'
 import { sectionOf, type StationSection } from './section-of.ts'
+import { waveFactorsOf, type WaveFactors } from './wave-factors.ts'
 
 /** Half the strip beside the hull that takes part in the return flow, in beams: half of the 12 B it is documented to. */
 const STRIP_BEAMS = 6
@@ -41,8 +42,7 @@ export interface Situation {
   readonly meetingCriticalSpeed: number
   readonly waveBands: Bands
   readonly squatBands: Bands
-  /** measured over computed wave height, 1 when none is given */
-  readonly waveFactor: number
+  readonly waveFactors: WaveFactors
 }
 
 const midshipSection = (vessel: Vessel): number => vessel.midshipCoefficient * vessel.beam * vessel.draught
@@ -151,6 +151,7 @@ export function situationOf(
   const clashes = impossibleItems({ segment, vessel: used, conditions, section, blockage })
   if (clashes.length > 0) throw impossible(clashes)
 
+  const waveFactors = waveFactorsOf(options, used.hull)
   const setting = settingOf(used, section, strip, blockage, isConfined)
   const eccentricity = isConfined ? (strip.offset * section.depth) / strip.area : 0
   const near = eccentricityFactors(eccentricity, section.width / used.length)
@@ -171,8 +172,8 @@ export function situationOf(
     shallowWaveSpeed: shallowWaterWaveSpeed(section.depth),
     meetingCriticalSpeed:
       isConfined && likeBlockage < 1 ? criticalSpeedOf(likeBlockage, meanDepth, section.depth) : NaN,
-    waveBands: bandsOf(WAVE_METHODS, setting, preferredBits(options)),
+    waveBands: bandsOf(WAVE_METHODS, setting, preferredBits(options), waveFactors.without),
     squatBands: bandsOf(SQUAT_METHODS, setting, 0),
-    waveFactor: options.waveFactor ?? 1,
+    waveFactors,
   }
 }

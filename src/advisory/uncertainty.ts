@@ -99,7 +99,7 @@ export function shifted(inputs: Inputs, field: UncertainField, shift: number): I
     case 'current_mps':
       return { ...inputs, conditions: { ...conditions, current: conditions.current + shift } }
     case 'wave_height':
-      return { ...inputs, options: { ...options, waveFactor: (options.waveFactor ?? 1) * Math.exp(shift) } }
+      return { ...inputs, options: { ...options, waveScale: (options.waveScale ?? 1) * Math.exp(shift) } }
   }
 }
 

@@ -1,3 +1,4 @@
+import type { Calibration } from './calibration.ts'
 import type { Direction } from './segment.ts'
 import type { SignUnit } from './units.ts'
 import type { Vessel } from './vessel.ts'
@@ -38,6 +39,10 @@ export interface Options {
   readonly signUnit: SignUnit
   readonly signStep: number
   readonly hasCurve: boolean
-  /** measured over computed wave height, for every method alike */
+  /** measured over computed wave height, for every method alike; in place of a calibration */
   readonly waveFactor?: number
+  /** factors of the methods on this water; methods without one do not count */
+  readonly calibration?: Calibration
+  /** on top of every factor, as when an uncertain wave height is tried; default 1 */
+  readonly waveScale?: number
 }

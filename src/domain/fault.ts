@@ -27,6 +27,8 @@ export type FaultCode =
   | 'line-too-long'
   | 'unsupported-media-type'
   | 'impossible-input'
+  | 'too-few-passages'
+  | 'units-doubtful'
   | 'too-many-requests'
   | 'overloaded'
   | 'store-unavailable'

@@ -17,7 +17,7 @@ declare module 'fastify' {
 const OPEN_PATHS = /^\/(?:health\/|openapi\.json$|docs(?:\/|$)|v1\/problems(?:\/|$)|v1\/methods(?:\/|$))/
 
 /** Pages that a person opens in a browser, which asks for the key itself. */
-const PAGES = /^\/(?:$|v1\/segments\/[^/]+\/sheet$)/
+const PAGES = /^\/(?:$|v1\/(?:segments|calibrations)\/[^/]+\/sheet$)/
 
 /** POST routes that compute and keep nothing. */
 const READING_POSTS = /^\/v1\/(?:advisories|effects|passages)(?:\/|$)/

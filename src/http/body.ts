@@ -63,7 +63,11 @@ export function detached<Through extends Duplex>(payload: Readable, through: Thr
 }
 
 /** All bytes of a body. Stops, without holding more, at the limit of the route or when they come too slowly. */
-async function readBody(request: FastifyRequest, payload: IncomingMessage, timeout: number): Promise<Buffer> {
+export async function readBody(
+  request: FastifyRequest,
+  payload: IncomingMessage,
+  timeout: number,
+): Promise<Buffer> {
   const limit = request.routeOptions.bodyLimit
   if (Number(request.headers['content-length']) > limit) throw tooLarge(limit)
   const source = decoded(request, payload)

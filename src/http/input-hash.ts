@@ -1,5 +1,6 @@
 import { hash } from 'node:crypto'
 import type { Inputs } from '../advisory/uncertainty.ts'
+import type { Calibration } from '../domain/calibration.ts'
 import type { Conditions, Options } from '../domain/conditions.ts'
 import type { Bank, Group, PostedLimit, Receptor, SectionShape, Segment, Station } from '../domain/segment.ts'
 import type { Vessel } from '../domain/vessel.ts'
@@ -98,8 +99,28 @@ const conditionsContent = (conditions: Conditions) => ({
   waterLevel: conditions.waterLevel,
 })
 
+/** Factors and what they were measured over; a calibration of another name with the same is the same. */
+const calibrationContent = ({ coverage, methods }: Calibration) => ({
+  coverage: {
+    depth: coverage.depth,
+    depthFroudeNumber: coverage.depthFroudeNumber,
+    distance: coverage.distance,
+    speed: coverage.speed,
+  },
+  methods: methods.map(({ factor, factorByHull, id }) => ({
+    factor,
+    factorByHull: {
+      displacement: factorByHull.displacement,
+      planing: factorByHull.planing,
+      'semi-displacement': factorByHull['semi-displacement'],
+    },
+    id,
+  })),
+})
+
 const optionsContent = ({ limits, ...options }: Options) => ({
   applyPostedLimit: options.applyPostedLimit,
+  calibration: options.calibration && calibrationContent(options.calibration),
   combine: options.combine,
   hasCurve: options.hasCurve,
   limits: {

@@ -7,14 +7,14 @@ import { bindingPostedLimit } from '../advisory/criteria/speed-limits.ts'
 import { currentAlong } from '../advisory/direction.ts'
 import { Fault } from '../domain/fault.ts'
 import { toKmh } from '../domain/units.ts'
-import type { SegmentRecord } from '../store/registry.ts'
+import type { Registry, SegmentRecord } from '../store/registry.ts'
 import type { Routes } from './app-type.ts'
 import { LayerReply } from './layer.schema.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { isKnown, notModified } from './preconditions.ts'
 import { problemResponses } from './problems.ts'
 import { maximumColumns } from './compact.ts'
-import { refuseCalibration, segmentOf } from './request.ts'
+import { optionsOn, segmentOf } from './request.ts'
 import { ADVISORY_FIELDS, askedOf, FILTER_FIELDS, toFilter, type AdvisoryQuery } from './segment-query.ts'
 import { openView, type Service, type View } from './service.ts'
 
@@ -25,10 +25,14 @@ type Asked = ReturnType<typeof askedOf>
 export type Answer = Brief | Fault
 
 /** The advisory of a record in brief, or why there is none. */
-export function answerOf(record: SegmentRecord, { vessel, conditions, options }: Asked): Answer {
+export function answerOf(
+  record: SegmentRecord,
+  { vessel, conditions, options }: Asked,
+  registry: Registry,
+): Answer {
   try {
-    refuseCalibration(record.properties, undefined)
-    return adviseBriefly(segmentOf(record), vessel, conditions, options)
+    const own = optionsOn(options, undefined, record.properties, registry)
+    return adviseBriefly(segmentOf(record), vessel, conditions, own)
   } catch (error) {
     if (error instanceof Fault) return error
     throw error
@@ -39,10 +43,11 @@ export function answerOf(record: SegmentRecord, { vessel, conditions, options }:
 export async function answersOf(
   records: readonly SegmentRecord[],
   asked: Asked,
+  registry: Registry,
 ): Promise<{ record: SegmentRecord; answer: Answer }[]> {
   const answers: { record: SegmentRecord; answer: Answer }[] = []
   for (const [i, record] of records.entries()) {
-    answers.push({ record, answer: answerOf(record, asked) })
+    answers.push({ record, answer: answerOf(record, asked, registry) })
     if (i % SEGMENTS_AT_ONCE === SEGMENTS_AT_ONCE - 1) await new Promise(setImmediate)
   }
   return answers
@@ -174,7 +179,7 @@ export function layerRoutes(service: Service): Routes {
         const { bbox, waterway, gauge_id, format: _, ...query } = request.query
         const asked = askedOf(query satisfies AdvisoryQuery, view)
         const records = view.registry.segments(toFilter({ bbox, waterway, gauge_id }))
-        const answers = await answersOf(records, asked)
+        const answers = await answersOf(records, asked, view.registry)
         return { type: 'FeatureCollection', features: answers.map((item) => toFeature(item, asked)) }
       },
     })

@@ -15,7 +15,7 @@ import { toFiniteJson } from './json.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { ConditionsFields, OptionsFields, toConditions, toOptions } from './options.schema.ts'
 import { problemResponses } from './problems.ts'
-import { refuseCalibration, resolveSegment, segmentNotFound, segmentOf } from './request.ts'
+import { optionsOn, resolveSegment, segmentNotFound, segmentOf } from './request.ts'
 import { SegmentFields, type SegmentWire } from './segment.schema.ts'
 import type { Service } from './service.ts'
 import { sendStream } from './stream.ts'
@@ -58,6 +58,8 @@ const CELL_COLUMNS = [
 interface MatrixSegment {
   readonly segment?: Segment
   readonly record?: SegmentRecord
+  /** with the calibration of this segment */
+  readonly options?: Options
   readonly fault?: Fault
   readonly label?: string | undefined
 }
@@ -66,20 +68,28 @@ function chosenSegments(wire: MatrixWire, registry: Registry): MatrixSegment[] {
   const { segments } = wire
   if (segments === 'all' || !Array.isArray(segments)) {
     const filter = segments === 'all' ? {} : { waterway: segments.waterway }
-    return registry
-      .segments(filter)
-      .map((record) => matrixSegment(() => ({ record, segment: segmentOf(record) })))
+    return registry.segments(filter).map((record) =>
+      matrixSegment(() => ({
+        record,
+        segment: segmentOf(record),
+        options: optionsOn(toOptions(wire.options), wire.options, record.properties, registry),
+      })),
+    )
   }
   return segments.map((item) => {
     const own: SegmentWire = typeof item === 'string' ? { id: item } : item
     if (own.id !== undefined && !registry.findSegment(own.id)) throw segmentNotFound(own.id, registry)
-    refuseCalibration(own, wire.options)
-    return { ...matrixSegment(() => resolveSegment(own, registry)), label: own.label }
+    const stored = own.id === undefined ? {} : (registry.findSegment(own.id)?.properties ?? {})
+    const calibrated = own.calibration_id === undefined ? stored : own
+    const options = optionsOn(toOptions(wire.options), wire.options, calibrated, registry)
+    return { ...matrixSegment(() => ({ ...resolveSegment(own, registry), options })), label: own.label }
   })
 }
 
 /** A segment that cannot be is a row in every cell, not the end of the matrix. */
-function matrixSegment(make: () => { segment: Segment; record?: SegmentRecord }): MatrixSegment {
+function matrixSegment(
+  make: () => { segment: Segment; record?: SegmentRecord; options: Options },
+): MatrixSegment {
   try {
     return make()
   } catch (error) {
@@ -92,14 +102,14 @@ interface Cell {
   readonly segment: MatrixSegment
   readonly vessel: Vessel
   readonly conditions: Conditions
-  readonly options: Options
   readonly label: string | null
 }
 
-function cellRow({ segment: chosen, vessel, conditions, options, label }: Cell): CompactRow {
-  if (!chosen.segment) return toProblemRow(chosen.fault ?? new Fault('internal', 'No segment'), label)
+function cellRow({ segment: chosen, vessel, conditions, label }: Cell): CompactRow {
+  if (!chosen.segment || !chosen.options)
+    return toProblemRow(chosen.fault ?? new Fault('internal', 'No segment'), label)
   try {
-    const { segment, record } = chosen
+    const { segment, record, options } = chosen
     const brief = adviseBriefly(segment, vessel, conditions, options)
     const inputs = { segment, vessel, conditions, options, ...(record && { record }) }
     return toCompactRow(brief, inputs, label)
@@ -124,12 +134,11 @@ function axesOf(wire: MatrixWire, registry: Registry) {
       conditions: toConditions(item, registry),
       label: 'label' in item ? item.label : undefined,
     })),
-    options: toOptions(wire.options),
   }
 }
 
 async function* cells(
-  { segments, vessels, conditions, options }: ReturnType<typeof axesOf>,
+  { segments, vessels, conditions }: ReturnType<typeof axesOf>,
   toText: (indices: readonly [number, number, number], row: CompactRow) => string,
 ): AsyncGenerator<string> {
   let text = ''
@@ -139,10 +148,7 @@ async function* cells(
       for (const [k, condition] of conditions.entries()) {
         const label = labelOf(segment.label, vessel.label, condition.label)
         const { conditions: water } = condition
-        text += toText(
-          [i, j, k],
-          cellRow({ segment, vessel: vessel.vessel, conditions: water, options, label }),
-        )
+        text += toText([i, j, k], cellRow({ segment, vessel: vessel.vessel, conditions: water, label }))
         made += 1
         if (made % ROWS_AT_ONCE !== 0) continue
         yield text

@@ -25,7 +25,7 @@ export function addExamples(document: Json, examples: Examples): Json {
       const example = typeof operationId === 'string' ? examples[operationId] : undefined
       if (!example) continue
       show(requestBody, example.request)
-      show(asJson(responses)?.['200'], example.reply)
+      show(asJson(responses)?.['200'] ?? asJson(responses)?.['201'], example.reply)
     }
   }
   return document

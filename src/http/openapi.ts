@@ -22,6 +22,7 @@ const TAGS = [
   { name: 'batches', description: 'The same answer for many lines or combinations at once.' },
   { name: 'segments', description: 'Stretches of waterway in the registry and what holds on them.' },
   { name: 'vessels', description: 'Classes of vessels and their dimensions.' },
+  { name: 'calibrations', description: 'Measured waves that correct the methods of one water.' },
   { name: 'methods', description: 'Published formulas, with their ranges and sources.' },
   { name: 'service', description: 'Health, documentation and kinds of problems.' },
 ]

@@ -5,16 +5,17 @@ import { Fault } from '../domain/fault.ts'
 import { fromKnots } from '../domain/units.ts'
 import { PassageCheck, type CheckSettings } from '../passages/check.ts'
 import type { Fairway } from '../passages/placement.ts'
-import type { SegmentRecord } from '../store/registry.ts'
+import type { Registry, SegmentRecord } from '../store/registry.ts'
 import type { App, Routes } from './app-type.ts'
 import { acceptLines, bodyStream } from './lines.ts'
 import { nearestFirst } from './nearest.ts'
 import { negotiate } from './negotiate.ts'
 import { passageAnswer } from './passage-answer.ts'
 import { openLog } from './passage-rows.ts'
+import { DEFAULT_OPTIONS } from './options.schema.ts'
 import { PassageLine, PassageQuery, type PassageQueryWire } from './passages.schema.ts'
 import { problemResponses } from './problems.ts'
-import { segmentOf } from './request.ts'
+import { optionsOn, segmentOf } from './request.ts'
 import { openView, type Service, type View } from './service.ts'
 import { sendStream } from './stream.ts'
 import { findAnyClass } from './vessel.schema.ts'
@@ -38,12 +39,13 @@ function parametersOf(query: PassageQueryWire) {
 
 type Parameters = ReturnType<typeof parametersOf>
 
-function fairwayOf(record: SegmentRecord): Fairway {
+function fairwayOf(record: SegmentRecord, registry: Registry): Fairway {
   const { chainage_from_m: from, chainage_to_m: to } = record.properties
   return {
     id: record.id,
     line: record.line,
     segment: segmentOf(record),
+    options: optionsOn(DEFAULT_OPTIONS, undefined, record.properties, registry),
     chainageFrom: typeof from === 'number' ? from : undefined,
     chainageTo: typeof to === 'number' ? to : undefined,
   }
@@ -52,7 +54,7 @@ function fairwayOf(record: SegmentRecord): Fairway {
 /** Segments of the waterway that is asked for. A name that none has is a slip: every row would be outside. */
 function fairwaysOf(waterway: string | null, { registry }: View): Fairway[] {
   const records = registry.segments(waterway === null ? {} : { waterway })
-  if (records.length > 0 || waterway === null) return records.map(fairwayOf)
+  if (records.length > 0 || waterway === null) return records.map((record) => fairwayOf(record, registry))
   const names = registry.segments().flatMap(({ properties }) => properties['waterway'] ?? [])
   const allowed = nearestFirst(waterway, [...new Set(names.map(String))]).slice(0, 20)
   const hint = allowed[0] === undefined ? '' : `; the nearest name is ${allowed[0]}`

@@ -140,6 +140,18 @@ export const PROBLEMS = {
     description:
       'Each entry of `errors` holds in `facts` the figures that contradict each other; correct one of them.',
   },
+  'too-few-passages': {
+    status: 422,
+    title: 'There are too few measured passages',
+    description:
+      'Send at least `facts.needed` passages that lie in the range of one method; `facts.in_range` tells how many do.',
+  },
+  'units-doubtful': {
+    status: 422,
+    title: 'The units of the measurements are doubtful',
+    description:
+      'Measured over computed wave heights, `facts.ratio`, look like feet for metres. Send metres, or `confirm_units` when the figures are metres.',
+  },
   'revision-required': {
     status: 428,
     title: 'The request must say which revision it changes',

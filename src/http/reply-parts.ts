@@ -103,13 +103,12 @@ export function toCriterionReply(decision: Decision, report: CriterionReport) {
 }
 
 export function toWaveReply(decision: Decision, report: WaveReport) {
-  const { waveFactor } = decision.situation.options
   return {
     id: report.id,
     applicable: report.outside.length === 0,
     outside: report.outside,
     height_m: known(report.height),
-    factor: waveFactor,
+    factor: report.factor,
     max_speed: report.firstSpeed < Infinity ? toPair(decision, report.firstSpeed) : undefined,
     reference: report.reference,
   }

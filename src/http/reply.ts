@@ -48,13 +48,15 @@ const conditionsReply = ({ situation, direction }: Decision) => ({
 
 function reproducibility(resolved: Resolved, context: ReplyContext) {
   const { record, classRevision } = resolved
-  const isOfRegistry = record !== undefined || classRevision !== undefined
+  const isOfRegistry =
+    record !== undefined || classRevision !== undefined || resolved.options.calibration !== undefined
   return {
     service_version: context.serviceVersion,
     method_version: METHOD_VERSION,
     input_hash: inputHash(resolved),
     segment_revision: record?.revision,
     vessel_class_revision: classRevision,
+    calibration_id: resolved.options.calibration?.id,
     registry_revision: isOfRegistry ? context.registryRevision : undefined,
   }
 }

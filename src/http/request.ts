@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import type { Inputs } from '../advisory/uncertainty.ts'
 import { Fault, type FaultItem } from '../domain/fault.ts'
+import type { Options } from '../domain/conditions.ts'
 import type { Segment } from '../domain/segment.ts'
 import { findVesselClass } from '../domain/vessel-classes.ts'
 import type { Registry, SegmentRecord } from '../store/registry.ts'
@@ -118,17 +119,42 @@ export function resolveSegment(
   return { segment: toRegistrySegment(merged, record, record).segment, record }
 }
 
-/** No calibration exists yet, so that naming one is a fault and not a factor of one. */
-export function refuseCalibration(segment: SegmentWire, options: OptionsWire | undefined): void {
+/** Which calibration a call uses, by id: what it names, else that of its segment; null uses none. */
+function calibrationIdOf(
+  options: OptionsWire | undefined,
+  segment: { readonly calibration_id?: unknown },
+): string | undefined {
   const id = options?.calibration_id === undefined ? segment.calibration_id : options.calibration_id
-  if (id === undefined || id === null || options?.wave_factor !== undefined) return
+  return typeof id === 'string' && options?.wave_factor === undefined ? id : undefined
+}
+
+/**
+ * Options on a segment: those of the call with the calibration that it uses there.
+ *
+ * @throws Fault `calibration-not-found`
+ */
+export function optionsOn(
+  options: Options,
+  wire: OptionsWire | undefined,
+  segment: { readonly calibration_id?: unknown },
+  registry: Registry,
+): Options {
+  const id = calibrationIdOf(wire, segment)
+  if (id === undefined) return options
+  const found = registry.findCalibration(id)
+  if (found) return { ...options, calibration: found.calibration }
   throw new Fault('calibration-not-found', `There is no calibration ${id}`, { facts: { calibration_id: id } })
 }
 
-/** Whether a request names a segment of the registry, or a class that is not built in. */
-export function namesRegistry({ segment, vessel, conditions }: AdvisoryWire): boolean {
+/** Whether a request names a segment or a calibration of the registry, or a class that is not built in. */
+export function namesRegistry({ segment, vessel, conditions, options }: AdvisoryWire): boolean {
   const classes = [vessel.class, conditions?.meeting_vessel?.class]
-  return segment.id !== undefined || classes.some((id) => id !== undefined && !findVesselClass(id))
+  const calibrations = [segment.calibration_id, options?.calibration_id]
+  return (
+    segment.id !== undefined ||
+    calibrations.some((id) => typeof id === 'string') ||
+    classes.some((id) => id !== undefined && !findVesselClass(id))
+  )
 }
 
 /**
@@ -137,12 +163,14 @@ export function namesRegistry({ segment, vessel, conditions }: AdvisoryWire): bo
  * @throws Fault `segment-not-found`, `vessel-class-not-found`, `calibration-not-found`, `impossible-input`
  */
 export function resolve(wire: AdvisoryWire, registry: Registry): Resolved {
-  refuseCalibration(wire.segment, wire.options)
+  const { segment, record } = resolveSegment(wire.segment, registry)
+  const own = wire.segment.calibration_id === undefined ? (record?.properties ?? {}) : wire.segment
   return {
-    ...resolveSegment(wire.segment, registry),
+    segment,
+    ...(record && { record }),
     vessel: toVessel(wire.vessel, registry),
     classRevision: classRevisionOf(wire.vessel.class, registry),
     conditions: toConditions(wire.conditions ?? {}, registry),
-    options: toOptions(wire.options),
+    options: optionsOn(toOptions(wire.options), wire.options, own, registry),
   }
 }

@@ -7,6 +7,7 @@ import { typicalPosition } from '../geo/line-positions.ts'
 import type { Registry, SegmentContent } from '../store/registry.ts'
 import type { App, Routes } from './app-type.ts'
 import { acceptGeoJson } from './body.ts'
+import { calibrationItems } from './calibration-named.ts'
 import { crsItems } from './crs.ts'
 import { FeatureIn, readFeature, type FeatureWire, type Remark } from './feature-in.ts'
 import { negotiate } from './negotiate.ts'
@@ -107,7 +108,11 @@ function lineStarts(features: readonly FeatureWire[]): LonLat[][] {
   })
 }
 
-async function readAll(collection: CollectionWire, keepsUnknown: boolean): Promise<ReadAll> {
+async function readAll(
+  collection: CollectionWire,
+  keepsUnknown: boolean,
+  registry: Registry,
+): Promise<ReadAll> {
   const { features } = collection
   const faults = [...crsItems(collection, '#'), ...repeatedIds(features)]
   const all: ReadAll = { contents: [], faults, remarks: [] }
@@ -115,7 +120,8 @@ async function readAll(collection: CollectionWire, keepsUnknown: boolean): Promi
   for (const [i, feature] of features.entries()) {
     const { content, faults, remarks } = readFeature(feature, `#/features/${i}`, keepsUnknown, near)
     if (content) all.contents.push(content)
-    for (const fault of faults) all.faults.push(fault)
+    const naming = content ? calibrationItems(content, registry, `#/features/${i}`) : []
+    for (const fault of [...faults, ...naming]) all.faults.push(fault)
     for (const remark of remarks) all.remarks.push(remark)
     if (i % FEATURES_AT_ONCE === FEATURES_AT_ONCE - 1) await new Promise(setImmediate)
   }
@@ -143,10 +149,11 @@ async function importSegments(
   service: Service,
 ) {
   const isDry = query.dry_run ?? false
-  const { contents, faults, remarks } = await readAll(wire, query.unknown === 'keep')
+  const before = await service.store.current()
+  const { contents, faults, remarks } = await readAll(wire, query.unknown === 'keep', before)
   if (faults.length > 0 && !isDry) throw refusedFeatures(faults)
   const made = isDry
-    ? foreseen(contents, await service.store.current())
+    ? foreseen(contents, before)
     : await service.store.importSegments(contents, authorOf(request, service))
   const { registry } = await openView(service, reply)
   return {
@@ -179,7 +186,7 @@ export function segmentImportRoutes(service: Service): Routes {
           body: CollectionIn,
           response: {
             200: ImportReply,
-            ...problemResponses(400, 401, 403, 406, 413, 415, 422, 503),
+            ...problemResponses(400, 401, 403, 404, 406, 413, 415, 422, 503),
           },
         },
         handler: (request, reply) => {

@@ -7,7 +7,7 @@ import type { SegmentFilter, SegmentRecord } from '../store/registry.ts'
 import { Id } from './fields.ts'
 import { SIGN_UNIT_NAMES, toConditions, toOptions } from './options.schema.ts'
 import { enumParameter, numberParameter } from './parameters.ts'
-import { classRevisionOf, refuseCalibration, segmentNotFound, segmentOf, type Resolved } from './request.ts'
+import { classRevisionOf, optionsOn, segmentNotFound, segmentOf, type Resolved } from './request.ts'
 import type { View } from './service.ts'
 import { toVessel } from './vessel.schema.ts'
 
@@ -106,6 +106,7 @@ export function askedOf(query: AdvisoryQuery, { registry }: View): Omit<Resolved
 
 /** What the query asks of a segment. */
 export function resolveQuery(record: SegmentRecord, query: AdvisoryQuery, view: View): Resolved {
-  refuseCalibration(record.properties, undefined)
-  return { record, segment: segmentOf(record), ...askedOf(query, view) }
+  const asked = askedOf(query, view)
+  const options = optionsOn(asked.options, undefined, record.properties, view.registry)
+  return { record, segment: segmentOf(record), ...asked, options }
 }

@@ -4,6 +4,7 @@ import { Fault } from '../domain/fault.ts'
 import type { Author } from '../store/registry.ts'
 import type { App, Routes } from './app-type.ts'
 import { acceptGeoJson } from './body.ts'
+import { calibrationItems } from './calibration-named.ts'
 import { FeatureIn, readFeature, type FeatureWire } from './feature-in.ts'
 import { SegmentFeature, toFeature } from './feature.schema.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
@@ -52,6 +53,8 @@ async function put(
   if (!content) throw refusedFeatures(faults)
   const expected = expectedOf(request)
   const before = await service.store.current()
+  const naming = calibrationItems(content, before, '#')
+  if (naming.length > 0) throw refusedFeatures(naming)
   const written = writtenOr(
     await service.store.putSegment(content, expected, authorOf(request, service)),
     expected,

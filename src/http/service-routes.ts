@@ -1,6 +1,7 @@
 import { advisoryRoutes } from './advisories.ts'
 import { advisoryStreamRoutes } from './advisory-stream.ts'
 import type { Routes } from './app-type.ts'
+import { calibrationRoutes } from './calibrations.ts'
 import { layerRoutes } from './layer.ts'
 import { matrixRoutes } from './matrix.ts'
 import { methodRoutes } from './methods.ts'
@@ -26,6 +27,7 @@ export function serviceRoutes(service: Service): Routes[] {
     segmentImportRoutes(service),
     passageRoutes(service),
     passageColumnRoutes,
+    calibrationRoutes(service),
     layerRoutes(service),
     vesselClassRoutes(service),
     methodRoutes,

@@ -36,6 +36,8 @@ const EMPTY: Registry = {
   segments: () => [],
   findClass: () => undefined,
   classes: () => [],
+  findCalibration: () => undefined,
+  calibrations: () => [],
 }
 
 /** The view of a request on the registry, whose revision its reply names. */

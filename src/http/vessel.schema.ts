@@ -79,10 +79,15 @@ export function findAnyClass(id: string, registry: Classes): VesselClass | undef
   return findVesselClass(id) ?? registry.findClass(id)?.vesselClass
 }
 
+/** Ids of every class there is, the nearest to a given one first. */
+export function nearestClasses(id: string, registry: Classes): string[] {
+  const own = registry.classes().map((record) => record.id)
+  return nearestFirst(id, [...CLASS_IDS, ...own])
+}
+
 /** Fault for a class that does not exist, with the nearest that does. */
 export function unknownClass(id: string, registry: Classes): Fault {
-  const own = registry.classes().map((record) => record.id)
-  const [nearest = ''] = nearestFirst(id, [...CLASS_IDS, ...own])
+  const [nearest = ''] = nearestClasses(id, registry)
   return new Fault('vessel-class-not-found', `There is no vessel class ${id}; the nearest is ${nearest}`, {
     facts: { vessel_class: id, nearest },
   })

@@ -84,11 +84,11 @@ export function speedInterval(method: Candidate, setting: Setting): SpeedInterva
 }
 
 /** Bits of the methods that can be computed, for want of any in range: those made for the hull and channel, else all. */
-function fallback(methods: readonly Candidate[], setting: Setting): number {
+function fallback(methods: readonly Candidate[], setting: Setting, excluded: number): number {
   let all = 0
   let fitting = 0
   methods.forEach((method, i) => {
-    if (method.hasCoefficients?.(setting) === false) return
+    if (method.hasCoefficients?.(setting) === false || (excluded & (1 << i)) !== 0) return
     all |= 1 << i
     if (fits(method, setting)) fitting |= 1 << i
   })
@@ -101,15 +101,21 @@ function fallback(methods: readonly Candidate[], setting: Setting): number {
  * @param methods    n methods, n ≤ 31
  * @param setting    the vessel in its section
  * @param preferred  bits of the methods asked for: where one of them is in range, only they count; 0 asks for none
+ * @param excluded   bits of the methods that do not count at any speed; default none
  * @returns bands in rising order, the first from 0, the last to Infinity, adjacent bands touching
  * @holds any setting
  */
-export function bandsOf(methods: readonly Candidate[], setting: Setting, preferred: number): Bands {
+export function bandsOf(
+  methods: readonly Candidate[],
+  setting: Setting,
+  preferred: number,
+  excluded = 0,
+): Bands {
   const intervals: (SpeedInterval | undefined)[] = []
   const edges = [0, Infinity]
   const speeds: number[] = []
-  for (const method of methods) {
-    const found = speedInterval(method, setting)
+  for (const [i, method] of methods.entries()) {
+    const found = (excluded & (1 << i)) === 0 ? speedInterval(method, setting) : undefined
     intervals.push(found)
     if (found) edges.push(found.from, found.to)
     const step = method.stepSpeed?.(setting)
@@ -117,7 +123,7 @@ export function bandsOf(methods: readonly Candidate[], setting: Setting, preferr
   }
   const steps = speeds.length > 0 ? { steps: speeds } : {}
   if (edges.length === 2) {
-    const list = [{ from: 0, to: Infinity, active: fallback(methods, setting) }]
+    const list = [{ from: 0, to: Infinity, active: fallback(methods, setting, excluded) }]
     return { list, intervals, isOutOfRange: true, ...steps }
   }
   return { list: bandsBetween(edges, intervals, preferred), intervals, isOutOfRange: false, ...steps }

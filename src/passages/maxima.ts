@@ -24,16 +24,6 @@ export interface Maximum {
   readonly cautions: readonly PassageCaution[]
 }
 
-/** As of an advisory without options of its own. */
-const OPTIONS: Options = {
-  combine: 'highest',
-  limits: {},
-  applyPostedLimit: true,
-  signUnit: 'km/h',
-  signStep: 1,
-  hasCurve: false,
-}
-
 /** What a computation yields; undefined when the vessel does not fit the water. */
 function fitting<Value>(compute: () => Value): Value | undefined {
   try {
@@ -55,7 +45,7 @@ export class Maxima {
   /** At the position as reported; where the hull cannot float there, on the sailing line. Undefined when it fits neither. */
   actual(placement: Whereabouts, vessel: Vessel, conditions: Conditions): Maximum | undefined {
     const { water, ...seen } = seenBy(placement, vessel, conditions)
-    const decision = fitting(() => decide(water.segment, vessel, conditions, OPTIONS).main)
+    const decision = fitting(() => decide(water.segment, vessel, conditions, optionsOf(placement)).main)
     if (decision) return { vessel, decision, situation: decision.situation, ...seen }
     const onLine = this.#decisionOnLine(placement, vessel, conditions)
     if (!onLine) return undefined
@@ -68,13 +58,16 @@ export class Maxima {
     const decision = this.#decisionOnLine(placement, vessel, conditions)
     if (!decision) return undefined
     const { water, ...seen } = seenBy(placement, vessel, conditions)
-    const situation = fitting(() => situationOf(water.segment, water.station, vessel, conditions, OPTIONS))
+    const situation = fitting(() =>
+      situationOf(water.segment, water.station, vessel, conditions, optionsOf(placement)),
+    )
     return { vessel, decision, situation: situation ?? decision.situation, ...seen }
   }
 
   #decisionOnLine(placement: Whereabouts, vessel: Vessel, conditions: Conditions): Decision | undefined {
     const { segment, station, fairway } = waterOf(placement)
-    const compute = () => fitting(() => decide(waterAt(segment, station), vessel, conditions, OPTIONS).main)
+    const compute = () =>
+      fitting(() => decide(waterAt(segment, station), vessel, conditions, fairway.options).main)
     if (segment.stations.length > 1) return compute()
     let known = this.#onLine.get(vessel)
     if (!known || known.size >= MOST_KEPT) {
@@ -101,6 +94,8 @@ export function postedOverGround({ situation, direction }: Decision): number {
   const current = currentAlong(situation.conditions, direction)
   return posted.reference === 'through-water' ? posted.speed + current : posted.speed
 }
+
+const optionsOf = (placement: Whereabouts): Options => waterOf(placement).fairway.options
 
 /** What a matched report lies on. */
 function waterOf({ fairway, chainage }: Whereabouts): {

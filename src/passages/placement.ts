@@ -1,3 +1,4 @@
+import type { Options } from '../domain/conditions.ts'
 import type { LonLat } from '../domain/position.ts'
 import type { Direction, Segment } from '../domain/segment.ts'
 import type { Status } from './position-report.ts'
@@ -8,6 +9,8 @@ export interface Fairway {
   /** sailing line, drawn downstream, n ≥ 2 */
   readonly line: readonly LonLat[]
   readonly segment: Segment
+  /** as of an advisory on this segment without options of its own */
+  readonly options: Options
   /** chainage at the first and at the last vertex, m; may fall; absent: 0 and the length */
   readonly chainageFrom: number | undefined
   readonly chainageTo: number | undefined

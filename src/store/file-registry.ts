@@ -30,5 +30,5 @@ function toRecord(feature: SegmentFeature, updated: string): SegmentRecord {
  * @param updated   when the file was made, RFC 3339 UTC
  */
 export function fileRegistry(features: readonly SegmentFeature[], updated: string): Registry {
-  return registryOf(1, inOrder(features.map((feature) => toRecord(feature, updated))), [])
+  return registryOf(1, inOrder(features.map((feature) => toRecord(feature, updated))), [], [])
 }

@@ -35,7 +35,8 @@ const registry: Migration = {
   },
 }
 
-async function createItems(db: Kysely<unknown>, items: string, revisions: string): Promise<void> {
+/** Items as they are now, without their history. */
+async function createCurrent(db: Kysely<unknown>, items: string): Promise<void> {
   await db.schema
     .createTable(items)
     // SQLite lets a primary key be null unless told otherwise
@@ -47,6 +48,10 @@ async function createItems(db: Kysely<unknown>, items: string, revisions: string
     .addColumn('content', 'text', (column) => column.notNull())
     .execute()
   await db.schema.createIndex(`${items}_changed_at`).on(items).column('changed_at').execute()
+}
+
+async function createItems(db: Kysely<unknown>, items: string, revisions: string): Promise<void> {
+  await createCurrent(db, items)
   await db.schema
     .createTable(revisions)
     .addColumn('id', 'text', (column) => column.notNull().references(`${items}.id`))
@@ -61,8 +66,22 @@ async function createItems(db: Kysely<unknown>, items: string, revisions: string
     .execute()
 }
 
+const calibrations: Migration = {
+  async up(db: Kysely<unknown>) {
+    await createCurrent(db, 'calibrations')
+    await db.schema
+      .createTable('calibration_rows')
+      .addColumn('id', 'text', (column) => column.primaryKey().notNull().references('calibrations.id'))
+      .addColumn('content', 'text', (column) => column.notNull())
+      .execute()
+  },
+}
+
 /** In the order of their names. */
-const MIGRATIONS: Readonly<Record<string, Migration>> = { '001-registry': registry }
+const MIGRATIONS: Readonly<Record<string, Migration>> = {
+  '001-registry': registry,
+  '002-calibrations': calibrations,
+}
 
 /**
  * Brings the schema up to date. On PostgreSQL it lets one replica in at a time; on SQLite the caller holds the lock.

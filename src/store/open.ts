@@ -1,3 +1,4 @@
+import { addCalibration, calibrationRowsOf, removeCalibration } from './calibrations.ts'
 import type { Engine } from './engine.ts'
 import { revisionOf, revisionsOf } from './history.ts'
 import { keysOf } from './keys.ts'
@@ -57,6 +58,9 @@ export function storeOn(engine: Engine): Store {
       return engine.write(() => put(builder, CLASSES, document, expected, author))
     },
     deleteClass: (id, expected, author) => engine.write(() => remove(builder, CLASSES, id, expected, author)),
+    addCalibration: (content, author) => engine.write(() => addCalibration(builder, content, author)),
+    deleteCalibration: (id, author) => engine.write(() => removeCalibration(builder, id, author)),
+    findCalibrationRows: (id) => engine.read(() => calibrationRowsOf(builder, id)),
     ...keysOf(engine),
     close: () => engine.close(),
   }

@@ -1,3 +1,4 @@
+import type { Calibration } from '../domain/calibration.ts'
 import type { BoundingBox, LonLat } from '../domain/position.ts'
 import type { VesselClass } from '../domain/vessel-classes.ts'
 
@@ -27,6 +28,42 @@ export interface ClassRecord {
   readonly vesselClass: VesselClass
 }
 
+type Json = Readonly<Record<string, unknown>>
+
+/** A calibration without the rows it was made from. Never changes. */
+export interface CalibrationRecord {
+  readonly id: string
+  /** RFC 3339 UTC */
+  readonly created: string
+  /** name of the access key it was made with; absent without keys */
+  readonly key?: string
+  /** what advisories take from it */
+  readonly calibration: Calibration
+  /** everything that was found, as it goes out, but for id and time */
+  readonly document: Json
+}
+
+/** What a calibration was made from. */
+export interface CalibrationRows {
+  /** n passages, as received */
+  readonly rows: readonly Json[]
+  /** n passages with what the methods compute for each, as it goes out */
+  readonly points: readonly Json[]
+}
+
+/** What is kept of a new calibration; the registry adds its id and time. */
+export interface CalibrationContent extends CalibrationRows {
+  readonly calibration: Omit<Calibration, 'id'>
+  readonly document: Json
+}
+
+/** What became of deleting a calibration; nothing that a segment names is deleted. */
+export type CalibrationDeleted =
+  | { readonly outcome: 'deleted'; readonly registryRevision: number }
+  | { readonly outcome: 'missing' }
+  /** ids of the segments that name it, in their order */
+  | { readonly outcome: 'in-use'; readonly usedBy: readonly string[] }
+
 export interface SegmentFilter {
   readonly bbox?: BoundingBox
   readonly waterway?: string
@@ -43,6 +80,9 @@ export interface Registry {
   findClass(id: string): ClassRecord | undefined
   /** in the order of their ids; own classes only */
   classes(): readonly ClassRecord[]
+  findCalibration(id: string): CalibrationRecord | undefined
+  /** in the order of their ids */
+  calibrations(): readonly CalibrationRecord[]
 }
 
 export type Action = 'created' | 'updated' | 'deleted' | 'imported'
@@ -105,15 +145,24 @@ export interface Store {
   readonly kind: 'sqlite' | 'postgres'
   /** The registry as of now: every write acknowledged before the call is in it. */
   current(): Promise<Registry>
+  /** @throws Fault `calibration-not-found` when it names one that does not exist */
   putSegment(content: SegmentContent, expected: Expected, author: Author): Promise<Written>
   deleteSegment(id: string, expected: Expected, author: Author): Promise<Written>
-  /** All or nothing; unchanged content makes no revision. */
+  /**
+   * All or nothing; unchanged content makes no revision.
+   *
+   * @throws Fault `calibration-not-found` when one of them names one that does not exist
+   */
   importSegments(contents: readonly SegmentContent[], author: Author): Promise<Imported>
   /** newest first; empty for a segment that never was. Deleted segments keep theirs. */
   revisions(id: string): Promise<readonly Revision[]>
   findRevision(id: string, revision: number): Promise<SegmentRecord | undefined>
   putClass(vesselClass: VesselClass, expected: Expected, author: Author): Promise<Written>
   deleteClass(id: string, expected: Expected, author: Author): Promise<Written>
+  /** Its id follows from content and time, so that the same rows sent again make another. */
+  addCalibration(content: CalibrationContent, author: Author): Promise<string>
+  deleteCalibration(id: string, author: Author): Promise<CalibrationDeleted>
+  findCalibrationRows(id: string): Promise<CalibrationRows | undefined>
   /** SHA-256 of the key, hex -> the key, when it is neither revoked nor expired at `time`. */
   findKey(hash: string, time: string): Promise<AccessKey | undefined>
   addKey(key: AccessKey, hash: string): Promise<boolean>

@@ -44,6 +44,13 @@ export interface RevisionTable {
   content: string | null
 }
 
+/** Apart from the calibration, which is held in memory. */
+export interface CalibrationRowTable {
+  id: string
+  /** JSON */
+  content: string
+}
+
 export interface AccessKeyTable {
   name: string
   role: Role
@@ -60,6 +67,9 @@ export interface Tables {
   segment_revisions: RevisionTable
   vessel_classes: ItemTable
   vessel_class_revisions: RevisionTable
+  /** of revision 1, as they never change */
+  calibrations: ItemTable
+  calibration_rows: CalibrationRowTable
   access_keys: AccessKeyTable
 }
 

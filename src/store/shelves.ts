@@ -1,5 +1,11 @@
 import type { VesselClass } from '../domain/vessel-classes.ts'
-import type { ClassRecord, SegmentContent, SegmentRecord } from './registry.ts'
+import type {
+  CalibrationContent,
+  CalibrationRecord,
+  ClassRecord,
+  SegmentContent,
+  SegmentRecord,
+} from './registry.ts'
 
 type Fields = Readonly<Record<string, unknown>>
 
@@ -15,6 +21,8 @@ export interface Document {
   readonly id: string
   /** JSON, as it is stored */
   readonly content: string
+  /** id of the calibration that it names */
+  readonly calibrationId?: string
 }
 
 type StoredSegment = Omit<SegmentContent, 'id'>
@@ -36,9 +44,14 @@ export const CLASSES: Shelf = {
   fieldsOf: (content) => JSON.parse(content) as Fields,
 }
 
+/** Calibrations never change, so that they have no revisions; their table is like the others. */
+export const CALIBRATIONS = 'calibrations' as 'segments'
+
 export function segmentDocument({ id, line, length, bbox, properties }: SegmentContent): Document {
   const content: StoredSegment = { line, length, bbox, properties }
-  return { id, content: JSON.stringify(content) }
+  const { calibration_id: calibrationId } = properties
+  const document = { id, content: JSON.stringify(content) }
+  return typeof calibrationId === 'string' ? { ...document, calibrationId } : document
 }
 
 export const classDocument = (vesselClass: VesselClass): Document => ({
@@ -60,3 +73,23 @@ export function toSegment({ id, revision, updated, content }: Row): SegmentRecor
 export function toClass({ id, revision, updated, content }: Row): ClassRecord {
   return Object.freeze({ id, revision, updated, vesselClass: JSON.parse(content) as VesselClass })
 }
+
+type StoredCalibration = Omit<CalibrationContent, 'rows' | 'points'> & { readonly key?: string }
+
+/** A calibration without its rows, as it is stored. */
+export function calibrationText(
+  { calibration, document }: StoredCalibration,
+  key: string | undefined,
+): string {
+  const stored: StoredCalibration = { calibration, document, ...(key !== undefined && { key }) }
+  return JSON.stringify(stored)
+}
+
+export function toCalibration({ id, updated, content }: Row): CalibrationRecord {
+  const { calibration, ...stored } = JSON.parse(content) as StoredCalibration
+  return Object.freeze({ id, created: updated, ...stored, calibration: { id, ...calibration } })
+}
+
+/** The calibration that a stored segment names. */
+export const calibrationIdOf = (content: string): unknown =>
+  (JSON.parse(content) as StoredSegment).properties['calibration_id']

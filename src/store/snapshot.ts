@@ -1,7 +1,7 @@
 import { boxesMeet } from '../geo/measure.ts'
 import { ask, type Engine, type Steps } from './engine.ts'
-import type { ClassRecord, Registry, SegmentFilter, SegmentRecord } from './registry.ts'
-import { CLASSES, SEGMENTS, type Shelf, toClass, toSegment } from './shelves.ts'
+import type { CalibrationRecord, ClassRecord, Registry, SegmentFilter, SegmentRecord } from './registry.ts'
+import { CALIBRATIONS, CLASSES, SEGMENTS, type Shelf, toCalibration, toClass, toSegment } from './shelves.ts'
 import { type Builder, stateQuery } from './schema.ts'
 
 interface Identified {
@@ -11,19 +11,23 @@ interface Identified {
 /**
  * A registry of these records.
  *
- * @param segments  in the order of their ids
- * @param classes   in the order of their ids
+ * @param segments      in the order of their ids
+ * @param classes       in the order of their ids
+ * @param calibrations  in the order of their ids
  */
 export function registryOf(
   revision: number,
   segments: readonly SegmentRecord[],
   classes: readonly ClassRecord[],
+  calibrations: readonly CalibrationRecord[],
 ): Registry {
   return Object.freeze({
     revision,
     findSegment: (id: string) => findIn(segments, id),
     findClass: (id: string) => findIn(classes, id),
     classes: () => classes,
+    findCalibration: (id: string) => findIn(calibrations, id),
+    calibrations: () => calibrations,
     segments: (filter?: SegmentFilter) =>
       filter === undefined || Object.keys(filter).length === 0
         ? segments
@@ -88,15 +92,22 @@ export function snapshotsOf(engine: Engine): () => Promise<Registry> {
 function* load(builder: Builder, latest: Registry | undefined): Steps<Registry> {
   const rows = yield* ask<{ registry_revision: number }>({ compile: () => stateQuery(builder) })
   const revision = rows[0]?.registry_revision ?? 0
-  const base = latest !== undefined && latest.revision <= revision ? latest : registryOf(-1, [], [])
-  const segments = yield* changedSince(builder, SEGMENTS, base.revision, base.segments(), toSegment)
-  const classes = yield* changedSince(builder, CLASSES, base.revision, base.classes(), toClass)
-  return registryOf(revision, segments, classes)
+  const base = latest !== undefined && latest.revision <= revision ? latest : registryOf(-1, [], [], [])
+  const segments = yield* changedSince(builder, SEGMENTS.items, base.revision, base.segments(), toSegment)
+  const classes = yield* changedSince(builder, CLASSES.items, base.revision, base.classes(), toClass)
+  const calibrations = yield* changedSince(
+    builder,
+    CALIBRATIONS,
+    base.revision,
+    base.calibrations(),
+    toCalibration,
+  )
+  return registryOf(revision, segments, classes, calibrations)
 }
 
 function* changedSince<T extends Identified>(
   builder: Builder,
-  { items }: Shelf,
+  items: Shelf['items'],
   since: number,
   records: readonly T[],
   toRecord: (row: { id: string; revision: number; updated: string; content: string }) => T,

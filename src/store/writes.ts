@@ -1,5 +1,6 @@
 import { changedNames } from './canonical.ts'
 import { ask, discard, keep, type Steps, type Verdict } from './engine.ts'
+import { assertCalibrations } from './references.ts'
 import type { Action, Author, Expected, Imported, Written } from './registry.ts'
 import type { Builder, ItemTable } from './schema.ts'
 import type { Document, Shelf } from './shelves.ts'
@@ -17,7 +18,7 @@ interface Change extends Document {
 }
 
 /** Raises the revision of the registry, which keeps every other writer out until the transaction ends. */
-function* nextRevision(builder: Builder): Steps<number> {
+export function* nextRevision(builder: Builder): Steps<number> {
   const rows = yield* ask(
     builder
       .updateTable('state')
@@ -75,6 +76,7 @@ export function* put(
   const before = existing(row)
   const refused = refusal(before?.revision, expected)
   if (refused) return discard(refused)
+  yield* assertCalibrations(builder, [document])
   const outcome = before ? 'updated' : 'created'
   const change = changeOf(shelf, row, document, outcome)
   if (change === undefined) {
@@ -116,6 +118,7 @@ export function* importAll(
   author: Author,
 ): Steps<Verdict<Imported>> {
   const registryRevision = yield* nextRevision(builder)
+  yield* assertCalibrations(builder, documents)
   const counts = { created: 0, updated: 0, unchanged: 0 }
   for (let start = 0; start < documents.length; start += BATCH) {
     const batch = documents.slice(start, start + BATCH)

@@ -1,3 +1,4 @@
+import type { Options } from '../../src/domain/conditions.ts'
 import type { Segment } from '../../src/domain/segment.ts'
 import { findVesselClass } from '../../src/domain/vessel-classes.ts'
 import type { Judgement } from '../../src/passages/judgement.ts'
@@ -62,6 +63,16 @@ export const REACH: Segment = {
   confinement: 'confined',
 }
 
+/** Of an advisory that is asked for without options. */
+export const NO_OPTIONS: Options = {
+  combine: 'highest',
+  limits: {},
+  applyPostedLimit: true,
+  signUnit: 'km/h',
+  signStep: 1,
+  hasCurve: false,
+}
+
 export const fairway = (id: string, segment: Segment = REACH): Fairway => ({
   id,
   line: [
@@ -69,6 +80,7 @@ export const fairway = (id: string, segment: Segment = REACH): Fairway => ({
     [3.52, 54.09],
   ],
   segment,
+  options: NO_OPTIONS,
   chainageFrom: undefined,
   chainageTo: undefined,
 })

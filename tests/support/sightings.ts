@@ -4,6 +4,7 @@ import type { Fairway, Placement } from '../../src/passages/placement.ts'
 import type { PositionReport } from '../../src/passages/position-report.ts'
 import { Tracks } from '../../src/passages/tracks.ts'
 import { geodesicEnd } from './geodesic.ts'
+import { NO_OPTIONS } from './passage-marks.ts'
 import { canal, soil } from './places.ts'
 
 const KNOT = 1852 / 3600
@@ -44,6 +45,7 @@ export function fairway(id: string, places: readonly Place[], description: Descr
     id,
     line: lineThrough(places),
     segment: canal({ depth: 4, distances }, { banks, ...(stations && { stations }) }),
+    options: NO_OPTIONS,
     chainageFrom: chainages?.[0],
     chainageTo: chainages?.[1],
   }
