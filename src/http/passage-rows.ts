@@ -95,7 +95,7 @@ class CsvLog {
     const reason = row.rejected?.reason
     if (reason !== 'cells-missing' && reason !== 'cells-too-many') return row
     // quotes that closed where they should are not to blame, but for one pair around the whole row
-    const isStray = cells.length === 1 || cells.some((cell) => cell.includes('"'))
+    const isStray = (cells.length === 1 && line.startsWith('"')) || cells.some((cell) => cell.includes('"'))
     return isStray ? this.#plainRow(line, cells, layout) : row
   }
 
