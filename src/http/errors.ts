@@ -9,6 +9,7 @@ import { VARY } from './negotiate.ts'
 import { problemRow } from './problem-table.ts'
 import { PROBLEM_TYPE, toProblem } from './problems.ts'
 import { allowedMethods, type KnownRoute } from './known-routes.ts'
+import { hasBegunReply } from './lifecycle.ts'
 
 const INTERNAL = new Fault(
   'internal',
@@ -107,7 +108,8 @@ const CONNECTION_FAULTS: Readonly<Record<string, readonly [FaultCode, string]>> 
 
 /** Answers bytes that are not an HTTP request, where a reply can still be written. */
 export function answerConnectionError(error: NodeJS.ErrnoException, socket: Socket): void {
-  if (error.code === 'ECONNRESET' || !socket.writable) {
+  // a reply that has begun is broken off: a problem in the middle of it would make it look whole
+  if (error.code === 'ECONNRESET' || !socket.writable || hasBegunReply(socket)) {
     socket.destroy()
     return
   }

@@ -1,6 +1,17 @@
+import type { ServerResponse } from 'node:http'
+import type { Socket } from 'node:net'
 import type { FastifyReply, FastifyRequest } from 'fastify'
 import { Fault } from '../domain/fault.ts'
 import type { App } from './app-type.ts'
+
+/** The latest reply on each connection. */
+const replies = new WeakMap<Socket, ServerResponse>()
+
+/** Whether a reply on this connection is under way: its head is sent, its end is not. */
+export function hasBegunReply(socket: Socket): boolean {
+  const reply = replies.get(socket)
+  return reply !== undefined && reply.headersSent && !reply.writableEnded
+}
 
 /** One log line for each reply, and a problem for requests that arrive while the service stops. */
 export function installLifecycle(app: App): void {
@@ -14,6 +25,7 @@ export function installLifecycle(app: App): void {
     else done()
   })
   app.addHook('onRequest', (request, reply, done) => {
+    replies.set(request.raw.socket, reply.raw)
     reply.raw.once('close', () => {
       // A reply that did not finish never reaches the hook below.
       if (!reply.raw.writableEnded) log(request, reply, 'cut off')

@@ -67,7 +67,7 @@ function judgedColumns({ vessel, conditions, ...judgement }: Judgement): Judged 
     loading: vessel.loading ?? null,
     length_m: vessel.length,
     beam_m: vessel.beam,
-    draught_m: vessel.draught,
+    draught_m: judgement.draught,
     through_water_kn: toKnots(judgement.throughWater),
     water_level_m: conditions.waterLevel,
     current_mps: conditions.current,
@@ -202,12 +202,13 @@ export function toGroupRow(group: PassageGroup): GroupRow {
     speed_p85_kn: toKnots(p85),
     speed_p95_kn: toKnots(p95),
     histogram_kn: { step: 0.5, counts: [...group.histogram] },
-    above_recommended_ratio: group.aboveRecommendedRatio,
+    above_recommended_ratio: finite(group.aboveRecommendedRatio),
     above_posted_ratio: finite(group.abovePostedRatio),
     no_safe_speed_passages: group.noSafeSpeedPassages,
-    wave_energy_left_j_per_m: group.energies[0],
-    wave_energy_right_j_per_m: group.energies[1],
+    wave_energy_left_j_per_m: finite(group.energies[0]),
+    wave_energy_right_j_per_m: finite(group.energies[1]),
     worst_tenth_energy_ratio: finite(group.worstTenthRatio),
+    unknown_energy_passages: group.unknownEnergyPassages,
   }
 }
 

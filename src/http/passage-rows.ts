@@ -94,7 +94,9 @@ class CsvLog {
     const row = reportOfCells(cells, layout, this.#number)
     const reason = row.rejected?.reason
     if (reason !== 'cells-missing' && reason !== 'cells-too-many') return row
-    return line.includes('"') ? this.#plainRow(line, cells, layout) : row
+    // quotes that closed where they should are not to blame, but for one pair around the whole row
+    const isStray = (cells.length === 1 && line.startsWith('"')) || cells.some((cell) => cell.includes('"'))
+    return isStray ? this.#plainRow(line, cells, layout) : row
   }
 
   /** A row of which the cells do not fit the header: as if its quotes were letters, else refused for them. */
@@ -102,8 +104,7 @@ class CsvLog {
     const plain = line.split(this.#delimiter)
     const isPlain = plain.length === layout.names.length
     const row = reportOfCells(isPlain ? plain : cells, layout, this.#number)
-    const isStray = cells.some((cell) => cell.includes('"'))
-    return row.rejected && !isPlain && isStray ? { rejected: { ...row.rejected, ...BROKEN_QUOTE } } : row
+    return row.rejected && !isPlain ? { rejected: { ...row.rejected, ...BROKEN_QUOTE } } : row
   }
 }
 

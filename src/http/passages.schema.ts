@@ -139,14 +139,17 @@ const GROUP_COLUMNS = {
   histogram_kn: z
     .strictObject({ step: z.number(), counts: z.array(count('passages')) })
     .describe('passages by speed, bins from zero'),
-  above_recommended_ratio: z.number().describe('passages with a report that certainly exceeds the maximum'),
-  above_posted_ratio: number('passages with a report above the posted limit'),
+  above_recommended_ratio: number(
+    'of the judged passages, those with a report that certainly exceeds the maximum',
+  ),
+  above_posted_ratio: number('of those for which a limit is posted, passages with a report above it'),
   no_safe_speed_passages: count('passages with a report where no speed is safe'),
-  wave_energy_left_j_per_m: z
-    .number()
-    .describe('sum of the highest reports of the passages, per metre of crest, J/m'),
-  wave_energy_right_j_per_m: z.number().describe('likewise, J/m'),
+  wave_energy_left_j_per_m: number('sum of the highest reports of the passages, per metre of crest, J/m'),
+  wave_energy_right_j_per_m: number('likewise, J/m'),
   worst_tenth_energy_ratio: number('share of the energy that the worst tenth of the passages brings'),
+  unknown_energy_passages: count(
+    'passages with a report whose waves no method covers, left out of the energies',
+  ),
 } as const
 
 const keysOf = <Key extends string>(columns: Readonly<Record<Key, unknown>>): readonly Key[] =>

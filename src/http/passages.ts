@@ -7,6 +7,7 @@ import { PassageCheck, type CheckSettings } from '../passages/check.ts'
 import type { Fairway } from '../passages/placement.ts'
 import type { Registry, SegmentRecord } from '../store/registry.ts'
 import type { App, Routes } from './app-type.ts'
+import { keepOpenAtWork } from './idle.ts'
 import { acceptLines, bodyStream } from './lines.ts'
 import { nearestFirst } from './nearest.ts'
 import { negotiate } from './negotiate.ts'
@@ -139,7 +140,9 @@ async function respond(
   query: PassageQueryWire,
 ): Promise<FastifyReply> {
   const format = negotiate(request, reply, ['ndjson', 'csv'])
-  const log = openLog(request, bodyStream(request))
+  const body = bodyStream(request)
+  keepOpenAtWork(request, reply, body)
+  const log = openLog(request, body)
   const view = await openView(service, reply)
   const parameters = parametersOf(query)
   const settings = settingsOf(parameters, view)

@@ -14,7 +14,8 @@ export async function sendStream(reply: FastifyReply, pieces: AsyncIterable<stri
   // Also when the caller is gone before the first read, which would leave the generator waiting for ever.
   stream.once('close', () => void iterator.return?.())
   stream.once('error', (error) => {
-    if (error instanceof Fault)
+    if ('code' in error && error.code === 'ERR_STREAM_PREMATURE_CLOSE') reply.log.info('caller is gone')
+    else if (error instanceof Fault)
       reply.log.info({ code: error.code, detail: error.message }, 'stream broken off')
     else reply.log.error({ err: error }, 'stream failed')
   })

@@ -31,13 +31,29 @@ function bankIndex(segment: Segment, side: Side, nearer: 0 | 1): 0 | 1 {
   return side === second.side ? 1 : nearer
 }
 
-function receptorsFrom(segment: Segment, offset: number, nearer: 0 | 1, least: number): readonly Receptor[] {
-  if (segment.receptors.length === 0) return segment.receptors
-  return segment.receptors.map((receptor) => {
-    const isSecond = bankIndex(segment, receptor.side, nearer) === 1
-    const distance = Math.max(least, receptor.distance + (isSecond ? -offset : offset))
-    return { ...receptor, distance }
-  })
+/** How far a vessel is off towards bank 1, and to the right; the same where sides are known. */
+interface Shift {
+  readonly toSecond: number
+  readonly toRight: number
+}
+
+/** How much farther a receptor is from the vessel than from the sailing line, m. */
+function fartherBy(
+  { side }: Receptor,
+  segment: Segment,
+  { toSecond, toRight }: Shift,
+  nearer: 0 | 1,
+): number {
+  if (side === 'left') return toRight
+  if (side === 'right') return -toRight
+  return bankIndex(segment, side, nearer) === 1 ? -toSecond : toSecond
+}
+
+function receptorsFrom(segment: Segment, shift: Shift, nearer: 0 | 1, least: number): readonly Receptor[] {
+  return segment.receptors.map((receptor) => ({
+    ...receptor,
+    distance: Math.max(least, receptor.distance + fartherBy(receptor, segment, shift, nearer)),
+  }))
 }
 
 /** The water at a place along a segment, as it is on the sailing line. */
@@ -75,7 +91,7 @@ export function waterFrom(
     segment: {
       ...segment,
       stations: [place],
-      receptors: receptorsFrom(segment, used, nearer, room),
+      receptors: receptorsFrom(segment, { toSecond: used, toRight: hasSides ? used : offset }, nearer, room),
     },
     station: place,
     distances: [distances[0] + reported, distances[1] - reported],

@@ -17,6 +17,12 @@ import { stationAt } from './station-at.ts'
 const INSIDE_TIMES = 1.5
 const INSIDE_MARGIN = 25
 
+/**
+ * Past an end a position belongs to a fairway no farther than this, m: the gap to one that goes on, and the margin; and as
+ * far as it is aside, since at a bend it may lie past the ends of both. Own choice.
+ */
+const END_MARGIN = 75
+
 /** A fairway is near up to this much more than half its width, m: own choice, for harbours and moorings beside it. */
 const NEAR_MARGIN = 500
 
@@ -131,7 +137,8 @@ export class FairwayNetwork {
     const bank = bankDistance(fairway, station, foot.offset)
     const [aside, beyond] = [Math.abs(foot.offset), Math.abs(foot.beyond)]
     const distance = Math.hypot(aside, beyond)
-    const isInside = aside <= insideDistance(bank) && beyond <= insideDistance(bank)
+    const inside = insideDistance(bank)
+    const isInside = aside <= inside && beyond <= Math.min(inside, END_MARGIN + aside)
     if (!isInside && distance > station.width / 2 + NEAR_MARGIN) return undefined
     const angle = weight > 0 ? axisAngle(report, foot.bearing) : 0
     const score =

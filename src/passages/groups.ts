@@ -18,14 +18,17 @@ export interface PassageGroup {
   readonly speedPercentiles: readonly [p50: number, p85: number, p95: number]
   /** passages by speed, bins of half a knot from zero */
   readonly histogram: readonly number[]
+  /** of the passages with a judged report; NaN without one */
   readonly aboveRecommendedRatio: number
-  /** NaN where no limit is posted for these vessels */
+  /** of the passages for which a limit is posted; NaN without one */
   readonly abovePostedRatio: number
   readonly noSafeSpeedPassages: number
-  /** sum over the passages, J per metre of crest */
+  /** sum over the passages where it is known, J per metre of crest; NaN where it is for none */
   readonly energies: readonly [left: number, right: number]
   /** share of the energy to both banks that the tenth of the passages with most of it brings; NaN without energy */
   readonly worstTenthRatio: number
+  /** with a report whose waves no method covers, left out of the energies */
+  readonly unknownEnergyPassages: number
 }
 
 interface Collected {
@@ -36,10 +39,12 @@ interface Collected {
   readonly energySums: number[]
   left: number
   right: number
+  judged: number
   above: number
   posted: number
   abovePosted: number
   unsafe: number
+  unknown: number
 }
 
 const byText = (a: string, b: string): number => (a < b ? -1 : a > b ? 1 : 0)
@@ -62,9 +67,14 @@ export class Groups {
       this.#groups.set(key, group)
     }
     group.speeds.push(speed)
-    group.energySums.push(energies[0] + energies[1])
-    group.left += energies[0]
-    group.right += energies[1]
+    if (passage.hasUnknownEnergy) group.unknown += 1
+    const energy = energies[0] + energies[1]
+    if (!Number.isNaN(energy)) {
+      group.energySums.push(energy)
+      group.left += energies[0]
+      group.right += energies[1]
+    }
+    if (passage.isAboveRecommended !== undefined) group.judged += 1
     if (passage.isAboveRecommended) group.above += 1
     if (passage.hasNoSafeSpeed) group.unsafe += 1
     if (passage.isAbovePosted !== undefined) group.posted += 1
@@ -93,10 +103,12 @@ function emptyGroup(segmentId: string, classId: string, direction: Direction | u
     energySums: [],
     left: 0,
     right: 0,
+    judged: 0,
     above: 0,
     posted: 0,
     abovePosted: 0,
     unsafe: 0,
+    unknown: 0,
   }
 }
 
@@ -111,19 +123,23 @@ function groupOf(group: Collected): PassageGroup {
     passages,
     speedPercentiles: [percentile(0.5), percentile(0.85), percentile(0.95)],
     histogram: histogramOf(speeds),
-    aboveRecommendedRatio: group.above / passages,
-    abovePostedRatio: group.posted === 0 ? NaN : group.abovePosted / passages,
+    aboveRecommendedRatio: group.above / group.judged,
+    abovePostedRatio: group.abovePosted / group.posted,
     noSafeSpeedPassages: group.unsafe,
-    energies: [group.left, group.right],
+    energies: group.energySums.length > 0 ? [group.left, group.right] : [NaN, NaN],
     worstTenthRatio: worstShare(group.energySums),
+    unknownEnergyPassages: group.unknown,
   }
 }
 
+/** Bin of a speed; one on a bound, but for rounding, is in the bin above it. */
+const binOf = (speed: number): number => Math.floor(speed / BIN + 1e-9)
+
 /** Counts up to the highest speed; a speed on a bound belongs to the bin above it. */
 function histogramOf(sorted: readonly number[]): number[] {
-  const counts = new Array<number>(Math.floor((sorted.at(-1) ?? 0) / BIN) + 1).fill(0)
+  const counts = new Array<number>(binOf(sorted.at(-1) ?? 0) + 1).fill(0)
   for (const speed of sorted) {
-    const bin = Math.floor(speed / BIN)
+    const bin = binOf(speed)
     counts[bin] = (counts[bin] ?? 0) + 1
   }
   return counts

@@ -86,6 +86,7 @@ export class Judge {
     return {
       guess,
       vessel,
+      draught: decision.situation.vessel.draught,
       conditions,
       throughWater,
       distances: maximum.distances,

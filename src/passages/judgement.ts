@@ -25,8 +25,10 @@ export interface Judging {
 /** A matched report as it was judged. SI; NaN and undefined where something does not apply. */
 export interface Judgement {
   readonly guess: VesselGuess
-  /** the loading that the figures are for */
+  /** the loading that the figures are for, before a permitted draught caps it */
   readonly vessel: Vessel
+  /** that was computed with, m */
+  readonly draught: number
   readonly conditions: Conditions
   readonly throughWater: number
   /** to the left and to the right waterline at the level, from the position as reported, m */

@@ -8,7 +8,7 @@ import type { VesselGuess } from './vessel-guess.ts'
 
 /** Numbers of a report to be judged and of a judgement: what moves between threads without being copied. */
 export const REPORT_SIZE = 8
-export const JUDGEMENT_SIZE = 18
+export const JUDGEMENT_SIZE = 19
 
 const OUTCOMES: readonly Outcome[] = ['limited', 'service-speed', 'no-safe-speed']
 
@@ -101,6 +101,7 @@ export function writeJudgement(
       waveHeights[1],
       waveEnergies[0],
       waveEnergies[1],
+      judgement.draught,
     ],
     from,
   )
@@ -133,6 +134,7 @@ export function readJudgement(
     criticalRatio: figure(13),
     waveHeights: [figure(14), figure(15)],
     waveEnergies: [figure(16), figure(17)],
+    draught: figure(18),
     cautions,
   }
 }

@@ -9,10 +9,12 @@ export interface Passage {
   readonly direction: Direction | undefined
   /** time-weighted mean over ground, m/s */
   readonly speed: number
-  /** to the left and to the right bank, of the report with most to both together, J per metre of crest */
+  /** to the left and to the right bank, of the report with most to both together, J per metre of crest; NaN where none is known */
   readonly energies: readonly [left: number, right: number]
-  /** whether a report is certainly above the recommended maximum */
-  readonly isAboveRecommended: boolean
+  /** whether a report has waves that no method covers, so that its energy is not among them */
+  readonly hasUnknownEnergy: boolean
+  /** whether a report is certainly above the recommended maximum; undefined where none is judged */
+  readonly isAboveRecommended: boolean | undefined
   /** whether a report is above the posted limit; undefined where none is posted */
   readonly isAbovePosted: boolean | undefined
   readonly hasNoSafeSpeed: boolean
@@ -27,18 +29,26 @@ interface OpenPassage {
   /** speed times time, m */
   integral: number
   energies: readonly [number, number]
-  isAboveRecommended: boolean
+  hasUnknownEnergy: boolean
+  isAboveRecommended: boolean | undefined
   isAbovePosted: boolean | undefined
   hasNoSafeSpeed: boolean
 }
 
-const orZero = (value: number): number => (Number.isNaN(value) ? 0 : value)
+const UNKNOWN = [NaN, NaN] as const
 
-/** Energy to each bank; nothing where the vessel does not move through the water or no method covers it. */
+/** Energy to each bank; none where the vessel does not move through the water, NaN where no method covers it. */
 function energiesOf({ judgement }: Mark): readonly [left: number, right: number] {
-  if (!judgement) return [0, 0]
-  const [left, right] = judgement.waveEnergies
-  return [orZero(left), orZero(right)]
+  if (!judgement) return UNKNOWN
+  return judgement.throughWater > 0 ? judgement.waveEnergies : [0, 0]
+}
+
+const isEnergyUnknown = (mark: Mark): boolean => Number.isNaN(total(energiesOf(mark)))
+
+const total = ([left, right]: readonly [number, number]): number => left + right
+
+function isMore(a: readonly [number, number], b: readonly [number, number]): boolean {
+  return total(a) > total(b) || (Number.isNaN(total(b)) && !Number.isNaN(total(a)))
 }
 
 /** Finds the passages of one vessel in its reports, in the order of time. */
@@ -78,6 +88,7 @@ export class PassageFinder {
       direction: open.direction,
       speed: duration > 0 ? open.integral / duration : open.first.report.speed,
       energies: open.energies,
+      hasUnknownEnergy: open.hasUnknownEnergy,
       isAboveRecommended: open.isAboveRecommended,
       isAbovePosted: open.isAbovePosted,
       hasNoSafeSpeed: open.hasNoSafeSpeed,
@@ -108,7 +119,8 @@ export class PassageFinder {
       last: mark,
       integral: 0,
       energies: energiesOf(mark),
-      isAboveRecommended: mark.judgement?.verdict === 'exceeds',
+      hasUnknownEnergy: isEnergyUnknown(mark),
+      isAboveRecommended: mark.judgement && mark.judgement.verdict === 'exceeds',
       isAbovePosted: this.#isAbovePosted(mark),
       hasNoSafeSpeed: mark.judgement?.verdict === 'no-safe-speed',
     }
@@ -122,8 +134,10 @@ export class PassageFinder {
     open.classId = classId
     open.direction ??= placement.direction
     const energies = energiesOf(mark)
-    if (energies[0] + energies[1] > open.energies[0] + open.energies[1]) open.energies = energies
-    open.isAboveRecommended ||= judgement?.verdict === 'exceeds'
+    if (isMore(energies, open.energies)) open.energies = energies
+    open.hasUnknownEnergy ||= isEnergyUnknown(mark)
+    if (judgement)
+      open.isAboveRecommended = open.isAboveRecommended === true || judgement.verdict === 'exceeds'
     open.hasNoSafeSpeed ||= judgement?.verdict === 'no-safe-speed'
     const isAbovePosted = this.#isAbovePosted(mark)
     if (isAbovePosted !== undefined) open.isAbovePosted = open.isAbovePosted === true || isAbovePosted

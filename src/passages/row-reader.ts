@@ -28,7 +28,7 @@ function loadingOf(cell: Cell): Loading | undefined {
 
 /** What tells vessels apart; empty when neither number can be used. */
 function keyOf(mmsi: string | undefined, eni: string | undefined): string {
-  if (mmsi !== undefined) return mmsi && `mmsi:${mmsi}`
+  if (mmsi) return `mmsi:${mmsi}`
   return eni ? `eni:${eni}` : ''
 }
 

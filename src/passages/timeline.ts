@@ -29,11 +29,6 @@ export class Timeline {
     const waiting = this.#waiting
     const { time } = mark.report
     this.#newest = Math.max(this.#newest, time)
-    // most vessels of a large log are somewhere else: there is nothing that such a report could end
-    if (waiting.length === 0 && !mark.judgement) {
-      settle(mark)
-      return
-    }
     let at = waiting.length
     while (at > 0 && (waiting[at - 1] as Mark).report.time > time) at -= 1
     if (at === waiting.length) waiting.push(mark)

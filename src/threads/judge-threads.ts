@@ -34,6 +34,7 @@ interface Task {
   readonly reports: readonly MatchedReport[]
   readonly log: JudgedLog
   readonly resolve: (judgements: Judgements) => void
+  readonly reject: (error: Error) => void
 }
 
 /** Threads that judge reports of logs, started when a log is long enough to be worth them. */
@@ -121,8 +122,8 @@ class Thread {
   judge(session: number, reports: readonly MatchedReport[], log: JudgedLog): Promise<Judgements> {
     const task = (this.#count += 1)
     const { numbers, newGuesses } = this.#numbered(session, reports, log)
-    return new Promise((resolve) => {
-      this.#tasks.set(task, { reports, log, resolve })
+    return new Promise((resolve, reject) => {
+      this.#tasks.set(task, { reports, log, resolve, reject })
       this.#post({ kind: 'judge', session, task, newGuesses, reports: numbers }, [
         numbers.buffer as ArrayBuffer,
       ])
@@ -183,7 +184,13 @@ class Thread {
     this.isAlive = false
     const tasks = [...this.#tasks.values()]
     this.#tasks.clear()
-    for (const { reports, log, resolve } of tasks) resolve(judgeHere(reports, log))
+    for (const { reports, log, resolve, reject } of tasks) {
+      try {
+        resolve(judgeHere(reports, log))
+      } catch (error) {
+        reject(error as Error)
+      }
+    }
   }
 }
 

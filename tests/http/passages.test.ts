@@ -1,6 +1,6 @@
 import { once } from 'node:events'
 import { request as httpRequest } from 'node:http'
-import type { AddressInfo } from 'node:net'
+import { connect, type AddressInfo } from 'node:net'
 import { setTimeout as wait } from 'node:timers/promises'
 import { gunzipSync, gzipSync } from 'node:zlib'
 import { parse } from 'csv-parse/sync'
@@ -299,6 +299,107 @@ describe('what cannot be read', () => {
     expect(linesOf(reply.body).at(-1)).toMatchObject({
       reports: { read: 2, rejected: [{ line: 1, reason: 'not-json' }] },
     })
+  })
+})
+
+describe('found by trying it (2026-12-01)', () => {
+  const columns = 'time,mmsi,lat,lon,sog_kn,cog_deg,ship_type,length_m,beam_m,draught_m'
+  const reportsOf = async (...rows: string[]) => {
+    const { app } = buildService()
+    const lines = await checked(app, [columns, ...rows].join('\n'), '?detail=reports')
+    return lines.filter(({ type }) => type === 'report')
+  }
+
+  test('a position beside a narrow cut is not taken for the end of the wide water behind it', async () => {
+    // 90 m off the lower cut, some 950 m from the mere; 60 m off the aqueduct; 690 m past the sea reach
+    const reports = await reportsOf(
+      '2026-05-04T06:00:00Z,299000003,54.080276,3.662133,9,105,70,55,7,2.0',
+      '2026-05-04T06:00:00Z,299000006,54.078804,3.577933,9,112,70,55,7,2.0',
+      '2026-05-04T06:00:00Z,299000007,54.08210,3.8400,9,80,70,55,7,2.0',
+    )
+    expect(reports.map(({ status }) => status)).toEqual([
+      'outside-fairway',
+      'outside-fairway',
+      'outside-fairway',
+    ])
+  })
+
+  test('a draught of the class that the permitted one caps is told as it was computed with', async () => {
+    const [report] = await reportsOf('2026-05-04T06:00:00Z,299000002,54.09130,3.52547,5,112,70,110,11.4,')
+    // the permitted draught of the Long Pound; the class has 3.5 m
+    expect(report).toMatchObject({ vessel_class: 'cemt-va', loading: 'laden', draught_m: 2.8 })
+  })
+
+  test('a stop that is told late ends an event as one told in time does', async () => {
+    const { app } = buildService()
+    const stop = '2026-05-04T06:01:00Z,299000001,54.09201,3.44075,0,131,70,55,7,2.0'
+    const fast = [
+      '2026-05-04T06:00:00Z,299000001,54.09267,3.43946,8,131,70,55,7,2.0',
+      '2026-05-04T06:02:00Z,299000001,54.09135,3.44200,8,131,70,55,7,2.0',
+    ]
+    const eventsOf = async (...rows: string[]) =>
+      (await checked(app, [columns, ...rows].join('\n'))).filter(({ type }) => type === 'event').length
+    expect(await eventsOf(...fast)).toBe(1)
+    expect(await eventsOf(stop, ...fast)).toBe(0)
+  })
+
+  test('a row that lacks a cell is not mended at the comma of its quoted name', async () => {
+    const { app } = buildService()
+    const header =
+      'MMSI,BaseDateTime,LAT,LON,SOG,COG,Heading,VesselName,IMO,CallSign,VesselType,Status,Length,Width,Draft,Cargo,TransceiverClass'
+    const cut = '299000002,2026-05-04T06:00:00,54.09267,3.43946,5,131,130,"WREN, HARROW",,,70,0,55,7,2.0,70'
+    const [report] = await checked(app, `${header}\n${cut}\n`, '?detail=reports')
+    expect(report).toMatchObject({ status: 'rejected', reason: 'cells-missing' })
+  })
+
+  test('a reply that has begun is broken off, not ended with a problem, when the rest is not HTTP', async () => {
+    const { app } = buildService()
+    await app.listen({ host: '127.0.0.1', port: 0 })
+    const socket = connect((app.server.address() as AddressInfo).port, '127.0.0.1')
+    onTestFinished(() => void socket.destroy())
+    const chunk = LOG
+    socket.write(
+      `POST ${PATH}?detail=reports HTTP/1.1\r\nhost: x\r\ncontent-type: text/csv\r\ntransfer-encoding: chunked\r\n\r\n${Buffer.byteLength(chunk).toString(16)}\r\n${chunk}\r\n`,
+    )
+    let text = ''
+    socket.on('data', (data) => (text += String(data)))
+    await once(socket, 'data')
+    socket.write('zz\r\n')
+    await once(socket, 'close')
+    expect(text.match(/HTTP\/1\.1/g)).toHaveLength(1)
+    // the last chunk, which would make it look whole, never comes
+    expect(text).not.toContain('\r\n0\r\n')
+  })
+
+  test('a long check is not cut off for want of traffic while it works', async () => {
+    const { service, ...parts } = serviceParts(readConfig({ DATABASE_URL: 'sqlite::memory:' }))
+    class Slow extends JudgeThreads {
+      override open(...given: Parameters<JudgeThreads['open']>) {
+        const session = super.open(...given)
+        return {
+          judge: async (reports: Parameters<typeof session.judge>[0]) => {
+            await wait(900)
+            return session.judge(reports)
+          },
+          close: () => {
+            session.close()
+          },
+        }
+      }
+    }
+    const app = buildApp({
+      ...parts,
+      routes: serviceRoutes({ ...service, judges: new Slow({ threads: 0 }) }),
+      log: pino({ level: 'silent' }),
+    })
+    onTestFinished(async () => {
+      app.server.closeAllConnections()
+      await app.close()
+    })
+    const url = await app.listen({ host: '127.0.0.1', port: 0 })
+    app.server.setTimeout(200)
+    const reply = await fetch(`${url}${PATH}`, { method: 'POST', headers: CSV, body: LOG })
+    expect(linesOf(await reply.text()).at(-1)).toMatchObject({ type: 'summary' })
   })
 })
 

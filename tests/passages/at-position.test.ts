@@ -73,4 +73,12 @@ describe('without known sides', () => {
   it.each([5, -5])('a vessel %i m off is nearer to the nearer bank', (offset) => {
     expect(seen(segment, STATION, offset).distances).toEqual([13, 27])
   })
+
+  it('a receptor whose side is known keeps it', () => {
+    const receptors = [{ kind: 'other', side: 'left', distance: 15 }] as const
+    const distanceFrom = (offset: number) =>
+      seen({ ...segment, receptors }, STATION, offset).segment.receptors[0]?.distance
+    expect(distanceFrom(5)).toBe(20)
+    expect(distanceFrom(-5)).toBe(10)
+  })
 })

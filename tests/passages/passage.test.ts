@@ -37,7 +37,9 @@ describe('a passage', () => {
       judgement: { waveEnergies: [left, right] as const },
     })
     const marks = [at(0, 3, energies(90, 20)), at(60, 3, energies(60, 70)), at(120, 3, energies(NaN, 100))]
-    expect(passagesOf(marks)[0]?.energies).toEqual([60, 70])
+    expect(passagesOf(marks)).toMatchObject([{ energies: [60, 70], hasUnknownEnergy: true }])
+    expect(passagesOf(marks.slice(0, 2))).toMatchObject([{ hasUnknownEnergy: false }])
+    expect(passagesOf(marks.slice(2))[0]?.energies).toEqual([NaN, 100])
   })
 
   it('goes on over a stop, and ends at a gap, in another segment and with the direction', () => {
@@ -67,6 +69,7 @@ describe('groups', () => {
     direction: 'downstream',
     speed: knots * KNOT,
     energies: [10, 0],
+    hasUnknownEnergy: false,
     isAboveRecommended: false,
     isAbovePosted: undefined,
     hasNoSafeSpeed: false,
@@ -131,5 +134,24 @@ describe('groups', () => {
       noSafeSpeedPassages: 1,
     })
     expect(summed([passage(6)])[0]?.abovePostedRatio).toBeNaN()
+  })
+
+  it('tell shares of those that could be judged only', () => {
+    const [group] = summed([
+      passage(6, { isAboveRecommended: true, isAbovePosted: true }),
+      passage(6, { isAboveRecommended: undefined }),
+      passage(6, { isAboveRecommended: undefined }),
+    ])
+    expect(group).toMatchObject({ passages: 3, aboveRecommendedRatio: 1, abovePostedRatio: 1 })
+    expect(summed([passage(6, { isAboveRecommended: undefined })])[0]?.aboveRecommendedRatio).toBeNaN()
+  })
+
+  it('sum the energies that are known, and count the passages with others', () => {
+    const unknown = { energies: [NaN, NaN], hasUnknownEnergy: true } as const
+    expect(summed([passage(6), passage(9, unknown)])[0]).toMatchObject({
+      energies: [10, 0],
+      unknownEnergyPassages: 1,
+    })
+    expect(summed([passage(9, unknown)])[0]?.energies).toEqual([NaN, NaN])
   })
 })

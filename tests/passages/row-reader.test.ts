@@ -148,6 +148,7 @@ test('a row of our own layout, by its ENI', () => {
     current: 0.7,
   })
   expect(own({ mmsi: '244000001' }).report).toMatchObject({ vesselKey: 'mmsi:244000001', eni: '02325678' })
+  expect(own({ mmsi: '12345' }).report).toMatchObject({ vesselKey: 'eni:02325678', mmsi: undefined })
   expect(own({ mmsi: '244000001', eni: 'x' }).report).toMatchObject({ mmsi: '244000001', eni: undefined })
 })
 
@@ -170,7 +171,7 @@ test.each([
   [{ time: '2022-01-03T00:00:03' }, 'time-without-zone'],
   [{ eni: '' }, 'vessel-not-identified'],
   [{ eni: '12' }, 'eni-unreadable'],
-  [{ mmsi: '12345678' }, 'mmsi-unreadable'],
+  [{ mmsi: '12345678', eni: '' }, 'mmsi-unreadable'],
   [{ lat: '52,1' }, 'number-unreadable'],
   [{ lon: '5°6' }, 'number-unreadable'],
   [{ sog_kn: '0x10' }, 'number-unreadable'],

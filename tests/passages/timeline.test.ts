@@ -29,9 +29,12 @@ it('keeps reports of one time in the order in which they came', () => {
   expect(lines).toEqual([1, 2, 3])
 })
 
-it('does not hold a report that is not judged when nothing waits', () => {
+it('holds reports that are not judged too: one before them may come later', () => {
   const timeline = new Timeline(600)
   const times: number[] = []
-  timeline.add(mark({ report: { time: 7 } }), ({ report }) => times.push(report.time))
-  expect(times).toEqual([7])
+  const settle = ({ report }: { report: { time: number } }) => times.push(report.time)
+  timeline.add(mark({ report: { time: 60 } }), settle)
+  timeline.add(at(0), settle)
+  timeline.end(settle)
+  expect(times).toEqual([0, 60])
 })

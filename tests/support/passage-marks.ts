@@ -105,6 +105,7 @@ export function judgement(given: Partial<Judgement> = {}): Judgement {
   return {
     guess: GUESS,
     vessel: GUESS.variants[0],
+    draught: GUESS.variants[0].draught,
     conditions: { waterLevel: 0, current: 0, isWaterLevelGiven: true, isCurrentGiven: true },
     throughWater: 3,
     distances: [18, 22],
