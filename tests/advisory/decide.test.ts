@@ -13,7 +13,7 @@ const decideCase = (c: Case): SegmentDecision | undefined =>
 const every = ({ main, byDirection }: SegmentDecision): Decision[] =>
   byDirection ? [main, byDirection.upstream, byDirection.downstream] : [main]
 
-/** API 4: all conditions hold, minima included, maxima not. */
+/** All conditions hold, minima included, maxima not. */
 function isInGroup(vessel: Vessel, group: Group): boolean {
   return [
     !group.vesselClasses || group.vesselClasses.includes(vessel.classId ?? ''),

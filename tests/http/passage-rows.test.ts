@@ -37,7 +37,7 @@ const told = (rows: readonly LogRow[]) =>
   )
 
 const HEADER = 'time,mmsi,vessel_name,lat,lon,sog_kn'
-const row = (name: string) => `2022-01-03T00:00:03Z,244000001,${name},52.1,5.1,9`
+const row = (name: string) => `2022-01-03T00:00:03Z,299000001,${name},52.1,5.1,9`
 
 describe('CSV', () => {
   test.each([1, 2, 3, 7, 1000])(
@@ -97,11 +97,11 @@ describe('CSV', () => {
       [6, 'A,B'],
     ])
     const [first] = await csv(text)
-    expect(first!.rejected).toMatchObject({ time: 1641168003, mmsi: '244000001' })
+    expect(first!.rejected).toMatchObject({ time: 1641168003, mmsi: '299000001' })
   })
 
   test('quotes that hide a delimiter by chance give way to the cells of the header', async () => {
-    const hidden = 'vessel_name,mmsi,time,lat,lon,sog_kn,imo\n"A,244000001,2022-01-03T00:00:03Z,52.1,5.1,9,B"'
+    const hidden = 'vessel_name,mmsi,time,lat,lon,sog_kn,imo\n"A,299000001,2022-01-03T00:00:03Z,52.1,5.1,9,B"'
     expect(told(await csv(hidden))).toEqual([[2, '"A']])
   })
 
@@ -203,7 +203,7 @@ describe('NDJSON', () => {
   const item = (changes: object = {}) =>
     JSON.stringify({
       time: '2022-01-03T00:00:03Z',
-      mmsi: '244000001',
+      mmsi: '299000001',
       lat: 52.1,
       lon: 5.1,
       sog_kn: 9,

@@ -21,12 +21,12 @@ const US =
 
 test('a row of the older US layout', () => {
   const row =
-    '366000001,2022-01-03T00:00:03,29.57679,-90.60568,6.6,159.2,157.0,SAINT EXAMPLE,IMO9307839,WDX0001,31.0,12.0,26.0,10.0,3.1,52.0,A'
+    '299000009,2022-01-03T00:00:03,29.57679,-90.60568,6.6,159.2,157.0,SAINT EXAMPLE,IMO9307839,WDX0001,31.0,12.0,26.0,10.0,3.1,52.0,A'
   expect(report(US, row)).toEqual({
     line: 7,
     time: 1641168003,
-    vesselKey: 'mmsi:366000001',
-    mmsi: '366000001',
+    vesselKey: 'mmsi:299000009',
+    mmsi: '299000009',
     eni: undefined,
     name: 'SAINT EXAMPLE',
     lon: -90.60568,
@@ -53,12 +53,12 @@ test('a row of the older US layout', () => {
 test('a row of the newer US layout, and one of 2017 with a status in words', () => {
   const newer =
     'mmsi,base_date_time,longitude,latitude,sog,cog,heading,vessel_name,imo,call_sign,vessel_type,status,length,width,draft,cargo,transceiver'
-  expect(report(newer, '366000001,2024-07-12 00:00:03,-90.6,29.5,0.0,360.0,511,,,,,,0,0,0,,B')).toMatchObject(
+  expect(report(newer, '299000009,2024-07-12 00:00:03,-90.6,29.5,0.0,360.0,511,,,,,,0,0,0,,B')).toMatchObject(
     { time: 1720742403, lon: -90.6, lat: 29.5, speed: 0, course: NaN, heading: NaN, length: NaN },
   )
   const old = US.replace(',TransceiverClass', '')
   expect(
-    report(old, '366000001,2017-01-03T00:00:03,29.5,-90.6,3.5,-55.4,358.0,X,,,1004,moored,,,,'),
+    report(old, '299000009,2017-01-03T00:00:03,29.5,-90.6,3.5,-55.4,358.0,X,,,1004,moored,,,,'),
   ).toMatchObject({ shipType: 70, navigationStatus: 5, course: -55.4 + 409.6 })
 })
 
@@ -147,9 +147,9 @@ test('a row of our own layout, by its ENI', () => {
     waterLevel: -0.5,
     current: 0.7,
   })
-  expect(own({ mmsi: '244000001' }).report).toMatchObject({ vesselKey: 'mmsi:244000001', eni: '02325678' })
+  expect(own({ mmsi: '299000001' }).report).toMatchObject({ vesselKey: 'mmsi:299000001', eni: '02325678' })
   expect(own({ mmsi: '12345' }).report).toMatchObject({ vesselKey: 'eni:02325678', mmsi: undefined })
-  expect(own({ mmsi: '244000001', eni: 'x' }).report).toMatchObject({ mmsi: '244000001', eni: undefined })
+  expect(own({ mmsi: '299000001', eni: 'x' }).report).toMatchObject({ mmsi: '299000001', eni: undefined })
 })
 
 test('a convoy of zeros is none', () => {
@@ -196,13 +196,13 @@ test.each([
 })
 
 test('a refusal names the column and what stands there, cut short, and keeps what could be read', () => {
-  const { rejected } = own({ mmsi: '244000001', water_level_m: `"${'x'.repeat(60_000)}` })
+  const { rejected } = own({ mmsi: '299000001', water_level_m: `"${'x'.repeat(60_000)}` })
   expect(rejected).toEqual({
     line: 7,
     reason: 'number-unreadable',
     detail: `water_level_m "\\"${'x'.repeat(39)}" is not a number: write it in decimal, with a point`,
     time: 1641168003,
-    mmsi: '244000001',
+    mmsi: '299000001',
     eni: '02325678',
     name: undefined,
   } satisfies RejectedRow)
@@ -213,14 +213,14 @@ test('a refusal names the column and what stands there, cut short, and keeps wha
 
 test('a row needs as many cells as the header; empty ones beyond it are let pass', () => {
   const header = 'time,mmsi,lat,lon,sog_kn,vessel_name'
-  const row = '2022-01-03T00:00:03Z,244000001,52.1,5.1,9,A'
+  const row = '2022-01-03T00:00:03Z,299000001,52.1,5.1,9,A'
   expect(report(header, `${row},, `).name).toBe('A')
-  expect(rowOf(header, `${row},,B`).rejected).toMatchObject({ reason: 'cells-too-many', mmsi: '244000001' })
-  expect(rowOf(header, '2022-01-03T00:00:03Z,244000001,52.1').rejected).toMatchObject({
+  expect(rowOf(header, `${row},,B`).rejected).toMatchObject({ reason: 'cells-too-many', mmsi: '299000001' })
+  expect(rowOf(header, '2022-01-03T00:00:03Z,299000001,52.1').rejected).toMatchObject({
     reason: 'cells-missing',
     detail: 'The row has 3 cells where the header has 6',
     time: 1641168003,
-    mmsi: '244000001',
+    mmsi: '299000001',
   })
 })
 
@@ -229,13 +229,13 @@ function object(value: unknown): { row: LogRow; unknown: string[] } {
   return { row: reportOfObject(value, 4, (key) => unknown.push(key)), unknown }
 }
 
-const PLAIN = { time: '2022-01-03T00:00:03Z', mmsi: '244000001', lat: 52.1, lon: 5.1, sog_kn: 9 }
+const PLAIN = { time: '2022-01-03T00:00:03Z', mmsi: '299000001', lat: 52.1, lon: 5.1, sog_kn: 9 }
 
 test('an object has the same names, in either letter case, with numbers or their text', () => {
-  const expected = { line: 4, time: 1641168003, mmsi: '244000001', lat: 52.1, lon: 5.1, speed: 9 * KNOT }
+  const expected = { line: 4, time: 1641168003, mmsi: '299000001', lat: 52.1, lon: 5.1, speed: 9 * KNOT }
   expect(object(PLAIN).row.report).toMatchObject(expected)
   const { row, unknown } = object({
-    MMSI: 244000001,
+    MMSI: 299000001,
     BaseDateTime: '2022-01-03T00:00:03',
     LAT: '52.1',
     Longitude: 5.1,
@@ -258,7 +258,7 @@ test.each([
   [{ ...PLAIN, time: null }, 'time-missing'],
   [{ ...PLAIN, mmsi: undefined }, 'vessel-not-identified'],
   [{ ...PLAIN, mmsi: 0 }, 'vessel-not-identified'],
-  [{ ...PLAIN, mmsi: [244000001] }, 'mmsi-unreadable'],
+  [{ ...PLAIN, mmsi: [299000001] }, 'mmsi-unreadable'],
   [{ ...PLAIN, sog_kn: true }, 'number-unreadable'],
   [{ ...PLAIN, sog_kn: [9] }, 'number-unreadable'],
   [{ ...PLAIN, sog_kn: {} }, 'number-unreadable'],
@@ -277,7 +277,7 @@ test.each([
 test('keys that every object has are unknown ones', () => {
   const text = `{"__proto__":{"mmsi":"1"},"constructor":1,"toString":2,${JSON.stringify(PLAIN).slice(1)}`
   const { row, unknown } = object(JSON.parse(text))
-  expect(row.report?.mmsi).toBe('244000001')
+  expect(row.report?.mmsi).toBe('299000001')
   expect(unknown).toEqual(['__proto__', 'constructor', 'toString'])
   expect(({} as Record<string, unknown>)['mmsi']).toBeUndefined()
 })

@@ -160,7 +160,7 @@ test('a copy counts once, also when it comes later; older than the gap is late',
     'matched east',
     'late older-than-the-gap',
   ])
-  const other = report(10, [500, 0], { vesselKey: 'mmsi:244000002' })
+  const other = report(10, [500, 0], { vesselKey: 'mmsi:299000002' })
   expect(lastOf([EAST], ...reports, other).status).toBe('matched')
   expect(told(place([EAST], [report(0, [0, 0]), report(31, [0, 0]), report(0, [0, 0])], 30))).toEqual([
     'matched east',

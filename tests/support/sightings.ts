@@ -4,7 +4,7 @@ import type { Fairway, Placement } from '../../src/passages/placement.ts'
 import type { PositionReport } from '../../src/passages/position-report.ts'
 import { Tracks } from '../../src/passages/tracks.ts'
 import { geodesicEnd } from './geodesic.ts'
-import { NO_OPTIONS } from './passage-marks.ts'
+import { NO_OPTIONS, positionReport } from './passage-marks.ts'
 import { canal, soil } from './places.ts'
 
 const KNOT = 1852 / 3600
@@ -59,33 +59,15 @@ export interface Sighting extends Partial<Omit<PositionReport, 'speed'>> {
 /** A vessel under way to the east at 6 kn. */
 export function report(time: number, place: Place, { knots = 6, ...more }: Sighting = {}): PositionReport {
   const [lon, lat] = positionAt(place)
-  return {
+  return positionReport({
     line: 1,
     time: 1_700_000_000 + time,
-    vesselKey: 'mmsi:244000001',
-    mmsi: '244000001',
-    eni: undefined,
-    name: undefined,
     lon,
     lat,
     speed: knots * KNOT,
     course: 90,
-    heading: NaN,
-    navigationStatus: NaN,
-    shipType: NaN,
-    length: NaN,
-    beam: NaN,
-    draught: NaN,
-    mobile: 'vessel',
-    vesselClass: undefined,
-    loading: undefined,
-    convoyLength: NaN,
-    convoyBeam: NaN,
-    convoyDraught: NaN,
-    waterLevel: NaN,
-    current: NaN,
     ...more,
-  }
+  })
 }
 
 export const EAST = fairway('east', [
