@@ -1,3 +1,4 @@
+import type { Extent } from '../domain/calibration.ts'
 import type { BedKind, Direction } from '../domain/segment.ts'
 import { isInRange } from '../hydro/bands.ts'
 import { permissibleVelocity } from '../hydro/permissible-velocity.ts'
@@ -81,16 +82,33 @@ function outsideRange(situation: Situation, speed: number): Caution | undefined 
   }
 }
 
-/** Factors hold for what was measured: a higher or a lower speed is extrapolated. */
-function beyondCalibration({ options }: Situation, speed: number): Caution | undefined {
+/** Times by which depth or distance may leave what was measured before a factor counts as extrapolated: own choice. */
+const MEASURED_SLACK = 2
+
+const isFarFrom = ([least, greatest]: Extent, value: number): boolean =>
+  value < least / MEASURED_SLACK || value > greatest * MEASURED_SLACK
+
+/** Factors hold for what was measured: another speed is extrapolated, and a much different depth or distance. */
+function beyondCalibration({ options, section }: Situation, speed: number): Caution | undefined {
   if (!options.calibration || options.waveFactor !== undefined) return undefined
-  const [least, greatest] = options.calibration.coverage.speed
-  if (speed >= least && speed <= greatest) return undefined
+  const { coverage } = options.calibration
+  const distance = Math.min(...section.distances)
+  const beyond = [
+    ...(speed < coverage.speed[0] || speed > coverage.speed[1] ? ['speed'] : []),
+    ...(isFarFrom(coverage.depth, section.depth) ? ['depth'] : []),
+    ...(isFarFrom(coverage.distance, distance) ? ['distance'] : []),
+  ]
+  if (beyond.length === 0) return undefined
   return {
     code: 'beyond-calibration',
     severity: 'caution',
-    text: 'The speed is outside those at which waves were measured on this water: the factors are extrapolated.',
-    facts: { speed_mps: speed, measured_from_mps: least, measured_to_mps: greatest },
+    text: `The ${beyond.join(' and the ')} lies outside what was measured on this water: the factors are extrapolated.`,
+    facts: {
+      beyond,
+      speed_mps: speed,
+      measured_from_mps: coverage.speed[0],
+      measured_to_mps: coverage.speed[1],
+    },
   }
 }
 

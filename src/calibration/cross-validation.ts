@@ -39,6 +39,9 @@ function medianWithout(sorted: readonly number[], left: number): number {
   return (at(Math.floor((others - 1) / 2)) + at(Math.floor(others / 2))) / 2
 }
 
+/** Scatter of a log ratio that can be told from rounding, dimensionless (own choice; doubles carry 1e-16). */
+const LEAST_SCATTER = 1e-9
+
 /**
  * Whether the scatter of two methods differs on the passages that both cover, at 95 %: log ratios in pairs have the same
  * variance exactly when their sums and their differences are uncorrelated (Pitman-Morgan test).
@@ -62,7 +65,9 @@ export function isDifferent(some: Ratios, others: Ratios): boolean {
   const sums = centred(pairs.map((pair) => pair.sum))
   const differences = centred(pairs.map((pair) => pair.difference))
   const [ofSums, ofDifferences] = [dot(sums, sums), dot(differences, differences)]
-  if (ofDifferences <= ROUNDING * ofSums) return false
+  // passages that are all alike scatter by rounding alone, which tells nothing
+  const leastScatter = pairs.length * LEAST_SCATTER ** 2
+  if (ofSums <= leastScatter || ofDifferences <= Math.max(leastScatter, ROUNDING * ofSums)) return false
   const correlation = dot(sums, differences) / Math.sqrt(ofSums * ofDifferences)
   const degrees = pairs.length - 2
   const statistic = correlation * Math.sqrt(degrees / (1 - correlation * correlation))

@@ -17,10 +17,10 @@ const FOOT = 0.3048 // m
 const UNIT_RATIOS = [1 / FOOT, FOOT] as const
 const UNIT_SLACK = 0.1
 
-/** Faults of rows as one problem: 422 where every one is a pair of figures that clash, else 400. */
+/** Faults of rows as one problem: 422 where every one is a pair of figures that clash, which it tells, else 400. */
 function refusedRows(errors: readonly FaultItem[]): Fault {
   const [first] = errors
-  if (!first || errors.some(({ code }) => code !== 'clash')) return refused(errors)
+  if (!first || errors.some(({ code, facts }) => code !== 'clash' || !facts)) return refused(errors)
   const more = errors.length > 1 ? ` (and ${errors.length - 1} more)` : ''
   return new Fault('impossible-input', `${first.detail}${more}`, { errors })
 }

@@ -63,6 +63,7 @@ interface MethodRow {
   readonly value: number
   readonly reference: string
   readonly firstSpeed?: number
+  readonly factor?: number | undefined
 }
 
 function methodRow({ decision }: Advisory, row: MethodRow): Markup {
@@ -76,12 +77,27 @@ function methodRow({ decision }: Advisory, row: MethodRow): Markup {
         : 'not reached'
   return markup`<tr><th scope="row" class="method">${methodName(row.id)}<span>${row.reference}</span></th><td class="figure" data-name="value">${metres(row.value)}</td>${
     row.firstSpeed !== undefined && markup`<td class="figure" data-name="own maximum">${own}</td>`
-  }<td class="whole" data-name="range">${isIn ? 'in range' : `out: ${outsideText(row.outside)}`}</td></tr>`
+  }<td class="whole" data-name="range">${isIn ? 'in range' : `out: ${outsideText(row.outside)}`}${
+    row.factor !== undefined && `, times ${figure(row.factor, 2)}`
+  }</td></tr>`
+}
+
+/** Where heights are corrected: by what, and what the answer would be without. */
+function correctionText({ decision, uncalibrated }: Advisory): string {
+  if (!uncalibrated) return ''
+  const { calibration, waveFactor } = decision.situation.options
+  const by =
+    waveFactor === undefined && calibration ? `calibration ${calibration.id}` : 'a factor that was given'
+  const without =
+    uncalibrated.decision.outcome === 'no-safe-speed'
+      ? 'no speed would be safe'
+      : `the recommended maximum would be ${kmh(uncalibrated.decision.overGround)}`
+  return ` Heights are corrected by ${by}, and methods without a factor do not count; without it ${without}.`
 }
 
 export function waveTable(advisory: Advisory): Markup {
   const rows = advisory.waveMethods.map((report) => methodRow(advisory, { ...report, value: report.height }))
-  return markup`<table class="stack methods"><caption><b>Table 2.</b> Secondary wave height at the nearer bank by each method. A value out of range is shown and does not count.</caption><thead><tr><th scope="col">Method and reference</th><th scope="col" class="figure">Height</th><th scope="col" class="figure">Own maximum</th><th scope="col">Range</th></tr></thead><tbody>${rows}</tbody></table>`
+  return markup`<table class="stack methods"><caption><b>Table 2.</b> Secondary wave height at the nearer bank by each method. A value out of range is shown and does not count.${correctionText(advisory)}</caption><thead><tr><th scope="col">Method and reference</th><th scope="col" class="figure">Height</th><th scope="col" class="figure">Own maximum</th><th scope="col">Range</th></tr></thead><tbody>${rows}</tbody></table>`
 }
 
 export function squatTable(advisory: Advisory): Markup {

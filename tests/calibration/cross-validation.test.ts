@@ -82,3 +82,14 @@ test('methods as good as each other are told apart in one of twenty samples, a w
   expect(equal).toBeLessThan(0.08)
   expect(worse).toBeGreaterThan(0.9)
 })
+
+// 2026-12-01: rounding of the mean was taken for scatter, and methods were told apart by it
+test('passages that are all alike tell no methods apart', () => {
+  for (const count of [6, 50, 77, 100, 333]) {
+    for (const height of [0.037, 0.046, 0.05, 0.071]) {
+      const alike = (value: number) => Array.from({ length: count }, () => value)
+      const passages = measured(alike(height), alike(0.029), alike(0.037))
+      expect(isDifferent(ratiosOf(passages, 0), ratiosOf(passages, 1)), `${count} of ${height}`).toBe(false)
+    }
+  }
+})

@@ -153,4 +153,37 @@ describe('a calibration', () => {
     expect(await codesAt(7)).toContain('beyond-calibration')
     expect(await codesAt(13)).toContain('beyond-calibration')
   })
+
+  test('says when depth or distance is far from what was measured', async () => {
+    const { app } = buildService()
+    const id = await calibrate(app)
+    const beyond = async (segment: Json): Promise<unknown> => {
+      const reply = await post(app, '/v1/effects', {
+        segment,
+        vessel: BOAT,
+        options: { calibration_id: id },
+        speed_kmh: 10,
+        speed_reference: 'through-water',
+      })
+      const { cautions } = reply.json<{ cautions: { code: string; facts?: Json }[] }>()
+      return cautions.find(({ code }) => code === 'beyond-calibration')?.facts?.['beyond']
+    }
+    // measured 3.91 to 4.17 m deep and 20 to 24.7 m off
+    expect(await beyond({ depth_m: 4, width_m: 50, bank_distance_m: 22 })).toBeUndefined()
+    expect(await beyond({ depth_m: 9, width_m: 50, bank_distance_m: 22 })).toEqual(['depth'])
+    expect(await beyond({ depth_m: 4, width_m: 900, bank_distance_m: 300 })).toEqual(['distance'])
+  })
+
+  test('stands on the sheet of its segment, with its factors and what it would be without', async () => {
+    const { app } = buildService()
+    const url = `${POUND}/sheet?vessel_class=recreational-rc`
+    expect((await get(app, url)).body).not.toContain('corrected by')
+    const id = await calibrate(app)
+    await name(app, id)
+    const page = (await get(app, url)).body
+    expect(page).toContain(`Heights are corrected by calibration ${id}`)
+    // the posted limit of the Long Pound governs this boat without it
+    expect(page).toMatch(/without it the recommended maximum would be 1[0-9.]+\s*km\/h/)
+    expect(page).toMatch(/in range, times \d\.\d\d</)
+  })
 })
