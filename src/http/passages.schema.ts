@@ -3,6 +3,7 @@ import { CRITERION_IDS } from '../advisory/criteria/criterion.ts'
 import { DIRECTIONS } from '../domain/segment.ts'
 import { LOADINGS } from '../domain/vessel.ts'
 import { VERDICTS } from '../passages/judgement.ts'
+import { PASSAGE_CAUTIONS } from '../passages/passage-cautions.ts'
 import { STATUSES } from '../passages/position-report.ts'
 import { VESSEL_BASES } from '../passages/vessel-guess.ts'
 import { formatParameter } from './negotiate.ts'
@@ -44,6 +45,10 @@ export const PassageQuery = z.strictObject({
 })
 
 export type PassageQueryWire = z.output<typeof PassageQuery>
+
+const CAUTION_TEXTS = Object.entries(PASSAGE_CAUTIONS)
+  .map(([code, meaning]) => `${code} (${meaning})`)
+  .join(', ')
 
 const text = z.string().nullable()
 const number = (what: string) => z.number().nullable().describe(what)
@@ -92,7 +97,7 @@ const REPORT_COLUMNS = {
   wave_height_right_m: number('at the right bank, m'),
   wave_energy_left_j_per_m: number('per metre of crest at the left bank, J/m'),
   wave_energy_right_j_per_m: number('likewise at the right bank, J/m'),
-  cautions: text.describe('codes, joined by ;'),
+  cautions: text.describe(`codes, joined by ;: those of an advisory, and ${CAUTION_TEXTS}`),
 } as const
 
 /** Columns of an event, in their order. */

@@ -1,7 +1,6 @@
 /** What cautions of a passage say besides those of an advisory. */
 export const PASSAGE_CAUTIONS = {
-  'convoy-size-unknown':
-    'A towboat reports its own hull, not its convoy: the maximum for the convoy is lower.',
+  'convoy-size-unknown': 'A towboat reports its own hull, not its convoy: that of the convoy may be lower.',
   'bank-sides-unknown':
     'Which bank is the nearer one is not known: the vessel is taken to be off the sailing line towards it.',
   'position-at-bank':
