@@ -43,11 +43,33 @@ function lowest(bounds: readonly Bound[], last: Bound): Bound {
   return found
 }
 
-function decideDirection(
-  situation: Situation,
-  water: readonly Bound[],
-  direction: Direction | undefined,
-): Decision {
+/** A vessel at a station with the bounds that the water sets, whatever the current. */
+export interface StationBounds {
+  readonly situation: Situation
+  readonly water: readonly Bound[]
+}
+
+/**
+ * The bounds of the water at every station of a segment. Current and direction play no part in them, so that they serve
+ * every current and direction alike.
+ *
+ * @throws Fault `impossible-input` when the vessel does not fit one of the stations
+ */
+export function stationBounds(
+  segment: Segment,
+  vessel: Vessel,
+  conditions: Conditions,
+  options: Options,
+): readonly [StationBounds, ...StationBounds[]] {
+  const [first, ...rest] = segment.stations.map((station) => {
+    const situation = situationOf(segment, station, vessel, conditions, options)
+    return { situation, water: boundsOf(waterCriteria(situation), situation.vessel.maxSpeed) }
+  })
+  if (!first) throw new RangeError('A segment has at least one station')
+  return [first, ...rest]
+}
+
+function decideDirection({ situation, water }: StationBounds, direction: Direction | undefined): Decision {
   const { maxSpeed, minSteerageSpeed } = situation.vessel
   const posted = postedLimitCriterion(situation, direction)
   const service: Bound = { criterion: serviceSpeedCriterion(situation), firstSpeed: maxSpeed }
@@ -85,6 +107,25 @@ export interface SegmentDecision {
   readonly byDirection?: Readonly<Record<Direction, Decision>>
 }
 
+/** The decision along a segment, in every direction that is asked for; the lowest station governs. */
+export function decideAlong(
+  [first, ...rest]: readonly [StationBounds, ...StationBounds[]],
+  conditions: Conditions,
+): SegmentDecision {
+  const inDirection = (direction: Direction | undefined): Decision =>
+    strictest([
+      decideDirection(first, direction),
+      ...rest.map((bounds) => decideDirection(bounds, direction)),
+    ])
+  const directions = directionsOf(conditions)
+  if (directions.length === 1) return { main: inDirection(directions[0]) }
+  const byDirection = { upstream: inDirection('upstream'), downstream: inDirection('downstream') }
+  const main = conditions.direction
+    ? byDirection[conditions.direction]
+    : strictest([byDirection.upstream, byDirection.downstream])
+  return { main, byDirection }
+}
+
 /**
  * Decides the largest safe speed on a segment: at every station, in every direction that is asked for. Along a segment
  * the lowest station governs.
@@ -97,21 +138,5 @@ export function decide(
   conditions: Conditions,
   options: Options,
 ): SegmentDecision {
-  const [first, ...rest] = segment.stations.map((station) => {
-    const situation = situationOf(segment, station, vessel, conditions, options)
-    return { situation, water: boundsOf(waterCriteria(situation), situation.vessel.maxSpeed) }
-  })
-  if (!first) throw new RangeError('A segment has at least one station')
-  const inDirection = (direction: Direction | undefined): Decision =>
-    strictest([
-      decideDirection(first.situation, first.water, direction),
-      ...rest.map(({ situation, water }) => decideDirection(situation, water, direction)),
-    ])
-  const directions = directionsOf(conditions)
-  if (directions.length === 1) return { main: inDirection(directions[0]) }
-  const byDirection = { upstream: inDirection('upstream'), downstream: inDirection('downstream') }
-  const main = conditions.direction
-    ? byDirection[conditions.direction]
-    : strictest([byDirection.upstream, byDirection.downstream])
-  return { main, byDirection }
+  return decideAlong(stationBounds(segment, vessel, conditions, options), conditions)
 }
