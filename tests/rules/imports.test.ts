@@ -28,8 +28,10 @@ const TABLE: Readonly<Record<string, Rule>> = {
   advisory: { src: ['domain', 'hydro'], packages: [] },
   passages: { src: ['domain', 'hydro', 'geo', 'advisory'], packages: ['d3-array'] },
   calibration: { src: ['domain', 'hydro', 'advisory'], packages: ['d3-*'] },
-  threads: { src: ['passages'], packages: ['node:*'] },
-  report: { src: ['domain', 'advisory', 'calibration', 'store (types)'], packages: ['d3-*'] },
+  limits: { src: ['domain', 'hydro', 'advisory'], packages: [] },
+  threads: { src: ['passages', 'limits'], packages: ['piscina', 'node:*'] },
+  jobs: { src: ['domain', 'limits', 'threads', 'store (types)'], packages: ['pg-boss', 'node:*'] },
+  report: { src: ['domain', 'advisory', 'calibration', 'limits', 'store (types)'], packages: ['d3-*'] },
   store: { src: ['domain', 'geo'], packages: ['kysely', 'better-sqlite3', 'pg', 'node:*'] },
   access: { src: ['domain', 'store (types)'], packages: ['node:*'] },
   http: {
@@ -39,8 +41,10 @@ const TABLE: Readonly<Record<string, Rule>> = {
       'advisory',
       'passages',
       'calibration',
+      'limits',
       'report',
       'access',
+      'jobs (types)',
       'store (types)',
       'threads (types)',
     ],
@@ -50,6 +54,7 @@ const TABLE: Readonly<Record<string, Rule>> = {
   'app.ts': { src: ['http', 'config.ts (types)'], packages: ['fastify'] },
   'parts.ts': { src: ['*'], packages: ['node:*'] },
   'server.ts': { src: ['*'], packages: ['*'] },
+  'verify.ts': { src: ['*'], packages: ['node:*'] },
   'keys.ts': { src: ['*'], packages: ['node:*'] },
 }
 
