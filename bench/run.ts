@@ -11,6 +11,7 @@ import { resolve, type AdvisoryWire } from '../src/http/request.ts'
 import { fileRegistry } from '../src/store/file-registry.ts'
 import { passageRows } from './passages.ts'
 import { registryRows } from './registry.ts'
+import { studyRows } from './study.ts'
 
 /**
  * Measures the service side by side with the least that any service must do. Each line is a ratio or a rate of this run:
@@ -167,6 +168,7 @@ async function http(): Promise<void> {
 }
 
 await kernel()
+rows.push(...studyRows())
 rows.push(...(await registryRows()))
 rows.push(...(await passageRows()))
 await http()

@@ -1,3 +1,4 @@
+import { availableParallelism } from 'node:os'
 import { z } from 'zod'
 
 const WHOLE = /^\d+$/
@@ -18,6 +19,8 @@ function isDatabase(text: string): boolean {
   if (!POSTGRES_URL.test(text)) return SQLITE_URL.test(text)
   return URL.canParse(text) && new URL(text).hostname !== '' && new URL(text).pathname.length > 1
 }
+
+const MOST_WORKERS = 64
 
 const LEVELS = ['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'] as const
 
@@ -57,6 +60,7 @@ export const Environment = z.object({
     })
     .transform((text) => text.split(',').map((origin) => new URL(origin.trim()).origin))
     .default([]),
+  WORKERS: whole(1, MOST_WORKERS, Math.min(MOST_WORKERS, availableParallelism())),
 })
 
 const LOOPBACK = new Set(['localhost', '127.0.0.1', '::1', '[::1]'])
@@ -79,6 +83,8 @@ export interface Config {
   readonly demo: boolean | undefined
   /** Origins of pages that may call the service. */
   readonly corsOrigins: readonly string[]
+  /** Threads that compute studies. */
+  readonly workers: number
 }
 
 /** Lists everything that is wrong with the environment, a line each. */
@@ -109,5 +115,6 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     access: values.ACCESS ?? (LOOPBACK.has(values.HOST) ? 'open' : 'keys'),
     demo: values.DEMO,
     corsOrigins: values.CORS_ORIGINS,
+    workers: values.WORKERS,
   })
 }

@@ -6,10 +6,16 @@ import { installAccess } from './http/access.ts'
 import { installCors } from './http/cors.ts'
 import { readFeature, type FeatureWire } from './http/feature-in.ts'
 import type { Examples } from './http/openapi-examples.ts'
+import { concludeWith } from './http/plan-verify.ts'
 import type { Service } from './http/service.ts'
 import { serviceRoutes } from './http/service-routes.ts'
+import type { Jobs } from './jobs/jobs.ts'
+import { localJobs } from './jobs/local-jobs.ts'
+import type { RunnerParts } from './jobs/runner.ts'
+import { sharedJobs } from './jobs/shared-jobs.ts'
 import { deferredStore } from './store/deferred.ts'
 import { openStore } from './store/open.ts'
+import { openQueueDatabase } from './store/queue-database.ts'
 import type { Store } from './store/registry.ts'
 import { JudgeThreads } from './threads/judge-threads.ts'
 
@@ -27,15 +33,31 @@ export interface ServiceParts extends Omit<AppParts, 'log'> {
   readonly findExample: () => Promise<string | undefined>
 }
 
+/** What goes on without a request, told to the log. */
+export interface Listeners {
+  /** a connection to the database broke */
+  readonly onLostConnection?: (error: Error) => void
+  /** a job in the background met an error, and goes on or fails */
+  readonly onJobError?: (error: unknown) => void
+}
+
 /** Everything the service answers with: the one place where routes and the registry are put together. */
-export function serviceParts(config: Config, onLostConnection?: (error: Error) => void): ServiceParts {
+export function serviceParts(config: Config, listeners: Listeners = {}): ServiceParts {
   const version = serviceVersion()
   const now = () => new Date().toISOString()
-  const opening = openRegistry(config, now, onLostConnection)
+  const opening = openRegistry(config, now, listeners.onLostConnection)
   const store = deferredStore(config.databaseUrl.startsWith('sqlite:') ? 'sqlite' : 'postgres', opening)
   const judges = new JudgeThreads()
+  const jobs = jobsOn(config, listeners, {
+    store,
+    workers: config.workers,
+    conclude: concludeWith(() => service),
+    now,
+    methodVersion: METHOD_VERSION,
+  })
   const service: Service = {
     store,
+    jobs,
     serviceVersion: version,
     now,
     bodyTimeout: config.requestTimeout,
@@ -44,7 +66,7 @@ export function serviceParts(config: Config, onLostConnection?: (error: Error) =
   return {
     config,
     service,
-    opened: opening.then(() => undefined),
+    opened: opening.then(() => jobs.start()),
     installs: [
       (app) => {
         installCors(app, config.corsOrigins)
@@ -61,7 +83,7 @@ export function serviceParts(config: Config, onLostConnection?: (error: Error) =
     versions: { service: version, methods: METHOD_VERSION },
     isReady: async () => ({ registryRevision: (await store.current()).revision, database: store.kind }),
     onClose: async () => {
-      await judges.end()
+      await Promise.all([judges.end(), jobs.close()])
       await store.close()
     },
     examples: readExamples(),
@@ -70,6 +92,17 @@ export function serviceParts(config: Config, onLostConnection?: (error: Error) =
       return registry.findSegment(EXAMPLE)?.id ?? registry.segments()[0]?.id
     },
   }
+}
+
+/** Jobs of this process, or shared by the replicas on one database. */
+function jobsOn(
+  { databaseUrl }: Config,
+  { onLostConnection, onJobError = () => undefined }: Listeners,
+  parts: Omit<RunnerParts, 'onError'>,
+): Jobs {
+  const running = { ...parts, onError: onJobError }
+  if (databaseUrl.startsWith('sqlite:')) return localJobs(running)
+  return sharedJobs({ ...running, database: openQueueDatabase(databaseUrl, onLostConnection) })
 }
 
 async function openRegistry(
@@ -109,7 +142,7 @@ function readExamples(): Examples {
   return examples
 }
 
-function serviceVersion(): string {
+export function serviceVersion(): string {
   // One folder up from src and from dist alike.
   const text = readFileSync(new URL('../package.json', import.meta.url), 'utf8')
   return (JSON.parse(text) as { version: string }).version

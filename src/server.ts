@@ -34,8 +34,13 @@ function stopOnSignals(app: App): void {
 
 const config = settings()
 const log = pino({ level: config.logLevel })
-const { opened, findExample, ...parts } = serviceParts(config, (error) => {
-  log.error({ err: error }, 'a connection to the database was lost')
+const { opened, findExample, ...parts } = serviceParts(config, {
+  onLostConnection: (error) => {
+    log.error({ err: error }, 'a connection to the database was lost')
+  },
+  onJobError: (error) => {
+    log.error({ err: error }, 'a job met an error')
+  },
 })
 const app = buildApp({ ...parts, log })
 stopOnSignals(app)

@@ -1,3 +1,4 @@
+import { availableParallelism } from 'node:os'
 import { expect, test } from 'vitest'
 import { ConfigError, readConfig } from '../src/config.ts'
 
@@ -14,6 +15,7 @@ test('an empty environment gives the defaults, frozen', () => {
     access: 'open',
     demo: undefined,
     corsOrigins: [],
+    workers: Math.min(64, availableParallelism()),
   })
   expect(Object.isFrozen(config)).toBe(true)
 })
@@ -35,6 +37,14 @@ test('origins are read from a list, and what is no origin stops the start', () =
   expect(() => readConfig({ DEMO: 'yes', ACCESS: 'none' })).toThrow(
     /ACCESS must be open or keys[\s\S]*DEMO must be/,
   )
+})
+
+test.each(['1', '64'])('%s threads may compute studies', (text) => {
+  expect(readConfig({ WORKERS: text }).workers).toBe(Number(text))
+})
+
+test.each(['0', '65', '-1', '2.5', 'all'])('%s threads are refused', (text) => {
+  expect(() => readConfig({ WORKERS: text })).toThrow('WORKERS must be a whole number from 1 to 64')
 })
 
 test('given values are read, and a URL loses the slash at its end', () => {

@@ -49,6 +49,9 @@ export interface StationBounds {
   readonly water: readonly Bound[]
 }
 
+/** The bounds of the water at every station of a segment, n ≥ 1, in the order of the stations. */
+export type SegmentBounds = readonly [StationBounds, ...StationBounds[]]
+
 /**
  * The bounds of the water at every station of a segment. Current and direction play no part in them, so that they serve
  * every current and direction alike.
@@ -60,7 +63,7 @@ export function stationBounds(
   vessel: Vessel,
   conditions: Conditions,
   options: Options,
-): readonly [StationBounds, ...StationBounds[]] {
+): SegmentBounds {
   const [first, ...rest] = segment.stations.map((station) => {
     const situation = situationOf(segment, station, vessel, conditions, options)
     return { situation, water: boundsOf(waterCriteria(situation), situation.vessel.maxSpeed) }
@@ -107,19 +110,43 @@ export interface SegmentDecision {
   readonly byDirection?: Readonly<Record<Direction, Decision>>
 }
 
+/** The same bounds in another current, m/s, positive downstream. */
+export function inCurrent(bounds: SegmentBounds, current: number): SegmentBounds {
+  const [first, ...rest] = bounds
+  const { conditions } = first.situation
+  if (conditions.current === current) return bounds
+  const changed = { ...conditions, current }
+  const moved = ({ situation, water }: StationBounds): StationBounds => ({
+    situation: { ...situation, conditions: changed },
+    water,
+  })
+  return [moved(first), ...rest.map(moved)]
+}
+
+/**
+ * The decision along a segment in one direction, or one answer for both where none is told apart; the lowest station
+ * governs.
+ */
+export function decideInDirection(
+  [first, ...rest]: SegmentBounds,
+  direction: Direction | undefined,
+): Decision {
+  let found = decideDirection(first, direction)
+  for (const bounds of rest) {
+    const next = decideDirection(bounds, direction)
+    if (isStricter(next, found)) found = next
+  }
+  return found
+}
+
 /** The decision along a segment, in every direction that is asked for; the lowest station governs. */
-export function decideAlong(
-  [first, ...rest]: readonly [StationBounds, ...StationBounds[]],
-  conditions: Conditions,
-): SegmentDecision {
-  const inDirection = (direction: Direction | undefined): Decision =>
-    strictest([
-      decideDirection(first, direction),
-      ...rest.map((bounds) => decideDirection(bounds, direction)),
-    ])
+export function decideAlong(bounds: SegmentBounds, conditions: Conditions): SegmentDecision {
   const directions = directionsOf(conditions)
-  if (directions.length === 1) return { main: inDirection(directions[0]) }
-  const byDirection = { upstream: inDirection('upstream'), downstream: inDirection('downstream') }
+  if (directions.length === 1) return { main: decideInDirection(bounds, directions[0]) }
+  const byDirection = {
+    upstream: decideInDirection(bounds, 'upstream'),
+    downstream: decideInDirection(bounds, 'downstream'),
+  }
   const main = conditions.direction
     ? byDirection[conditions.direction]
     : strictest([byDirection.upstream, byDirection.downstream])

@@ -2,7 +2,8 @@ import { verdictOf, type SailedSpeed } from './assess.ts'
 import type { Decision } from './decide.ts'
 import { currentAlong } from './direction.ts'
 import { decideIfPossible } from './sensitivity.ts'
-import { baseValue, shifted, type Inputs } from './uncertainty.ts'
+import { shifted } from './shifted-inputs.ts'
+import { baseValue, type Inputs } from './uncertainty.ts'
 
 export const VARIED = ['depth_m', 'bank_distance_m', 'draught_m'] as const
 export type Varied = (typeof VARIED)[number]

@@ -1,6 +1,7 @@
-import { Fault } from '../domain/fault.ts'
-import { decide, type Decision } from './decide.ts'
-import { baseValue, shifted, type Inputs, type UncertainField } from './uncertainty.ts'
+import { decide, decideAlong, type Decision } from './decide.ts'
+import { boundsIfPossible } from './if-possible.ts'
+import { shifted } from './shifted-inputs.ts'
+import { baseValue, type Inputs, type UncertainField } from './uncertainty.ts'
 
 /** How far the answer moves when one input moves by its uncertainty. */
 export interface InputSwing {
@@ -27,24 +28,8 @@ export function recommended(decision: Decision | undefined): number {
 
 /** A decision, or undefined where the shifted figures cannot hold together. */
 export function decideIfPossible(inputs: Inputs): Decision | undefined {
-  const { segment, vessel, conditions, options } = inputs
-  if (!isShiftedSane(inputs)) return undefined
-  try {
-    return decide(segment, vessel, conditions, options).main
-  } catch (error) {
-    if (error instanceof Fault && error.code === 'impossible-input') return undefined
-    throw error
-  }
-}
-
-/** A shift may push a length below zero or the sailing line off the water. */
-function isShiftedSane({ segment, vessel }: Inputs): boolean {
-  return (
-    vessel.draught > 0 &&
-    segment.stations.every(
-      ({ depth, width, distances }) => depth > 0 && width > 0 && distances[0] > 0 && distances[1] > 0,
-    )
-  )
+  const bounds = boundsIfPossible(inputs)
+  return bounds && decideAlong(bounds, inputs.conditions).main
 }
 
 function swingOf(inputs: Inputs, field: UncertainField, half: number): InputSwing {

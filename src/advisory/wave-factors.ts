@@ -13,7 +13,7 @@ export interface WaveFactors {
   readonly isCorrected: boolean
 }
 
-const alike = (factor: number): readonly number[] => WAVE_METHODS.map(() => factor)
+const alike = (factor: number): readonly number[] => new Array<number>(WAVE_METHODS.length).fill(factor)
 
 const UNCORRECTED: WaveFactors = { byMethod: alike(1), without: 0, isCorrected: false }
 

@@ -1,5 +1,5 @@
 import { quantileSorted } from 'd3-array'
-import type { Random } from './random.ts'
+import type { Random } from '../domain/random.ts'
 import { normalBelow, studentBound } from './student.ts'
 
 /** Resamples, own choice; Efron and Tibshirani (1993, ch. 14.2) ask for 1000 and more for an interval. */

@@ -129,12 +129,14 @@ export function vesselOfDescription(described: DescribedVessel): Vessel {
   }
 }
 
+/** Displaced volume at another draught, m³; a volume that was derived follows. */
+export function volumeAt(vessel: Vessel, draught: number): number {
+  if (draught === vessel.draught || vessel.basis.volume === 'given') return vessel.volume
+  return vessel.blockCoefficient * vessel.length * vessel.beam * draught
+}
+
 /** The same vessel at another draught; a volume that was derived follows. */
 export function atDraught(vessel: Vessel, draught: number): Vessel {
   if (draught === vessel.draught) return vessel
-  const isVolumeGiven = vessel.basis.volume === 'given'
-  const volume = isVolumeGiven
-    ? vessel.volume
-    : vessel.blockCoefficient * vessel.length * vessel.beam * draught
-  return { ...vessel, draught, volume }
+  return { ...vessel, draught, volume: volumeAt(vessel, draught) }
 }

@@ -17,17 +17,19 @@ declare module 'fastify' {
 const OPEN_PATHS = /^\/(?:health\/|openapi\.json$|docs(?:\/|$)|v1\/problems(?:\/|$)|v1\/methods(?:\/|$))/
 
 /** Pages that a person opens in a browser, which asks for the key itself. */
-const PAGES = /^\/(?:$|v1\/(?:segments|calibrations)\/[^/]+\/sheet$)/
+const PAGES = /^\/(?:$|v1\/(?:segments|calibrations)\/[^/]+\/sheet$|v1\/limit-plans\/[^/]+\/evidence$)/
 
 /** POST routes that compute and keep nothing. */
 const READING_POSTS = /^\/v1\/(?:advisories|effects|passages)(?:\/|$)/
+
+const PUBLISHING = /^\/v1\/limit-plans\/[^/]+\/publish$/
 
 /** The role that a request needs; undefined where none is asked for. */
 export function neededRole(method: string, path: string): Role | undefined {
   if (OPEN_PATHS.test(path)) return undefined
   if (method === 'GET' || method === 'HEAD' || method === 'OPTIONS') return 'read'
   if (method === 'POST' && READING_POSTS.test(path)) return 'read'
-  return 'write'
+  return PUBLISHING.test(path) ? 'publish' : 'write'
 }
 
 /** The key of a request: Bearer, or on pages the password of Basic. */

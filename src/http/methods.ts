@@ -42,7 +42,7 @@ const MethodReply = z
 
 type Method = (typeof METHODS)[number]
 
-function toMethodReply(method: Method) {
+export function toMethodReply(method: Method) {
   return {
     id: method.id,
     kind: method.kind,

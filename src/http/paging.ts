@@ -71,3 +71,18 @@ export function pageOf<Item extends { readonly id: string }, Reply>(
   const page = slice(sorted, (item) => item.id, query, url)
   return list(url, page.items.map(toReply), page.next)
 }
+
+/** A page of a list that is read from the database page by page. */
+export async function storedPage<Item extends { readonly id: string }, Reply>(
+  read: (page: { readonly after?: string; readonly limit: number }) => Promise<readonly Item[]>,
+  query: PageQuery,
+  url: string,
+  toReply: (item: Item) => Reply,
+): Promise<Page<Reply>> {
+  const limit = query.limit ?? DEFAULT_LIMIT
+  const after = query.cursor === undefined ? {} : { after: decodeCursor(query.cursor) }
+  // one more than is shown tells whether there is a next page
+  const items = await read({ ...after, limit: limit + 1 })
+  const page = slice(items, (item) => item.id, { ...query, limit }, url)
+  return list(url, page.items.map(toReply), page.next)
+}

@@ -63,6 +63,16 @@ export const PROBLEMS = {
     description:
       'List the revisions with `GET /v1/segments/{id}/revisions` and use one of their numbers; a deletion has no content to show.',
   },
+  'study-not-found': {
+    status: 404,
+    title: 'There is no such study',
+    description: 'List the studies with `GET /v1/studies` and use one of their ids, or make one.',
+  },
+  'limit-plan-not-found': {
+    status: 404,
+    title: 'There is no such limit plan',
+    description: 'List the plans with `GET /v1/limit-plans` and use one of their ids, or make one.',
+  },
   'calibration-not-found': {
     status: 404,
     title: 'There is no such calibration',
@@ -105,6 +115,23 @@ export const PROBLEMS = {
     status: 409,
     title: 'Something still refers to it',
     description: 'Change or delete what `facts.used_by` names first, then repeat the request.',
+  },
+  'study-not-finished': {
+    status: 409,
+    title: 'The study has not succeeded',
+    description:
+      'Ask for the study until its `state` is `succeeded`, after the seconds in `Retry-After`; one that failed or was cancelled is made again.',
+  },
+  'limit-plan-published': {
+    status: 409,
+    title: 'The limit plan is published',
+    description:
+      'A published plan never changes. Make another, and publish it with `supersedes` naming this one.',
+  },
+  'number-taken': {
+    status: 409,
+    title: 'Another limit plan has this number',
+    description: 'Publish under a number of its own; `facts.limit_plan_id` is the plan that has this one.',
   },
   'stale-revision': {
     status: 412,

@@ -1,16 +1,19 @@
 import type { FastifyReply } from 'fastify'
+import type { Jobs } from '../jobs/jobs.ts'
+import type { JobStore } from '../store/job-records.ts'
 import type { Registry, Store } from '../store/registry.ts'
 import type { JudgeThreads } from '../threads/judge-threads.ts'
 
 /** What routes answer from. */
 export interface Service {
-  readonly store: Store
+  readonly store: Store & JobStore
   readonly serviceVersion: string
   /** RFC 3339 UTC */
   readonly now: () => string
   /** ms in which a body that is read as a whole has to arrive */
   readonly bodyTimeout: number
   readonly judges: JudgeThreads
+  readonly jobs: Jobs
 }
 
 /** What one request is answered from: the registry does not change under it. */

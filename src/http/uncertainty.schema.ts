@@ -20,15 +20,20 @@ function spread(max: number, unit: string) {
     .optional()
 }
 
+/** Inputs that scatter, but for the wave height, which does so in proportion. */
+export const SPREADS = {
+  depth_m: spread(50, 'm'),
+  width_m: spread(5000, 'm'),
+  bank_distance_m: spread(5000, 'm'),
+  draught_m: spread(10, 'm'),
+  current_mps: spread(5, 'm/s'),
+} as const
+
 /** How uncertain the inputs are, without what belongs to sampling. */
 export const UncertaintyFields = z
   .strictObject({
     label: Label,
-    depth_m: spread(50, 'm'),
-    width_m: spread(5000, 'm'),
-    bank_distance_m: spread(5000, 'm'),
-    draught_m: spread(10, 'm'),
-    current_mps: spread(5, 'm/s'),
+    ...SPREADS,
     wave_height_log_sd: figure(1e-6, 2, 'standard deviation of the logarithm of the wave height').optional(),
   })
   .check(

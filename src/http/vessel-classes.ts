@@ -93,7 +93,7 @@ const own = ({ id, vesselClass, revision }: ClassRecord): Shown => ({
   isBuiltIn: false,
 })
 
-function toVesselClassReply({ vesselClass, revision, isBuiltIn }: Shown) {
+export function toVesselClassReply({ vesselClass, revision, isBuiltIn }: Shown) {
   return {
     id: vesselClass.id,
     name: vesselClass.name,
@@ -113,7 +113,7 @@ function toVesselClassReply({ vesselClass, revision, isBuiltIn }: Shown) {
   }
 }
 
-function shownOf(id: string, { registry }: View): Shown {
+export function shownOf(id: string, { registry }: Pick<View, 'registry'>): Shown {
   const known = findVesselClass(id)
   if (known) return builtIn(known)
   const record = registry.findClass(id)

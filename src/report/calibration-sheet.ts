@@ -1,5 +1,6 @@
 import type { Extent } from '../domain/calibration.ts'
 import { toKmh } from '../domain/units.ts'
+import { item } from './block.ts'
 import { calibrationFitSvg, calibrationResidualsSvg } from './calibration-charts.ts'
 import {
   calibrationCautions,
@@ -13,7 +14,7 @@ import {
 import { chosenMethod, measuredHulls, type CalibrationView } from './calibration-view.ts'
 import type { Size } from './chart.ts'
 import { UNKNOWN, count, figure } from './format.ts'
-import { Markup, markup, type Piece } from './html.ts'
+import { Markup, markup } from './html.ts'
 import { page } from './page.ts'
 import { SHEET_STYLE } from './sheet-style.ts'
 import { HULL_NAMES, methodName, methodShortName } from './words.ts'
@@ -55,10 +56,6 @@ tbody td.figure + th { padding-left: 0; order: -1; }
 }
 @page { @bottom-left { content: "Calibration of wave heights; no navigation aid"; } }
 `
-
-function item(name: string, value: Piece, isDouble = false): Markup {
-  return markup`<div${isDouble && markup` class="double"`}><dt>${name}</dt><dd>${value}</dd></div>`
-}
 
 function head(view: CalibrationView): Markup {
   const place = view.segmentId === undefined ? 'no segment named' : `segment ${view.segmentId}`

@@ -47,6 +47,22 @@ export function percent(share: number | undefined): string {
 /** A place along a waterway, m, as it is written on the bank: kilometres and metres. */
 export const chainage = (value: number): string => `km\u00a0${signed((value / 1000).toFixed(3))}`
 
+/** A length of waterway, m, in kilometres to the metre. */
+export const kilometres = (value: number): string => withUnit(figure(value / 1000, 3), 'km')
+
+/** A time, s, in hours and minutes; in minutes and seconds below an hour. */
+export function duration(seconds: number | undefined): string {
+  if (seconds === undefined || !Number.isFinite(seconds)) return UNKNOWN
+  const whole = Math.round(Math.abs(seconds))
+  const sign = seconds < 0 && whole > 0 ? '−' : ''
+  const [large, small, units] =
+    whole < 3600
+      ? [Math.floor(whole / 60), whole % 60, ['min', 's'] as const]
+      : [Math.floor(Math.round(whole / 60) / 60), Math.round(whole / 60) % 60, ['h', 'min'] as const]
+  const first = large > 0 ? `${large}\u00a0${units[0]} ` : ''
+  return `${sign}${first}${small}\u00a0${units[1]}`
+}
+
 /** A number of things, in groups of three. */
 export const count = (value: number): string => String(value).replace(/\B(?=(\d{3})+$)/g, '\u202f')
 

@@ -1,5 +1,6 @@
 import type { Advisory, CriterionReport } from '../advisory/advise.ts'
 import { SEVERITIES } from '../advisory/caution.ts'
+import type { Decision } from '../advisory/decide.ts'
 import type { WaveReport } from '../advisory/method-report.ts'
 import { figure, kmh, metres, percent } from './format.ts'
 import { markup, type Markup } from './html.ts'
@@ -13,13 +14,18 @@ import {
   methodName,
 } from './words.ts'
 
-const SENSES = { 'at-most': 'at most', 'at-least': 'at least' } as const
+export const SENSES = { 'at-most': 'at most', 'at-least': 'at least' } as const
+
+/** Speed over ground at which something is first reached, alone, rounded down. */
+export function ownMaximum(decision: Decision, firstSpeed: number): string {
+  const offset = decision.overGround - decision.speed
+  return firstSpeed < Infinity ? kmh(Math.max(0, firstSpeed + offset)) : 'not reached'
+}
 
 function criterionRow({ decision }: Advisory, report: CriterionReport): Markup {
   const { criterion, evaluation, firstSpeed, isGoverning } = report
   const { situation } = decision
-  const offset = decision.overGround - decision.speed
-  const own = firstSpeed < Infinity ? kmh(Math.max(0, firstSpeed + offset)) : 'not reached'
+  const own = ownMaximum(decision, firstSpeed)
   const part = componentName(evaluation.component)
   const [value, limit] = figuresOf(criterion, evaluation)
   return markup`<tr${isGoverning && markup` class="governs"`}><th scope="row">${criterionName(criterion, situation.segment)}${part !== undefined && markup` <span class="muted">(${part})</span>`}</th><td class="figure" data-name="limit">${SENSES[criterion.sense]} ${limit}</td><td class="figure" data-name="value">${value}</td><td class="figure" data-name="margin">${percent(marginOf(criterion, evaluation))}</td><td class="figure" data-name="own maximum">${own}</td><td data-name="limit from">${ORIGINS[criterion.origin]}</td><td data-name="met">${evaluation.isMet ? 'yes' : 'no'}${isGoverning && ', governs'}</td></tr>`
@@ -67,14 +73,8 @@ interface MethodRow {
 }
 
 function methodRow({ decision }: Advisory, row: MethodRow): Markup {
-  const offset = decision.overGround - decision.speed
   const isIn = row.outside.length === 0
-  const own =
-    row.firstSpeed === undefined
-      ? ''
-      : row.firstSpeed < Infinity
-        ? kmh(Math.max(0, row.firstSpeed + offset))
-        : 'not reached'
+  const own = row.firstSpeed === undefined ? '' : ownMaximum(decision, row.firstSpeed)
   return markup`<tr><th scope="row" class="method">${methodName(row.id)}<span>${row.reference}</span></th><td class="figure" data-name="value">${metres(row.value)}</td>${
     row.firstSpeed !== undefined && markup`<td class="figure" data-name="own maximum">${own}</td>`
   }<td class="whole" data-name="range">${isIn ? 'in range' : `out: ${outsideText(row.outside)}`}${
@@ -113,13 +113,13 @@ const UNITS: readonly (readonly [RegExp, string])[] = [
   [/_h_per_v$/, ' (h/v)'],
 ]
 
-function fieldName(field: string): string {
+export function fieldName(field: string): string {
   const [pattern, unit] = UNITS.find(([end]) => end.test(field)) ?? [/$^/, '']
   const bare = field.replace(pattern, '').split('.')
   return bare.map((part) => part.replaceAll('_', ' ')).join(', ') + unit
 }
 
-const valueText = (value: string | number | boolean): string =>
+export const valueText = (value: string | number | boolean): string =>
   typeof value === 'number' ? figure(value, 3).replace(/\.?0+$/, '') : String(value)
 
 export function assumptionsTable({ assumptions }: Advisory): Markup {

@@ -1,9 +1,10 @@
 import type { Advisory } from '../advisory/advise.ts'
 import type { Curve } from '../advisory/curve.ts'
 import type { SegmentRecord } from '../store/registry.ts'
+import { item } from './block.ts'
 import { crossSectionSvg, sectionNotes } from './cross-section.ts'
 import { chainage, figure, length, metresPerSecond } from './format.ts'
-import { Markup, markup, type Piece } from './html.ts'
+import { Markup, markup } from './html.ts'
 import { page } from './page.ts'
 import { planNotes, planSvg } from './plan.ts'
 import { sketchOf } from './plan-sketch.ts'
@@ -37,10 +38,6 @@ const textOf = (record: SegmentRecord, field: string): string | undefined => {
 }
 
 const titleOf = (record: SegmentRecord): string => textOf(record, 'name') ?? record.id
-
-function item(name: string, value: Piece, isDouble = false): Markup {
-  return markup`<div${isDouble && markup` class="double"`}><dt>${name}</dt><dd>${value}</dd></div>`
-}
 
 const orNotGiven = (value: string | undefined): string => value ?? 'not given'
 

@@ -65,8 +65,8 @@ export function heightAxis(scales: Scales, layout: Layout): Markup {
   })}${title}</g>`
 }
 
-/** Both speed axes below one another: over ground in km/h, through the water in m/s. */
-export function speedAxes(scales: Scales, layout: Layout, y: number): Markup {
+/** Speed axes below one another: over ground in km/h and, unless left out, through the water in m/s. */
+export function speedAxes(scales: Scales, layout: Layout, y: number, hasWater = true): Markup {
   const { left, right, size } = layout
   const { speed, current, topSpeed } = scales
   const ground = scaleLinear([toKmh(current), toKmh(topSpeed + current)], [left, right])
@@ -81,13 +81,10 @@ export function speedAxes(scales: Scales, layout: Layout, y: number): Markup {
       ? label(right + 14, top + 17, text)
       : label((left + right) / 2, top + 31, text, { anchor: 'middle', size: 11 })
   const second = y + (size === 'wide' ? 26 : 40)
+  const inWater =
+    hasWater &&
+    markup`${straight(left, second, right, second, { colour: COLOURS.grey })}${ticksApart(water, length, 56).map((value) => tick(water(value), String(value), second))}${unit('m/s through the water', second)}`
   return markup`<g>${straight(left, y, right, y)}${ticksApart(ground, length, 56)
     .filter((value) => value >= 0)
-    .map((value) => tick(ground(value), String(value), y))}${unit('km/h over ground', y)}${straight(
-    left,
-    second,
-    right,
-    second,
-    { colour: COLOURS.grey },
-  )}${ticksApart(water, length, 56).map((value) => tick(water(value), String(value), second))}${unit('m/s through the water', second)}</g>`
+    .map((value) => tick(ground(value), String(value), y))}${unit('km/h over ground', y)}${inWater}</g>`
 }

@@ -13,10 +13,24 @@ import { criticalBand, samplesOf, type Samples, type Series } from './speed-samp
 /** Height of the field of the curves, px. */
 const FIELD: Readonly<Record<Size, number>> = { wide: 290, narrow: 250 }
 
-function layoutOf(size: Size, marks: number, samples: Samples): Layout {
+/** How a curve stands on its page. */
+export interface CurvePlace {
+  /** sets it apart from the other curves of a page */
+  readonly id?: string
+  /** a low field with the key in single lines and no bars of criteria, for pages that have a table of them, and speeds over ground alone; wide only */
+  readonly isBrief?: boolean
+  /** a speed through the water to mark beside the recommended one, m/s */
+  readonly marked?: { readonly speed: number; readonly text: string } | undefined
+}
+
+/** Height of the field of a brief curve, px. */
+const BRIEF_FIELD = 150
+
+function layoutOf(size: Size, marks: number, samples: Samples, isBrief: boolean): Layout {
   const top = (size === 'wide' ? 10 : 26) + 16 * marks
+  const least = isBrief ? BRIEF_FIELD : FIELD.wide
   return size === 'wide'
-    ? { size, left: 52, right: 512, top, bottom: top + Math.max(FIELD.wide, keyHeight(samples)) }
+    ? { size, left: 52, right: 512, top, bottom: top + Math.max(least, keyHeight(samples, isBrief)) }
     : { size, left: 34, right: WIDTHS.narrow - 10, top, bottom: top + FIELD.narrow }
 }
 
@@ -45,7 +59,7 @@ function inTwoParts(samples: Samples, scales: Scales, series: Series, colour: st
 }
 
 /** Speeds that are marked by a line through the whole drawing. */
-function marksOf({ decision }: Advisory, scales: Scales): TopMark[] {
+function marksOf({ decision }: Advisory, scales: Scales, marked: CurvePlace['marked']): TopMark[] {
   const { situation, outcome, speed, overGround } = decision
   const { criticalSpeed } = situation.setting
   const critical: TopMark = {
@@ -72,7 +86,8 @@ function marksOf({ decision }: Advisory, scales: Scales): TopMark[] {
             isMain: true,
           },
         ]
-  return [...main, critical].filter((mark) => mark.speed <= scales.topSpeed)
+  const own: TopMark[] = marked ? [{ ...marked, stroke: { width: 2, dash: '7 3' }, isBold: true }] : []
+  return [...own, ...main, critical].filter((mark) => mark.speed <= scales.topSpeed)
 }
 
 /** Through the field, and again through the bars: the axes between them stay clear. */
@@ -86,7 +101,7 @@ function markLines(
     const x = scales.speed(mark.speed)
     const top = layout.top - 15 - 16 * (marks.length - 1 - i)
     const at = mark.isMain === true ? 'recommended' : 'mark'
-    return markup`<g data-mark="${at}">${straight(x, top, x, layout.bottom, mark.stroke)}${straight(x, from, x, to, mark.stroke)}</g>`
+    return markup`<g data-mark="${at}">${straight(x, top, x, layout.bottom, mark.stroke)}${to > from && straight(x, from, x, to, mark.stroke)}</g>`
   })
 }
 
@@ -145,26 +160,35 @@ function describe(advisory: Advisory): string {
  * @param curve     points of the decision of the advisory
  * @param advisory  the answer that it belongs to
  * @param size      the width that it is made for
+ * @param place     how it stands on its page
  * @returns an SVG element
  */
-export function speedCurveSvg(curve: Curve, advisory: Advisory, size: Size = 'wide'): string {
+export function speedCurveSvg(
+  curve: Curve,
+  advisory: Advisory,
+  size: Size = 'wide',
+  place: CurvePlace = {},
+): string {
+  const { isBrief = false, marked } = place
   const samples = samplesOf(curve, advisory)
-  const id = `speed-curve-${size}`
-  const provisional = layoutOf(size, 2, samples)
-  const marks = marksOf(advisory, scalesOf(samples, advisory.decision, provisional))
-  const layout = layoutOf(size, marks.length, samples)
+  const id = `${place.id ?? 'speed-curve'}-${size}`
+  const provisional = layoutOf(size, 2, samples, isBrief)
+  const marks = marksOf(advisory, scalesOf(samples, advisory.decision, provisional), marked)
+  const layout = layoutOf(size, marks.length, samples, isBrief)
   const scales = scalesOf(samples, advisory.decision, layout)
-  const axes = layout.bottom + (size === 'wide' ? 54 : 82)
-  const bars = criteriaBars(advisory, scales, layout, axes + 8)
-  const key = speedKey(samples, advisory, layout, bars.bottom + 14)
+  const axes = layout.bottom + (isBrief ? 26 : size === 'wide' ? 54 : 82)
+  const bars = isBrief
+    ? { content: markup``, bottom: axes - 8 }
+    : criteriaBars(advisory, scales, layout, axes + 8)
+  const key = speedKey(samples, advisory, layout, bars.bottom + 14, isBrief)
   const height = size === 'wide' ? bars.bottom + 6 : key.bottom + 4
   const content = [
     shading(advisory, scales, layout),
     heightAxis(scales, layout),
-    markLines(marks, scales, layout, [axes + 24, bars.bottom]),
+    markLines(marks, scales, layout, isBrief ? [0, 0] : [axes + 24, bars.bottom]),
     fieldOf(samples, scales, layout, id),
     topLabels(marks, scales, layout),
-    speedAxes(scales, layout, layout.bottom),
+    speedAxes(scales, layout, layout.bottom, !isBrief),
     bars.content,
     key.content,
   ]
@@ -173,7 +197,7 @@ export function speedCurveSvg(curve: Curve, advisory: Advisory, size: Size = 'wi
       width: WIDTHS[size],
       height,
       id,
-      title: 'Wave height and criteria over speed',
+      title: isBrief ? 'Wave height over speed' : 'Wave height and criteria over speed',
       description: describe(advisory),
     },
     content,

@@ -147,4 +147,4 @@ export function tagOf(tag: Tag): Markup | undefined {
 }
 
 export const tagMark = (x: number, y: number, letter: string, colour: string): Markup =>
-  markup`<g data-tag="${letter}"><circle cx="${x}" cy="${y}" r="${TAG / 2 - 0.5}" fill="#fff" stroke="${colour}" stroke-width="1.3"/>${label(x, y + 3.8, letter, { anchor: 'middle', size: 10.5, isBold: true })}</g>`
+  markup`<g data-tag="${letter}"><circle cx="${x}" cy="${y}" r="${TAG / 2 - 0.5}" fill="#fff" stroke="${colour}" stroke-width="1.3"/>${label(x, y + 3.8, letter, { anchor: 'middle', size: 11, isBold: true })}</g>`

@@ -1,20 +1,18 @@
 import { createHash } from 'node:crypto'
 import { ask, discard, keep, type Steps, type Verdict } from './engine.ts'
+import { idFrom } from './ids.ts'
 import type { Author, CalibrationContent, CalibrationDeleted, CalibrationRows } from './registry.ts'
 import { segmentsNaming } from './references.ts'
 import type { Builder } from './schema.ts'
 import { CALIBRATIONS, calibrationText } from './shelves.ts'
 import { nextRevision } from './writes.ts'
 
-/** Letters that are hard to mistake when an id is read aloud or copied by hand. */
-const LETTERS = '0123456789abcdefghjkmnpqrstvwxyz'
-const ID_LENGTH = 10
-
 /** An id that no other calibration has: each write has a number of its own. */
 function idOf(content: string, rows: string, time: string, registryRevision: number): string {
-  const hash = createHash('sha256').update(`${registryRevision} ${time}\n${content}\n${rows}`).digest()
-  const letters = Array.from(hash.subarray(0, ID_LENGTH), (byte) => LETTERS.charAt(byte % LETTERS.length))
-  return `cal-${letters.join('')}`
+  return idFrom(
+    'cal',
+    createHash('sha256').update(`${registryRevision} ${time}\n${content}\n${rows}`).digest(),
+  )
 }
 
 export function* addCalibration(

@@ -32,6 +32,18 @@ export interface JobRecord {
   readonly serviceVersion: string
 }
 
+/** A job without the request that made it, which may be large. */
+export type JobHead = Omit<JobRecord, 'request'>
+
+/** A part of the result of a job. */
+export interface JobChunk {
+  /** 0 to chunksTotal − 1 */
+  readonly number: number
+  readonly cells: number
+  /** its text, deflated in the form of RFC 1950 where it was computed */
+  readonly content: Uint8Array
+}
+
 /** What is kept of a new job; the store adds its id and time. */
 export interface JobContent {
   readonly kind: JobKind
@@ -115,23 +127,28 @@ export interface JobStore {
     page: { readonly after?: string; readonly limit: number },
   ): Promise<readonly JobRecord[]>
   /** oldest first: queued and running */
-  unfinishedJobs(): Promise<readonly JobRecord[]>
+  unfinishedJobs(): Promise<readonly JobHead[]>
   /** latest verification of a plan */
   findVerification(planId: string): Promise<JobRecord | undefined>
   jobInputs(id: string): Promise<Json | undefined>
-  /** Queued becomes running; true when the job is to be worked on. */
+  /** Queued becomes running; true when the job is to be worked on: it runs. */
   startJob(id: string, time: string): Promise<boolean>
   /** Numbers of the chunks that are stored. */
   chunksDone(id: string): Promise<ReadonlySet<number>>
-  /** A chunk that is there already stays as it is. Chunks of jobs that ended are dropped. @returns the job after it, undefined when it is gone */
-  putChunk(
-    id: string,
-    chunk: { readonly number: number; readonly cells: number; readonly content: string },
-  ): Promise<JobRecord | undefined>
+  /**
+   * A chunk that is there already stays as it is. Chunks of jobs that do not run are dropped.
+   *
+   * @returns the job after it, undefined when it is gone
+   */
+  putChunk(id: string, chunk: JobChunk): Promise<JobHead | undefined>
+  /** Text of a chunk. */
   findChunk(id: string, number: number): Promise<string | undefined>
-  /** Only a running job ends; false when another replica was first. */
+  /**
+   * Only a running job ends; false when another replica was first. Of a job that ends, only a study that succeeded keeps
+   * its inputs and chunks.
+   */
   endJob(id: string, end: JobEnd, time: string): Promise<boolean>
-  /** Cancels what is unfinished, deletes what has ended. */
+  /** Cancels what is unfinished, whose inputs and chunks are dropped; deletes what has ended. */
   removeJob(id: string, time: string): Promise<JobRemoved>
   /** @returns undefined when the study is gone */
   addPlan(

@@ -1,4 +1,4 @@
-import { type Kysely, type Migration, Migrator, sql } from 'kysely'
+import { type Kysely, type Migration, Migrator, PostgresAdapter, sql } from 'kysely'
 
 /** The schema of the database is one that this version does not know. */
 export class SchemaTooNew extends Error {
@@ -77,10 +77,93 @@ const calibrations: Migration = {
   },
 }
 
+/** Types for which the engines have names, or orders, of their own. */
+function columnTypes(db: Kysely<unknown>) {
+  const isPostgres = db.getExecutor().adapter instanceof PostgresAdapter
+  return {
+    // ids are paged in the order of their bytes, whatever the locale of the database
+    id: isPostgres ? sql`text collate "C"` : sql`text`,
+    bytes: isPostgres ? sql`bytea` : sql`blob`,
+  }
+}
+
+async function createJobs(db: Kysely<unknown>): Promise<void> {
+  const { id, bytes } = columnTypes(db)
+  await db.schema
+    .createTable('jobs')
+    .addColumn('id', id, (column) => column.primaryKey().notNull())
+    .addColumn('kind', 'text', (column) => column.notNull())
+    .addColumn('state', 'text', (column) => column.notNull())
+    .addColumn('name', 'text')
+    .addColumn('plan_id', id)
+    .addColumn('created', 'text', (column) => column.notNull())
+    .addColumn('started', 'text')
+    .addColumn('finished', 'text')
+    .addColumn('key', 'text')
+    .addColumn('cells_total', 'integer', (column) => column.notNull())
+    .addColumn('cells_done', 'integer', (column) => column.notNull())
+    .addColumn('chunks_total', 'integer', (column) => column.notNull())
+    .addColumn('chunks_done', 'integer', (column) => column.notNull())
+    .addColumn('problem', 'text')
+    .addColumn('registry_revision', 'integer', (column) => column.notNull())
+    .addColumn('method_version', 'text', (column) => column.notNull())
+    .addColumn('service_version', 'text', (column) => column.notNull())
+    // large ones last: SQLite reads a row from its start
+    .addColumn('result', bytes)
+    .addColumn('request', bytes, (column) => column.notNull())
+    .execute()
+  await db.schema.createIndex('jobs_state').on('jobs').column('state').execute()
+  await db.schema.createIndex('jobs_plan_id').on('jobs').column('plan_id').execute()
+  await db.schema
+    .createTable('job_inputs')
+    .addColumn('id', id, (column) => column.primaryKey().notNull().references('jobs.id'))
+    .addColumn('content', bytes, (column) => column.notNull())
+    .execute()
+  await db.schema
+    .createTable('job_chunks')
+    .addColumn('job_id', id, (column) => column.notNull().references('jobs.id'))
+    .addColumn('number', 'integer', (column) => column.notNull())
+    .addColumn('cells', 'integer', (column) => column.notNull())
+    .addColumn('content', bytes, (column) => column.notNull())
+    .addPrimaryKeyConstraint('job_chunks_pkey', ['job_id', 'number'])
+    .execute()
+}
+
+async function createPlans(db: Kysely<unknown>): Promise<void> {
+  const { id, bytes } = columnTypes(db)
+  await db.schema
+    .createTable('limit_plans')
+    .addColumn('id', id, (column) => column.primaryKey().notNull())
+    .addColumn('name', 'text', (column) => column.notNull())
+    .addColumn('state', 'text', (column) => column.notNull())
+    .addColumn('study_id', id, (column) => column.notNull().references('jobs.id'))
+    .addColumn('created', 'text', (column) => column.notNull())
+    .addColumn('key', 'text')
+    .addColumn('request', bytes, (column) => column.notNull())
+    .addColumn('content', bytes, (column) => column.notNull())
+    .execute()
+  await db.schema.createIndex('limit_plans_study_id').on('limit_plans').column('study_id').execute()
+  await db.schema
+    .createTable('limit_plan_publications')
+    .addColumn('plan_id', id, (column) => column.primaryKey().notNull().references('limit_plans.id'))
+    .addColumn('number', 'text', (column) => column.notNull().unique())
+    .addColumn('publication', bytes, (column) => column.notNull())
+    .addColumn('record', bytes, (column) => column.notNull())
+    .execute()
+}
+
+const jobs: Migration = {
+  async up(db: Kysely<unknown>) {
+    await createJobs(db)
+    await createPlans(db)
+  },
+}
+
 /** In the order of their names. */
 const MIGRATIONS: Readonly<Record<string, Migration>> = {
   '001-registry': registry,
   '002-calibrations': calibrations,
+  '003-jobs': jobs,
 }
 
 /**

@@ -1,7 +1,9 @@
 import { addCalibration, calibrationRowsOf, removeCalibration } from './calibrations.ts'
 import type { Engine } from './engine.ts'
 import { revisionOf, revisionsOf } from './history.ts'
+import { jobsOf } from './jobs.ts'
 import { keysOf } from './keys.ts'
+import { plansOf } from './plans.ts'
 import { openPostgres } from './postgres.ts'
 import type { Store } from './registry.ts'
 import { CLASSES, classDocument, SEGMENTS, segmentDocument } from './shelves.ts'
@@ -62,6 +64,8 @@ export function storeOn(engine: Engine): Store {
     deleteCalibration: (id, author) => engine.write(() => removeCalibration(builder, id, author)),
     findCalibrationRows: (id) => engine.read(() => calibrationRowsOf(builder, id)),
     ...keysOf(engine),
+    ...jobsOf(engine),
+    ...plansOf(engine),
     close: () => engine.close(),
   }
 }

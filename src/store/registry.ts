@@ -1,6 +1,7 @@
 import type { Calibration } from '../domain/calibration.ts'
 import type { BoundingBox, LonLat } from '../domain/position.ts'
 import type { VesselClass } from '../domain/vessel-classes.ts'
+import type { JobStore } from './job-records.ts'
 
 /** A segment as it is kept: its sailing line and its properties as they came, with what the registry adds. */
 export interface SegmentRecord {
@@ -141,7 +142,7 @@ export interface Author {
 }
 
 /** The database behind the registry. Every acknowledged write is on disk, and seen by every replica at once. */
-export interface Store {
+export interface Store extends JobStore {
   readonly kind: 'sqlite' | 'postgres'
   /** The registry as of now: every write acknowledged before the call is in it. */
   current(): Promise<Registry>

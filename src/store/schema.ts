@@ -9,6 +9,7 @@ import {
   SqliteIntrospector,
   SqliteQueryCompiler,
 } from 'kysely'
+import type { JobKind, JobState, PlanState } from './job-records.ts'
 import type { Action, Role } from './registry.ts'
 
 /** The only row of its table. Every write of the registry starts by raising a number here, which lets one writer in. */
@@ -61,6 +62,62 @@ export interface AccessKeyTable {
   revoked: string | null
 }
 
+/** Bytes hold JSON, deflated. */
+export interface JobTable {
+  id: string
+  kind: JobKind
+  state: JobState
+  name: string | null
+  plan_id: string | null
+  created: string
+  started: string | null
+  finished: string | null
+  key: string | null
+  cells_total: number
+  cells_done: number
+  chunks_total: number
+  chunks_done: number
+  /** JSON */
+  problem: string | null
+  registry_revision: number
+  method_version: string
+  service_version: string
+  result: Uint8Array | null
+  request: Uint8Array
+}
+
+/** What a job is computed from, apart from it: large, and asked for once. */
+export interface JobInputTable {
+  id: string
+  content: Uint8Array
+}
+
+export interface JobChunkTable {
+  job_id: string
+  number: number
+  cells: number
+  content: Uint8Array
+}
+
+export interface PlanTable {
+  id: string
+  name: string
+  state: PlanState
+  study_id: string
+  created: string
+  key: string | null
+  request: Uint8Array
+  content: Uint8Array
+}
+
+/** Rows are added and never changed. */
+export interface PublicationTable {
+  plan_id: string
+  number: string
+  publication: Uint8Array
+  record: Uint8Array
+}
+
 export interface Tables {
   state: StateTable
   segments: ItemTable
@@ -71,6 +128,11 @@ export interface Tables {
   calibrations: ItemTable
   calibration_rows: CalibrationRowTable
   access_keys: AccessKeyTable
+  jobs: JobTable
+  job_inputs: JobInputTable
+  job_chunks: JobChunkTable
+  limit_plans: PlanTable
+  limit_plan_publications: PublicationTable
 }
 
 /** Writes queries of either engine; runs none. */

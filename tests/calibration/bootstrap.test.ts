@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest'
 import { medianInterval, resampledMedians } from '../../src/calibration/bootstrap.ts'
-import { randomOf } from '../../src/calibration/random.ts'
+import { randomOf } from '../../src/domain/random.ts'
 import { expectClose } from '../support/expect-close.ts'
 import { COMPUTED, MEASURED } from './ten-passages.ts'
 

@@ -4,6 +4,7 @@ import { VESSEL_CLASSES } from '../../src/domain/vessel-classes.ts'
 import { overviewPage } from '../../src/report/overview.ts'
 import { segmentSheet } from '../../src/report/sheet.ts'
 import { launchBrowser } from '../support/browser.ts'
+import { OVERFLOWS, OVERLAPS } from '../support/page-faults.ts'
 import { CASES, advisoryOf, changed, demo, sheetParts } from '../support/sheets.ts'
 
 const WIDTHS = [390, 1280] as const
@@ -67,47 +68,6 @@ async function opened(html: string, width: number): Promise<{ page: Page; reques
   await page.setContent(html, { waitUntil: 'load' })
   return { page, requests }
 }
-
-/** Texts that reach out of their box, run in the page. */
-const OVERFLOWS = `(() => {
-  const found = []
-  for (const element of document.querySelectorAll('body *:not(svg *)')) {
-    const style = getComputedStyle(element)
-    if (style.display === 'inline' || style.display === 'none' || element.closest('option, svg, select')) continue
-    if (element.scrollWidth > element.clientWidth + 1 && element.clientWidth > 0) {
-      found.push(element.tagName + ' ' + element.textContent.slice(0, 60))
-    }
-  }
-  for (const svg of document.querySelectorAll('svg')) {
-    const frame = svg.getBoundingClientRect()
-    if (frame.width === 0) continue
-    for (const text of svg.querySelectorAll('text')) {
-      const box = text.getBoundingClientRect()
-      if (box.left < frame.left - 1 || box.right > frame.right + 1 || box.top < frame.top - 1 || box.bottom > frame.bottom + 1) {
-        found.push('text ' + text.textContent)
-      }
-    }
-  }
-  return found
-})()`
-
-/** Pairs of labels of one drawing that lie on one another, run in the page. */
-const OVERLAPS = `(() => {
-  const found = []
-  for (const svg of document.querySelectorAll('svg')) {
-    if (svg.getBoundingClientRect().width === 0) continue
-    const boxes = [...svg.querySelectorAll('text')].map((text) => [text.textContent, text.getBoundingClientRect()])
-    boxes.forEach(([name, a], i) => {
-      for (const [other, b] of boxes.slice(i + 1)) {
-        const across = Math.min(a.right, b.right) - Math.max(a.left, b.left)
-        const down = Math.min(a.bottom, b.bottom) - Math.max(a.top, b.top)
-        // boxes of lines of text hold their leading: letters touch only when boxes share more than a third of it
-        if (across > 1 && down > 0.35 * Math.min(a.height, b.height)) found.push(name + ' | ' + other)
-      }
-    })
-  }
-  return found
-})()`
 
 describe.each(Object.entries(PAGES))('%s', (_, make) => {
   test.each(WIDTHS)(

@@ -50,7 +50,7 @@ const TABLE: Readonly<Record<string, Rule>> = {
     ],
     packages: HTTP_PACKAGES,
   },
-  'config.ts': { src: [], packages: ['zod'] },
+  'config.ts': { src: [], packages: ['zod', 'node:os'] },
   'app.ts': { src: ['http', 'config.ts (types)'], packages: ['fastify'] },
   'parts.ts': { src: ['*'], packages: ['node:*'] },
   'server.ts': { src: ['*'], packages: ['*'] },

@@ -143,7 +143,9 @@ test('a database of the version before is brought up to date with what it holds'
   await before.close()
   const file = new Database(path)
   file.exec(
-    "drop table calibration_rows; drop table calibrations; delete from kysely_migration where name = '002-calibrations'",
+    `drop table limit_plan_publications; drop table limit_plans; drop table job_chunks; drop table job_inputs;
+     drop table jobs; drop table calibration_rows; drop table calibrations;
+     delete from kysely_migration where name > '001-registry'`,
   )
   file.close()
   const store = await testStore(`sqlite:${path}`)

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest'
-import { randomOf } from '../../src/calibration/random.ts'
+import { randomOf } from '../../src/domain/random.ts'
 
 test('numbers are those of mulberry32, started at the seed xor FNV-1a of the name', () => {
   // published: FNV-1a of 'foobar' is bf9cf968; mulberry32 from 0 and from 1

@@ -1,0 +1,186 @@
+import { METHOD_VERSION } from '../advisory/catalogue.ts'
+import type { Cell } from '../limits/cell.ts'
+import { PlanBuilder } from '../limits/plan-builder.ts'
+import { toPlanContent, toPlanRules } from './plan-reply.ts'
+import { canonicalText, recordHash, type RecordWire } from './record.ts'
+import { studyColumns, toStudyRow } from './study-rows.ts'
+
+const MAX_DIFFERENCES = 100
+
+/** Versions that figures were computed with. */
+export interface Versions {
+  readonly service_version: string
+  readonly method_version: string
+}
+
+/** A figure that did not come out as it was published. */
+export interface Difference {
+  /** JSON Pointer into the record */
+  readonly pointer: string
+  readonly field: string
+  readonly published: unknown
+  readonly recomputed: unknown
+}
+
+export type Verdict = 'reproduced' | 'methods-changed' | 'not-reproduced' | 'record-altered'
+
+/** What recomputing a record says, as it goes out. */
+export interface VerificationWire {
+  readonly verdict: Verdict
+  readonly text: string
+  readonly record_hash: string
+  readonly computed_hash: string
+  readonly published_with: Versions
+  readonly recomputed_with: Versions
+  readonly figures: { readonly compared: number; readonly equal: number; readonly different: number }
+  readonly largest_difference_mps: number
+  readonly differences: readonly Difference[]
+}
+
+const TEXTS: Readonly<Record<Verdict, string>> = {
+  reproduced:
+    'Every figure of the record comes out again to the last digit, and the record is as it was published.',
+  'methods-changed':
+    'The record is as it was published, but some figures come out differently: the methods have changed since. The service version that it names reproduces it.',
+  'not-reproduced':
+    'The record is as it was published, and the methods are the same, but some figures come out differently: report this to whoever runs the service.',
+  'record-altered':
+    'The record is not what was published: its hash, or what the database holds, does not agree.',
+}
+
+/** Compares two values leaf by leaf. */
+class Comparison {
+  compared = 0
+  different = 0
+  largest = 0
+  readonly differences: Difference[] = []
+
+  /** @param field  name of the figure, whose end is its unit */
+  compare(published: unknown, recomputed: unknown, pointer: string, field = ''): void {
+    if (isObject(published) && isObject(recomputed)) {
+      for (const name of new Set([...Object.keys(published), ...Object.keys(recomputed)]))
+        this.compare(published[name], recomputed[name], `${pointer}/${escaped(name)}`, name)
+      return
+    }
+    this.compared += 1
+    if (published !== recomputed) this.#add({ pointer, field, published, recomputed })
+  }
+
+  /** @param columns  names of n figures */
+  compareRow(
+    published: readonly unknown[],
+    recomputed: readonly unknown[],
+    pointer: string,
+    columns: readonly string[],
+  ): void {
+    columns.forEach((column, i) => {
+      this.compare(published[i], recomputed[i], `${pointer}/${i}`, column)
+    })
+  }
+
+  #add(difference: Difference): void {
+    const { published, recomputed, field } = difference
+    this.different += 1
+    if (this.differences.length < MAX_DIFFERENCES)
+      this.differences.push({
+        ...difference,
+        published: published ?? null,
+        recomputed: recomputed ?? null,
+      })
+    const isSpeed = /(?:^|_)mps$/.test(field)
+    if (isSpeed && typeof published === 'number' && typeof recomputed === 'number')
+      this.largest = Math.max(this.largest, Math.abs(published - recomputed))
+  }
+}
+
+type Fields = Readonly<Record<string, unknown>>
+
+/** Lists are compared by index, like fields. */
+const isObject = (value: unknown): value is Fields => typeof value === 'object' && value !== null
+
+const escaped = (name: string): string => name.replaceAll('~', '~0').replaceAll('/', '~1')
+
+/** What the database holds beside the record, which has to agree with it. */
+export interface Stored {
+  readonly plan: RecordWire['plan']
+  readonly publication?: RecordWire['publication']
+  readonly recordHash?: string
+}
+
+function isAltered(record: RecordWire, computedHash: string, stored: Stored | undefined): boolean {
+  if (record.record_hash !== computedHash) return true
+  if (!stored) return false
+  return (
+    (stored.recordHash ?? computedHash) !== computedHash ||
+    canonicalText(stored.plan) !== canonicalText(record.plan) ||
+    canonicalText(stored.publication ?? {}) !== canonicalText(record.publication ?? {})
+  )
+}
+
+function verdictOf(isRecordAltered: boolean, different: number, published: Versions): Verdict {
+  if (isRecordAltered) return 'record-altered'
+  if (different === 0) return 'reproduced'
+  return published.method_version === METHOD_VERSION ? 'not-reproduced' : 'methods-changed'
+}
+
+/** Takes the recomputed cells of a record as they come, and says at the end whether it is reproduced. */
+export class Verification {
+  readonly #record: RecordWire
+  readonly #plan: PlanBuilder
+  readonly #comparison = new Comparison()
+  #rows = 0
+
+  /** @throws Fault when the record's own rules cannot be those of its study */
+  constructor(record: RecordWire) {
+    this.#record = record
+    this.#plan = new PlanBuilder(record.inputs.study, toPlanRules(record.plan.request))
+  }
+
+  /** @param cells  the next ones, in the order of the study */
+  add(cells: readonly Cell[]): void {
+    this.#plan.add(cells)
+    const { study } = this.#record.inputs
+    const { columns, rows } = this.#record.results
+    for (const cell of cells) {
+      const row = toStudyRow(study, cell)
+      const published = rows[this.#rows] ?? []
+      const recomputed = columns.map((column) => row[column] ?? null)
+      this.#comparison.compareRow(published, recomputed, `/results/rows/${this.#rows}`, columns)
+      this.#rows += 1
+    }
+  }
+
+  /**
+   * @param stored  what the database holds of the plan; absent where there is only the record
+   */
+  conclude(serviceVersion: string, stored?: Stored): VerificationWire {
+    const { study } = this.#record.inputs
+    const { stretches, totals, unassigned_vessels } = this.#record.plan
+    const { columns, rows } = this.#record.results
+    const comparison = this.#comparison
+    comparison.compare(columns, studyColumns(study), '/results/columns')
+    for (let i = this.#rows; i < rows.length; i += 1)
+      comparison.compareRow(rows[i] ?? [], [], `/results/rows/${i}`, columns)
+    const content = JSON.parse(JSON.stringify(toPlanContent(this.#plan.plan(), study))) as Fields
+    comparison.compare({ stretches, totals, unassigned_vessels }, content, '/plan')
+    const { publication } = this.#record
+    const published: Versions = {
+      service_version: publication?.service_version ?? this.#record.study.service_version,
+      method_version: this.#record.study.method_version,
+    }
+    const computedHash = recordHash(this.#record)
+    const { compared, different, largest, differences } = comparison
+    const verdict = verdictOf(isAltered(this.#record, computedHash, stored), different, published)
+    return {
+      verdict,
+      text: TEXTS[verdict],
+      record_hash: this.#record.record_hash,
+      computed_hash: computedHash,
+      published_with: published,
+      recomputed_with: { service_version: serviceVersion, method_version: METHOD_VERSION },
+      figures: { compared, equal: compared - different, different },
+      largest_difference_mps: largest,
+      differences,
+    }
+  }
+}
