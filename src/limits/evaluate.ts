@@ -150,7 +150,8 @@ export function evaluatePart({ study, firstSegment, from, to }: StudyPart): Cell
   const size = blockSize(study)
   const before = firstSegment * study.vessels.length * study.waterLevels.length * size
   const cells: Cell[] = []
-  for (let number = from - before; number < to - before;) {
+  let number = from - before
+  while (number < to - before) {
     const end = Math.min(to - before, number - (number % size) + size)
     const places: CellPlace[] = []
     for (; number < end; number += 1) places.push(placeOf(study, number))

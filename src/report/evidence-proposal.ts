@@ -28,7 +28,7 @@ export function proposalText(view: EvidenceView, stretch: Stretch): string {
     case 'kept':
       return `Proposed: the posted limit of ${limitText(stretch)} stays for ${whom}, ${where}.`
     case 'below-smallest-limit':
-      return `Proposed: no limit on speed for ${whom}, ${where}; other measures are needed.`
+      return `No speed limit can be proposed for ${whom}, ${where}: other measures are needed.`
   }
 }
 
@@ -38,6 +38,9 @@ function governingText(view: EvidenceView, { governing, lowestMaximum }: Stretch
   const { criterion } = governing
   const percentile = view.rules.percentile === null ? '' : ` at percentile ${view.rules.percentile}`
   const who = `${vesselName(view.study.vessels[governing.vessel])}, on ${segmentName(view, governing.segmentId)}`
+  if (lowestMaximum === undefined && criterion === undefined) {
+    return `Of all cells of this stretch, that of ${who} has no answer${percentile}.`
+  }
   const what =
     lowestMaximum === undefined ? `no safe speed${percentile}` : `${kmh(lowestMaximum)}${percentile}`
   const by = criterion === undefined ? '' : `, governed by ${CRITERION_NAMES[criterion].toLowerCase()}`
@@ -72,6 +75,9 @@ function keptText(stretch: Stretch): string {
 
 function belowText({ rules }: EvidenceView, stretch: Stretch): string {
   const { smallestLimit } = rules
+  if (stretch.lowestMaximum === undefined && stretch.governing?.criterion === undefined) {
+    return 'What was not found safe counts as not safe, so that no limit can be drawn.'
+  }
   if (stretch.lowestMaximum === undefined) {
     return 'No speed at which this vessel steers keeps every criterion, so that no limit can be drawn from it.'
   }

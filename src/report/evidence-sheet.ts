@@ -11,6 +11,7 @@ import {
   currentText,
   directionText,
   groupName,
+  lackText,
   levelText,
   marginOfStretch,
   marginText,
@@ -28,10 +29,10 @@ import { speedCurveSvg } from './speed-curve.ts'
 function heading(view: EvidenceView, { stretch, index }: StretchCase): Markup {
   const all = view.plan.stretches.length
   const { outcome, limit } = stretch
-  const what = { limit: 'limit', kept: 'limit kept', 'below-smallest-limit': 'no limit' }[outcome]
+  const what = outcome === 'kept' ? 'limit kept' : 'limit'
   const box = limit
     ? markup`<b>${String(limit.value)}</b>${limit.unit}`
-    : markup`<b>none</b><span>below smallest</span>`
+    : markup`<b>none</b><span>${lackText(stretch)}</span>`
   return markup`<header class="stretch-head"><div><p class="kind">Stretch ${numberOf(index)} of ${String(all)} · ${groupName(view, stretch.groupId)} · ${directionText(stretch.direction)}</p><h2>${placeOf(view, stretch)}</h2><p class="proposal">${proposalText(view, stretch)}</p></div><div class="sign ${outcome}"><span>${what}</span>${box}</div></header>`
 }
 
@@ -134,11 +135,10 @@ function cautionItems(register: Register, index: number): Markup {
   return markup`<h3>Cautions</h3><ul class="notes">${worse.map(
     ({ severity, number, text }) =>
       markup`<li class="${severity}"><b>${String(number)} ${SEVERITY_NAMES[severity]}</b> ${text}</li>`,
-  )}<li>${
-    notes.length === 0
-      ? worse.length === 0 && 'None.'
-      : `${notes.length === 1 ? 'Note' : 'Notes'} ${runsText(notes)}: see Annex A.`
-  }</li></ul>`
+  )}${worse.length + notes.length === 0 && markup`<li>None.</li>`}${
+    notes.length > 0 &&
+    markup`<li>${notes.length === 1 ? 'Note' : 'Notes'} ${runsText(notes)}: see Annex A.</li>`
+  }</ul>`
 }
 
 /** Assumptions with their numbers; the figures of the vessel together. */

@@ -81,7 +81,7 @@ function entriesOf(strip: Strip, hatch: string): KeyEntry[] {
     { name: 'Limit', mark: (x, y) => straight(x, y, x + LENGTH, y, LIMIT_STROKE) },
     { name: 'Limit kept as posted', mark: (x, y) => keptLine(x, y, x + LENGTH) },
     {
-      name: 'No limit: below the smallest',
+      name: 'No limit can be proposed',
       mark: (x, y) =>
         markup`<rect x="${x}" y="${y - 6}" width="${LENGTH}" height="12" fill="url(#${hatch})" stroke="#777"/>`,
     },

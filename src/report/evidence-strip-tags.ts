@@ -21,7 +21,7 @@ function candidatesOf(
   line: PanelLine,
   others: readonly (readonly (number | undefined)[])[],
   segments: readonly StripSegment[],
-  { along, speed, top, bottom }: PanelScales,
+  { along, speed, left, right, top, bottom }: PanelScales,
 ): Candidate[] {
   return segments.flatMap(({ from, to }, i): Candidate[] => {
     const value = line.values[i]
@@ -32,13 +32,17 @@ function candidatesOf(
       const other = values[i]
       return other === undefined ? least : Math.min(least, Math.abs(speed(other) - cy))
     }, TAG)
-    return [0.5, 0.3, 0.7].map((share) => {
+    return [0.5, 0.3, 0.7].flatMap((share): Candidate[] => {
       const cx = along(from + share * (to - from))
+      if (cx < left + TAG / 2 || cx > right - TAG / 2) return []
       const room = Math.abs(along(to) - along(from))
-      return { cx, cy, apart, room, x: cx - TAG / 2, y: cy - TAG / 2, width: TAG, height: TAG }
+      return [{ cx, cy, apart, room, x: cx - TAG / 2, y: cy - TAG / 2, width: TAG, height: TAG }]
     })
   })
 }
+
+/** How clearly a letter would stand: far from other lines, on a wide segment. */
+const clearness = ({ apart, room }: Candidate): number => 3 * apart + Math.min(room, 3 * TAG)
 
 /** A letter on each line of a panel, where it is farthest from the others and its segment is wide. */
 export function stripTags(
@@ -52,7 +56,7 @@ export function stripTags(
   return lines.map((line) => {
     const others = [limits, ...lines.filter((other) => other !== line).map(({ values }) => values)]
     const candidates = candidatesOf(line, others, segments, scales).sort(
-      (a, b) => b.apart - a.apart || b.room - a.room,
+      (a, b) => clearness(b) - clearness(a),
     )
     const found = taken.takeFirst(candidates)
     return found && tagMark(found.cx, found.cy, line.style.letter, line.style.stroke.colour)

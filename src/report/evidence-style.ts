@@ -101,9 +101,9 @@ table.stretches { table-layout: fixed; min-width: 700px; }
 table.stretches th:nth-child(1) { width: 27px; }
 table.stretches th:nth-child(2) { width: 60px; }
 table.stretches th:nth-child(3), table.stretches th:nth-child(6), table.stretches th:nth-child(7) { width: 53px; }
-table.stretches th:nth-child(4) { width: 72px; }
+table.stretches th:nth-child(4) { width: 84px; }
 table.stretches th:nth-child(8) { width: 80px; }
-table.stretches th:nth-child(9) { width: 60px; }
+table.stretches th:nth-child(9) { width: 56px; }
 table.stretches th:nth-child(10) { width: 78px; }
 table.groups td:nth-child(2) { width: 32%; }
 table.uncertain th:first-child { width: 150px; }

@@ -4,6 +4,7 @@ import type { EvidenceView } from './evidence-view.ts'
 import {
   directionText,
   groupName,
+  lackText,
   marginOfStretch,
   marginText,
   numberOf,
@@ -31,7 +32,8 @@ function governingCell(view: EvidenceView, { governing }: Stretch): Markup {
 
 function limitCell(stretch: Stretch): Markup {
   const { outcome } = stretch
-  if (outcome === 'below-smallest-limit') return markup`<b>none</b><br><span class="muted">too low</span>`
+  if (outcome === 'below-smallest-limit')
+    return markup`<b>none</b><br><span class="muted">${lackText(stretch)}</span>`
   const { limit, limitSpeed } = stretch
   const isOther = limit !== undefined && limit.unit !== 'km/h'
   return markup`<b>${limit ? signText(limit) : UNKNOWN}</b>${isOther && markup`<br><span class="muted">${kmh(limitSpeed)}</span>`}${outcome === 'kept' && markup`<br><span class="muted">kept</span>`}`

@@ -13,8 +13,14 @@ export const signText = ({ value, unit }: { readonly value: number; readonly uni
 
 /** A limit in the unit of its sign, and in km/h where that is another one. */
 export function limitText({ limit, limitSpeed }: Stretch): string {
-  if (!limit) return 'no limit'
+  if (!limit) return 'no limit proposed'
   return limit.unit === 'km/h' ? signText(limit) : `${signText(limit)} (${kmh(limitSpeed)})`
+}
+
+/** Why a stretch has no limit, in few words. */
+export function lackText({ lowestMaximum, governing }: Stretch): string {
+  if (lowestMaximum !== undefined) return 'below smallest'
+  return governing?.criterion === undefined ? 'no answer' : 'no safe speed'
 }
 
 /** A bound of the rules, which is in the unit of the sign, as a speed, m/s. */

@@ -102,7 +102,7 @@ async function mapped<T>(act: () => Promise<T>): Promise<T> {
 }
 
 /** Runs again what lost against another transaction. */
-async function repeatedly<T>(act: () => Promise<T>): Promise<T> {
+export async function repeatedly<T>(act: () => Promise<T>): Promise<T> {
   for (let attempt = 1; ; attempt += 1) {
     try {
       return await act()

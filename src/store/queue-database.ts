@@ -1,5 +1,6 @@
 import pg from 'pg'
 import { toFault } from './faults.ts'
+import { repeatedly } from './postgres.ts'
 
 /** Connections of a replica for its queue, beside those of the store. */
 const CONNECTIONS = 3
@@ -38,19 +39,25 @@ export function openQueueDatabase(
   pool.on('connect', (client) => client.on('error', onLostConnection))
   return {
     executeSql: async (text, values) => {
-      let client: pg.PoolClient | undefined
-      let isUsable = false
       try {
-        client = await pool.connect()
-        const result = await client.query<Record<string, unknown>>(text, values)
-        isUsable = true
-        return result
+        // replicas that make the queue at the same moment may lock each other out
+        return await repeatedly(() => execute(pool, text, values))
       } catch (error) {
         throw toFault(error)
-      } finally {
-        client?.release(!isUsable)
       }
     },
     close: () => pool.end(),
+  }
+}
+
+async function execute(pool: pg.Pool, text: string, values?: unknown[]): Promise<{ rows: unknown[] }> {
+  const client = await pool.connect()
+  let isUsable = false
+  try {
+    const result = await client.query<Record<string, unknown>>(text, values)
+    isUsable = true
+    return result
+  } finally {
+    client.release(!isUsable)
   }
 }

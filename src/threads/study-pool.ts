@@ -6,7 +6,7 @@ import type { ComputedChunk } from './study-thread.ts'
 /** ms after which a thread without work ends (own choice) */
 const IDLE_TIMEOUT = 30_000
 /** Threads yield to the one that answers requests. Only Linux counts niceness by thread; elsewhere it is the process's. */
-const NICENESS = process.platform === 'linux' ? 10 : 0
+const NICENESS = process.platform === 'linux' ? 5 : 0
 
 /** Threads that compute parts of studies, started when there is something to compute. */
 export class StudyPool {
@@ -37,7 +37,7 @@ export class StudyPool {
     const pool = new Piscina<StudyPart, ComputedChunk>({
       filename: fileURLToPath(new URL(`./study-thread.${isWritten ? 'ts' : 'js'}`, import.meta.url)),
       name: 'computeChunk',
-      execArgv: isWritten ? ['--import', 'tsx'] : [],
+      execArgv: isWritten ? ['--import', import.meta.resolve('tsx')] : [],
       minThreads: 0,
       maxThreads: this.#threads,
       idleTimeout: IDLE_TIMEOUT,

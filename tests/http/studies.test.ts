@@ -150,7 +150,7 @@ describe('a study', () => {
     expect(head.split(',')).toEqual(Object.keys(rows[0] ?? {}))
     expect(lines).toHaveLength(rows.length)
     expect(lines[3]?.split(',')).toEqual(
-      Object.values(rows[3] ?? {}).map((value) => (value === null ? '' : String(value))),
+      Object.values(rows[3] ?? {}).map((value) => (value === null ? '' : String(value as number))),
     )
   })
 })

@@ -129,6 +129,24 @@ test('shares of criteria and of impossible samples make one, and the latter have
   expect(percentiles[2]).toBeGreaterThan(0)
 })
 
+test('a sample whose draught falls to nothing is impossible', () => {
+  const [cell] = all(
+    single({
+      segments: [segmentOf(canal({ depth: 8, distances: [40, 40] }))],
+      // draws 1 m
+      vessels: [vesselOf('recreational-rb')],
+      uncertainty: {
+        ...UNCERTAINTY,
+        samples: 4096,
+        spreads: { draught_m: { kind: 'standard-deviation', size: 2 } },
+      },
+    }),
+  )
+  const possible = Object.values(cell!.sampled!.governedBy).reduce((sum, share) => sum + share, 0)
+  // Φ(−1/2) below none and Φ(−7/2) on the bed, from tables
+  expect(Math.abs(1 - possible - 0.3085 - 0.0002)).toBeLessThan(0.001)
+})
+
 test('samples that all are as given give the answer itself at every percentile', () => {
   const still = { ...UNCERTAINTY, spreads: {} }
   const segments = MIXED.segments.map(({ waveHeightLogSd: _, ...segment }) => segment)

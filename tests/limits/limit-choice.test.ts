@@ -133,8 +133,11 @@ test('a longer lower plateau is taken where the higher one alone would be too sh
 test('of plans that take the same time the one with fewer stretches is taken', () => {
   // 100 m may not be at 9 beside 6, being under 150 m. Either it goes down to 6, or 200 m of 12 come down to it:
   // 200/12 + 100/6 = 33⅓ = 300/9. The first makes 9 | 12 | 6, the second 9 | 6
-  const places = [free(500, 9), free(200, 12), free(100, 9), free(500, 6)]
-  expect(bestLimits(places, rule(150))).toEqual([9, 9, 9, 6])
+  // at any scale: a tie that rounding breaks would show at some
+  for (let k = 1; k <= 60; k += 1) {
+    const places = [free(500, 9), free(200 * k, 12), free(100 * k, 9), free(500, 6)]
+    expect(bestLimits(places, rule(150 * k))).toEqual([9, 9, 9, 6])
+  }
 })
 
 test('of plans alike in time and number the one with the higher limits upstream is taken', () => {

@@ -52,16 +52,16 @@ const SCENES: readonly Scene[] = [
         maxDraught: 2.9,
         stations: [
           { index: 0, depth: 5, width: 100, distances: [45, 55], shape: trapezoid },
-          { index: 1, depth: 4.6, width: 90, distances: [52, 38], shape: trapezoid },
+          { index: 1, depth: 4.8, width: 90, distances: [52, 38], shape: trapezoid },
           {
             index: 2,
-            depth: 5.2,
+            depth: 4.6,
             width: 90,
             distances: [40, 50],
             shape: {
               kind: 'profile',
               offsets: [-40, -25, -5, 20, 35, 50],
-              bedDepths: [0, 3.6, 5.2, 5.2, 3.5, 0],
+              bedDepths: [0, 3, 4.6, 4.6, 3, 0],
             },
           },
         ],

@@ -49,8 +49,10 @@ describe('ceilings', () => {
   })
 
   test('a whole number of steps that binary puts a little short is not rounded down to the step before', () => {
-    // 3 knots are 5.556 km/h; 0.3 m/s short of nothing: 10.8 km/h in steps of 0.1 is 108 of them
-    expect(brief(planAlong([THREE[0]!], [10.8], { signStep: 0.1 }))).toEqual([['limit', 10.8, 'a']])
+    for (let tenths = 10; tenths <= 250; tenths += 1) {
+      const [stretch] = planAlong([THREE[0]!], [tenths / 10], { signStep: 0.1 }).stretches
+      expect(stretch!.limit).toEqual({ value: tenths / 10, unit: 'km/h' })
+    }
     // 9.26 km/h is 5 kn exactly
     expect(brief(planAlong([THREE[0]!], [9.26], { signUnit: 'kn' }))).toEqual([['limit', 5, 'a']])
   })

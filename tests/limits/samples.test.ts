@@ -73,6 +73,18 @@ test('inputs scatter independently of each other', () => {
   })
 })
 
+test('each input is turned by a shift of its own', () => {
+  const { shifts, waveHeight } = drawsOf(ALL)
+  // the sequence itself starts at the same point in every dimension
+  const first = [
+    shifts.depth_m![0]! / 0.2,
+    shifts.bank_distance_m![0]! / 2,
+    shifts.current_mps![0]! / 0.3,
+    waveHeight[0]!,
+  ].map((score) => score.toFixed(9))
+  expect(new Set(first).size).toBe(4)
+})
+
 test('an input that is left out leaves the draws of the others as they are', () => {
   const whole = drawsOf(ALL)
   const { depth_m: _, ...rest } = ALL.spreads

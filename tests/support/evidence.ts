@@ -214,7 +214,7 @@ const water = (i: number): Segment =>
 export const longWaterway = (count: number): EvidenceView => {
   let chainage = 400_000
   const segments = Array.from({ length: count }, (_, i): StudySegment => {
-    const length = 300 + 900 * ((i * 7) % 5)
+    const length = i % 6 < 3 ? 120 : 2500
     const chainageFrom = chainage
     chainage -= length
     const id = `section-${String(i + 1).padStart(3, '0')}`
@@ -234,9 +234,21 @@ export const longWaterway = (count: number): EvidenceView => {
   )
 }
 
+/** Segments of no waterway, on one of which a vessel does not fit. */
+export const apart = (): EvidenceView =>
+  viewOf({
+    ...still,
+    segments: ['harrow-head-cut', 'harrow-tideway', 'harrow-upper-reach'].map((id) => {
+      const { waterway: _waterway, ...segment } = studySegment(demo.findSegment(id)!)
+      return { ...segment, chainageFrom: 0, chainageTo: segment.length }
+    }),
+    vessels: [vessel('coaster')],
+  })
+
 export const VIEWS: Readonly<Record<string, () => EvidenceView>> = {
   'a draft with samples': harrowmere,
   'a published plan by direction': byDirection,
   'long and hostile names, superseded': hostileNames,
+  'segments of no waterway': apart,
   'forty segments': () => longWaterway(40),
 }

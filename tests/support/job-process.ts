@@ -6,6 +6,7 @@ import { replica } from './replica.ts'
 const [, , url = ''] = process.argv
 
 const { jobs } = await replica(url, {
+  lostAfter: 2,
   onStored: (number) => writeSync(1, `${number}\n`),
   onError: (error) => writeSync(2, `${String(error)}\n`),
 })

@@ -3,7 +3,7 @@ import { PlanBuilder } from '../../src/limits/plan-builder.ts'
 import type { Plan, PlanRules, Stretch } from '../../src/limits/plan.ts'
 import type { Study, StudySegment } from '../../src/limits/study.ts'
 import type { PostedLimit } from '../../src/domain/segment.ts'
-import type { Vessel } from '../../src/domain/vessel.ts'
+import type { Loading, Vessel } from '../../src/domain/vessel.ts'
 
 /** km/h as m/s; restated. */
 export const kmh = (value: number): number => value / 3.6
@@ -59,8 +59,8 @@ export function studySegment(sketch: SketchedSegment): StudySegment {
   }
 }
 
-export function studyVessel(classId: string, loading: Vessel['loading'] = 'laden'): Vessel {
-  return { ...VESSEL, classId, className: classId, ...(loading && { loading }) }
+export function studyVessel(classId: string, loading: Loading = 'laden'): Vessel {
+  return { ...VESSEL, classId, className: classId, loading }
 }
 
 const VESSEL: Vessel = {

@@ -8,7 +8,7 @@ import type { Store } from '../../src/store/registry.ts'
 import { METHODS } from './studies.ts'
 
 /** Times of replicas that do not let a test wait. */
-export const FAST: Timing = { poll: 100, sweep: 500, lostAfter: 2, maintenance: 1 }
+const FAST: Timing = { poll: 100, sweep: 500, lostAfter: 20, maintenance: 1 }
 
 export interface Replica {
   readonly store: Store
@@ -19,10 +19,16 @@ export interface Replica {
   close(): Promise<void>
 }
 
+export interface ReplicaOptions extends Partial<RunnerParts> {
+  readonly onStored?: (number: number) => void
+  /** s after which a chunk of a replica that was killed is computed by another */
+  readonly lostAfter?: number
+}
+
 /** Store and jobs on a database, as a process has them; not started. */
 export async function replica(
   url: string,
-  { onStored, ...changes }: Partial<RunnerParts> & { readonly onStored?: (number: number) => void } = {},
+  { onStored, lostAfter = FAST.lostAfter, ...changes }: ReplicaOptions = {},
 ): Promise<Replica> {
   const store = await openStore(url)
   const stored: number[] = []
@@ -46,7 +52,7 @@ export async function replica(
   }
   const jobs = url.startsWith('sqlite:')
     ? localJobs(parts)
-    : sharedJobs({ ...parts, database: openQueueDatabase(url), timing: FAST })
+    : sharedJobs({ ...parts, database: openQueueDatabase(url), timing: { ...FAST, lostAfter } })
   return {
     store,
     jobs,

@@ -46,7 +46,7 @@ type Job = z.output<typeof JobReply>
 /** A job in the documented form. */
 export function job(reply: Reply, status: number): Job {
   expect(reply.statusCode, reply.body.slice(0, 2000)).toBe(status)
-  return strict(JobReply).parse(reply.json()) as Job
+  return strict(JobReply).parse(reply.json())
 }
 
 /** Asks for a job until it has ended. */

@@ -1,5 +1,7 @@
 import { execFile } from 'node:child_process'
-import { readFileSync } from 'node:fs'
+import { mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs'
+import { tmpdir } from 'node:os'
+import { join } from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { promisify } from 'node:util'
 import { pino } from 'pino'
@@ -19,6 +21,8 @@ const commands = [...readme.matchAll(/```sh\n([\s\S]*?)```/g)]
 
 let app: App
 let url = ''
+/** Ids that the commands name, as the script before them prints them. */
+let ids: Record<string, string> = {}
 
 beforeAll(async () => {
   app = buildApp({
@@ -26,20 +30,60 @@ beforeAll(async () => {
     log: pino({ level: 'silent' }),
   })
   url = await app.listen({ host: '127.0.0.1', port: 0 })
-})
+  ids = await published()
+}, 120_000)
+
+/** Goes the way from segments to published limits as the README has it. */
+async function published(): Promise<Record<string, string>> {
+  const folder = mkdtempSync(join(tmpdir(), 'limits-'))
+  try {
+    const { stdout } = await promisify(execFile)('sh', ['openapi/examples/limits.sh', folder], {
+      cwd: root,
+      env: { ...process.env, WASHLIMIT_URL: url },
+    })
+    expect(stdout).toMatch(/^study=study-\w+ plan=plan-\w+\n$/)
+    expect(readdirSync(folder).sort()).toEqual(FILES)
+    expect(JSON.parse(readFileSync(`${folder}/verification.json`, 'utf8'))).toMatchObject({
+      verdict: 'reproduced',
+    })
+    const pairs = stdout.trim().split(' ')
+    return Object.fromEntries(pairs.map((pair) => pair.split('=') as [string, string]))
+  } finally {
+    rmSync(folder, { recursive: true })
+  }
+}
+
+const FILES = [
+  'evidence.html',
+  'import.json',
+  'notice.json',
+  'plan.csv',
+  'plan.geojson',
+  'plan.json',
+  'plan.request.json',
+  'publication.json',
+  'publication.request.json',
+  'record.json',
+  'study.csv',
+  'verification.json',
+]
 
 afterAll(() => app.close())
 
 describe('the README', () => {
   test('shows a command for every endpoint', () => {
-    expect(commands.length).toBeGreaterThanOrEqual(19)
+    expect(commands.length).toBeGreaterThanOrEqual(45)
   })
 
   test.each(commands)('%s is answered as it stands', async (command) => {
     const real = command
       .replaceAll('localhost:8080', url.replace('http://', ''))
       .replace(/^curl -s/, 'curl --silent --show-error --fail-with-body')
-    const { stdout } = await promisify(execFile)('sh', ['-c', real], { cwd: root, maxBuffer: 2 ** 24 })
+    const { stdout } = await promisify(execFile)('sh', ['-c', real], {
+      cwd: root,
+      maxBuffer: 2 ** 24,
+      env: { ...process.env, ...ids },
+    })
     // 204 has no body; curl itself fails on a refusal
     if (command.includes('-X DELETE')) expect(stdout).toBe('')
     else expect(stdout.length).toBeGreaterThan(10)
