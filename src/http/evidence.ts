@@ -3,7 +3,7 @@ import { METHOD_VERSION, METHODS } from '../advisory/catalogue.ts'
 import type { Cell, Sampled } from '../limits/cell.ts'
 import type { GoverningCell, Plan } from '../limits/plan.ts'
 import type { Study } from '../limits/study.ts'
-import { evidenceDocument } from '../report/evidence.ts'
+import { evidenceSteps } from '../report/evidence.ts'
 import type { EvidencePublication, EvidenceView } from '../report/evidence-view.ts'
 import type { PlanRecord } from '../store/job-records.ts'
 import type { App, Routes } from './app-type.ts'
@@ -97,6 +97,15 @@ async function evidenceView(record: PlanRecord, service: Service): Promise<Evide
   }
 }
 
+/** Goes through the steps so that other requests have their turn between them. */
+async function inTurns<Result>(steps: Generator<undefined, Result>): Promise<Result> {
+  for (;;) {
+    const step = steps.next()
+    if (step.done === true) return step.value
+    await new Promise(setImmediate)
+  }
+}
+
 /** The evidence of a plan as pages to sign. */
 export function evidenceRoutes(service: Service): Routes {
   return (app: App) => {
@@ -114,7 +123,7 @@ export function evidenceRoutes(service: Service): Routes {
       },
       handler: async (request, reply) => {
         const plan = await planOf(request.params.id, service)
-        return sendPage(reply, evidenceDocument(await evidenceView(plan, service)))
+        return sendPage(reply, await inTurns(evidenceSteps(await evidenceView(plan, service))))
       },
     })
   }

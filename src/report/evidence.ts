@@ -61,22 +61,47 @@ function contents(): Markup {
   )}.</p></nav>`
 }
 
-function body(view: EvidenceView): Markup {
-  const cases = view.plan.stretches.map((_, index) => stretchCase(view, index))
+/** Pieces of a list made one by one, between which others may have their turn. */
+function* oneByOne<Item, Piece>(
+  items: readonly Item[],
+  make: (item: Item, index: number) => Piece,
+): Generator<undefined, Piece[]> {
+  const pieces: Piece[] = []
+  for (const [index, item] of items.entries()) {
+    pieces.push(make(item, index))
+    yield
+  }
+  return pieces
+}
+
+function* body(view: EvidenceView): Generator<undefined, Markup> {
+  const cases = yield* oneByOne(view.plan.stretches, (_, index) => stretchCase(view, index))
   const isShort = cases.length <= SHORT
   const register: Register = registerOf(cases)
+  const strips = yield* oneByOne(stripsOf(view), (strip, i) => stripPart(view, strip, i))
+  const sheets = yield* oneByOne(cases, (own) => stretchSheet(view, register, own))
   const mark =
     view.state !== 'published' &&
     markup`<div class="watermark ${view.state}" aria-hidden="true">${STATE_NAMES[view.state]}</div>`
-  return markup`${mark}<main class="${view.state}"><p class="recipe">${RECIPE}</p>${titlePage(view, register)}<section class="paper" id="rules">${contents()}<h2>1 How the limits were drawn</h2>${rulesPart(view)}</section><section class="paper strips" id="plan"><h2>2 The plan along the waterway</h2>${stripsOf(view).map((strip, i) => stripPart(view, strip, i))}</section><section class="paper${isShort && ' follows'}" id="stretches"><h2>3 Stretches</h2>${stretchTable(view, register)}</section>${cases.map((own) => stretchSheet(view, register, own))}${annexes(view, register)}</main>`
+  return markup`${mark}<main class="${view.state}"><p class="recipe">${RECIPE}</p>${titlePage(view, register)}<section class="paper" id="rules">${contents()}<h2>1 How the limits were drawn</h2>${rulesPart(view)}</section><section class="paper strips" id="plan"><h2>2 The plan along the waterway</h2>${strips}</section><section class="paper${isShort && ' follows'}" id="stretches"><h2>3 Stretches</h2>${stretchTable(view, register)}</section>${sheets}${annexes(view, register)}</main>`
 }
 
 /**
- * The evidence of a limit plan as a document to read, print, sign and file.
+ * The evidence of a limit plan as a document to read, print, sign and file, made in steps: a plan of many stretches takes
+ * seconds.
  *
  * @param view  the plan with the study it was drawn from, and its publication where it has one
  * @returns HTML that fetches nothing and runs nothing
  */
+export function* evidenceSteps(view: EvidenceView): Generator<undefined, string> {
+  return page(`${titleOf(view)}: evidence of a limit plan`, evidenceStyle(view), yield* body(view))
+}
+
+/** The evidence of a limit plan, made at once. */
 export function evidenceDocument(view: EvidenceView): string {
-  return page(`${titleOf(view)}: evidence of a limit plan`, evidenceStyle(view), body(view))
+  const steps = evidenceSteps(view)
+  for (;;) {
+    const step = steps.next()
+    if (step.done === true) return step.value
+  }
 }
