@@ -71,10 +71,21 @@ export class ChunkQueue {
     })
     // an error that nobody listens for ends the process
     boss.on('error', onError)
-    await boss.start()
-    await boss.createQueue(GIVEN_UP)
-    await boss.createQueue(CHUNKS, { name: CHUNKS, retryLimit: RETRIES, retryDelay: 1, deadLetter: GIVEN_UP })
-    return new ChunkQueue(boss, timing)
+    const queue = new ChunkQueue(boss, timing)
+    try {
+      await boss.start()
+      await boss.createQueue(GIVEN_UP)
+      await boss.createQueue(CHUNKS, {
+        name: CHUNKS,
+        retryLimit: RETRIES,
+        retryDelay: 1,
+        deadLetter: GIVEN_UP,
+      })
+    } catch (error) {
+      await queue.close()
+      throw error
+    }
+    return queue
   }
 
   /** Sends the chunks of a job that are not done; those that are in the queue stay as they are. */

@@ -25,19 +25,16 @@ class LocalJobs implements Jobs {
   /** oldest first */
   readonly #backlogs = new Map<string, Backlog>()
   readonly #inFlight = new Set<Promise<void>>()
+  #starting: Promise<void> | undefined
 
   constructor(parts: RunnerParts) {
     this.#parts = parts
     this.#runner = new Runner(parts)
   }
 
-  async start(): Promise<void> {
-    const { store } = this.#parts
-    for (const job of await store.unfinishedJobs()) {
-      const done = await store.chunksDone(job.id)
-      if (job.state === 'running' && done.size === job.chunksTotal) await this.#runner.finish(job)
-      else this.#add(job, done)
-    }
+  start(): Promise<void> {
+    this.#starting = this.#start()
+    return this.#starting
   }
 
   submit(job: JobHead): Promise<void> {
@@ -48,7 +45,35 @@ class LocalJobs implements Jobs {
   async close(): Promise<void> {
     this.#backlogs.clear()
     await this.#runner.close()
+    // whoever started them hears of it
+    await this.#starting?.catch(() => undefined)
     await Promise.all(this.#inFlight)
+  }
+
+  async #start(): Promise<void> {
+    const { store } = this.#parts
+    if (this.#runner.isClosed) return
+    for (const job of await store.unfinishedJobs()) {
+      const done = await store.chunksDone(job.id)
+      if (job.state === 'running' && done.size === job.chunksTotal) this.#track(this.#finish(job))
+      else this.#add(job, done)
+    }
+  }
+
+  #track(work: Promise<void>): void {
+    const running = work.finally(() => {
+      this.#inFlight.delete(running)
+      this.#handOut()
+    })
+    this.#inFlight.add(running)
+  }
+
+  async #finish(job: JobHead): Promise<void> {
+    try {
+      await this.#runner.finish(job)
+    } catch (error) {
+      if (!this.#runner.isClosed) this.#parts.onError(error)
+    }
   }
 
   #add(job: JobHead, done: ReadonlySet<number>): void {
@@ -66,11 +91,7 @@ class LocalJobs implements Jobs {
       while (this.#inFlight.size <= this.#parts.workers) {
         const number = backlog.waiting.pop()
         if (number === undefined) break
-        const running = this.#run(backlog, number).finally(() => {
-          this.#inFlight.delete(running)
-          this.#handOut()
-        })
-        this.#inFlight.add(running)
+        this.#track(this.#run(backlog, number))
       }
     }
   }

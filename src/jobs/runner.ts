@@ -79,6 +79,7 @@ export class Runner {
       await this.#end(id, { state: 'failed', problem: { code: 'internal', detail: OTHER_VERSION } })
       return 'dropped'
     }
+    if (this.isClosed) throw new Error('The jobs are closed')
     const computed = await this.#pool.compute(partOf(work.study, ...range))
     const job = await this.patiently(() => store.putChunk(id, { number, ...computed }))
     if (job?.state !== 'running') return 'dropped'

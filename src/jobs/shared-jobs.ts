@@ -40,6 +40,7 @@ class SharedJobs implements Jobs {
   /** chunks in hand */
   #taken = 0
   #taking: Promise<void> | undefined
+  #starting: Promise<void> | undefined
 
   constructor(parts: SharedJobsParts) {
     this.#parts = parts
@@ -47,19 +48,9 @@ class SharedJobs implements Jobs {
     this.#runner = new Runner(parts)
   }
 
-  async start(): Promise<void> {
-    try {
-      await this.#open()
-    } catch (error) {
-      // the database may come back; a right that is missing does not come by itself
-      if (!(error instanceof Fault)) throw error
-      this.#parts.onError(error)
-    }
-    const { poll, sweep } = this.#timing
-    this.#loops.push(
-      this.#repeatedly(poll, () => this.#take()),
-      this.#repeatedly(sweep, () => this.#sweep()),
-    )
+  start(): Promise<void> {
+    this.#starting = this.#start()
+    return this.#starting
   }
 
   /** Does not wait for the queue. */
@@ -72,19 +63,37 @@ class SharedJobs implements Jobs {
   async close(): Promise<void> {
     this.#closing.abort()
     await this.#runner.close()
-    await Promise.all([...this.#loops, ...this.#inFlight])
+    // whoever started them hears of it
+    await this.#starting?.catch(() => undefined)
+    await Promise.all([...this.#loops, this.#taking, ...this.#inFlight])
     try {
       for (const message of this.#interrupted) await this.#putBack(message)
-      await this.#queue?.close()
     } catch (error) {
       // they count as lost after a while
       this.#parts.onError(error)
     }
+    await this.#queue?.close()
     await this.#parts.database.close()
   }
 
   async #open(): Promise<void> {
     this.#queue = await ChunkQueue.open(this.#parts.database, this.#timing, this.#parts.onError)
+  }
+
+  async #start(): Promise<void> {
+    if (this.#isClosed) return
+    try {
+      await this.#open()
+    } catch (error) {
+      // the database may come back; a right that is missing does not come by itself
+      if (!(error instanceof Fault)) throw error
+      this.#report(error)
+    }
+    const { poll, sweep } = this.#timing
+    this.#loops.push(
+      this.#repeatedly(poll, () => this.#take()),
+      this.#repeatedly(sweep, () => this.#sweep()),
+    )
   }
 
   get #isClosed(): boolean {
@@ -130,7 +139,12 @@ class SharedJobs implements Jobs {
     const free = this.#parts.workers + 1 - this.#taken
     const queue = this.#queue
     if (!queue || free <= 0 || this.#isClosed) return
-    for (const message of await queue.take(free)) {
+    const messages = await queue.take(free)
+    if (this.#closing.signal.aborted) {
+      this.#interrupted.push(...messages)
+      return
+    }
+    for (const message of messages) {
       this.#taken += 1
       const running = this.#run(message, queue).finally(() => {
         this.#taken -= 1

@@ -190,3 +190,19 @@ test.each([
   expect(await ended(store, job.id)).toMatchObject({ state: 'failed', problem })
   expect(errors).toEqual([error])
 })
+
+test('jobs that are closed before they have started compute nothing any more', async () => {
+  const threads: Worker[] = []
+  const note = (worker: Worker): void => void threads.push(worker)
+  process.on('worker', note)
+  onTestFinished(() => void process.off('worker', note))
+  const { store, jobs, stored } = await testReplica(fresh())
+  await store.addJob(jobContent(STUDY), AUTHOR)
+  const starting = jobs.start()
+  await jobs.close()
+  await starting
+  await jobs.start()
+  await pause(200)
+  expect(stored).toEqual([])
+  expect(threads).toEqual([])
+})

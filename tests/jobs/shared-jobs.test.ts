@@ -173,3 +173,22 @@ test('replicas that make the queue at the same moment all come up', async () => 
   await expectResult(replicas[0]!.store, job.id, textsOf(SMALL))
   expect(replicas.flatMap(({ errors }) => errors)).toEqual([])
 })
+
+test('jobs that are closed before they have started, or without it, leave nothing behind', async () => {
+  const url = await fresh()
+  const [early, never] = [await testReplica(url), await testReplica(url)]
+  const starting = early.jobs.start()
+  await Promise.all([early.close(), never.close()])
+  await starting
+  await never.jobs.start()
+  await until(
+    async () =>
+      (
+        await onDatabase(
+          url,
+          `select 1 from pg_stat_activity where application_name = 'washlimit-queue'
+        and datname = current_database()`,
+        )
+      ).length === 0,
+  )
+})
