@@ -2,10 +2,14 @@ import { readdirSync, readFileSync } from 'node:fs'
 import { METHOD_VERSION } from './advisory/catalogue.ts'
 import type { AppParts } from './app.ts'
 import type { Config } from './config.ts'
-import { installAccess } from './http/access.ts'
+import { Admission, installAdmission } from './http/admission.ts'
+import { installAccess, installKeys } from './http/access.ts'
+import type { App } from './http/app-type.ts'
 import { installCors } from './http/cors.ts'
 import { readFeature, type FeatureWire } from './http/feature-in.ts'
+import { installMetrics, Metrics, metricsRoutes } from './http/metrics.ts'
 import type { Examples } from './http/openapi-examples.ts'
+import { installRateLimit, RateLimiter } from './http/rate-limit.ts'
 import type { Service } from './http/service.ts'
 import { serviceRoutes } from './http/service-routes.ts'
 import { deferredStore } from './store/deferred.ts'
@@ -34,12 +38,17 @@ export function serviceParts(config: Config, onLostConnection?: (error: Error) =
   const opening = openRegistry(config, now, onLostConnection)
   const store = deferredStore(config.databaseUrl.startsWith('sqlite:') ? 'sqlite' : 'postgres', opening)
   const judges = new JudgeThreads()
+  const versions = { service: version, methods: METHOD_VERSION }
+  const admission = new Admission(config)
+  const revision = async () => (await store.current()).revision
+  const metrics = new Metrics({ versions, admission, revision })
   const service: Service = {
     store,
     serviceVersion: version,
     now,
     bodyTimeout: config.requestTimeout,
     judges,
+    watch: metrics,
   }
   return {
     config,
@@ -47,19 +56,16 @@ export function serviceParts(config: Config, onLostConnection?: (error: Error) =
     opened: opening.then(() => undefined),
     installs: [
       (app) => {
-        installCors(app, config.corsOrigins)
+        guard(app, config, service, admission)
+        installMetrics(app, metrics)
       },
-      ...(config.access === 'keys'
-        ? [
-            (app: Parameters<typeof installAccess>[0]) => {
-              installAccess(app, service)
-            },
-          ]
-        : []),
     ],
-    routes: serviceRoutes(service),
-    versions: { service: version, methods: METHOD_VERSION },
-    isReady: async () => ({ registryRevision: (await store.current()).revision, database: store.kind }),
+    routes: [...serviceRoutes(service), metricsRoutes(metrics)],
+    versions,
+    onAnswered: (answered) => {
+      metrics.answered(answered)
+    },
+    isReady: async () => ({ registryRevision: await revision(), database: store.kind }),
     onClose: async () => {
       await judges.end()
       await store.close()
@@ -70,6 +76,15 @@ export function serviceParts(config: Config, onLostConnection?: (error: Error) =
       return registry.findSegment(EXAMPLE)?.id ?? registry.segments()[0]?.id
     },
   }
+}
+
+/** What stands before every route: the cheapest refusal first, and readable by pages of other origins. */
+function guard(app: App, config: Config, service: Service, admission: Admission): void {
+  installCors(app, config.corsOrigins)
+  installAdmission(app, admission)
+  if (config.access === 'keys') installKeys(app, service)
+  if (config.rateLimit > 0) installRateLimit(app, new RateLimiter(config.rateLimit))
+  if (config.access === 'keys') installAccess(app)
 }
 
 async function openRegistry(

@@ -1,5 +1,6 @@
 import type { FastifyReply } from 'fastify'
 import type { Registry, Store } from '../store/registry.ts'
+import type { Watch } from './metrics.ts'
 import type { JudgeThreads } from '../threads/judge-threads.ts'
 
 /** What routes answer from. */
@@ -11,6 +12,8 @@ export interface Service {
   /** ms in which a body that is read as a whole has to arrive */
   readonly bodyTimeout: number
   readonly judges: JudgeThreads
+  /** told of what is computed */
+  readonly watch: Watch
 }
 
 /** What one request is answered from: the registry does not change under it. */
