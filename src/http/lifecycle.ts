@@ -1,8 +1,16 @@
+import { setMaxListeners } from 'node:events'
 import type { ServerResponse } from 'node:http'
 import type { Socket } from 'node:net'
 import type { FastifyReply, FastifyRequest } from 'fastify'
 import { Fault } from '../domain/fault.ts'
 import type { App } from './app-type.ts'
+
+declare module 'fastify' {
+  interface FastifyInstance {
+    /** aborted when streams of a service that stops have had their time: what still runs then is broken off */
+    grace: AbortController
+  }
+}
 
 /** The latest reply on each connection. */
 const replies = new WeakMap<Socket, ServerResponse>()
@@ -25,6 +33,10 @@ export interface Answered {
 
 /** One log line for each reply, and a problem for requests that arrive while the service stops. */
 export function installLifecycle(app: App, onAnswered: (answered: Answered) => void = () => undefined): void {
+  const grace = new AbortController()
+  // every open stream listens
+  setMaxListeners(0, grace.signal)
+  app.decorate('grace', grace)
   let isStopping = false
   app.addHook('preClose', (done) => {
     isStopping = true

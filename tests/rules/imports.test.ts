@@ -52,6 +52,7 @@ const TABLE: Readonly<Record<string, Rule>> = {
   'parts.ts': { src: ['*'], packages: ['node:*'] },
   'server.ts': { src: ['*'], packages: ['*'] },
   'keys.ts': { src: ['*'], packages: ['node:*'] },
+  'copies.ts': { src: ['*'], packages: ['node:*'] },
 }
 
 interface Import {
