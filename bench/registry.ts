@@ -62,9 +62,10 @@ export async function registryRows(): Promise<{ what: string; value: string; bar
       conditions: toConditions({}, registry),
       options: toOptions({}),
     }
-    await answersOf(registry.segments(), asked, registry)
+    const watch = { advised: () => undefined, row: () => undefined }
+    await answersOf(registry.segments(), asked, registry, watch)
     const cpuBefore = cpuSeconds()
-    const answers = await answersOf(registry.segments(), asked, registry)
+    const answers = await answersOf(registry.segments(), asked, registry, watch)
     const layer = cpuSeconds() - cpuBefore
 
     const beforeLooks = performance.now()

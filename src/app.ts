@@ -5,22 +5,25 @@ import { installJsonBodies, installLinger } from './http/body.ts'
 import { installCompression } from './http/compression.ts'
 import { answerConnectionError, answerFrameworkError, installErrors } from './http/errors.ts'
 import { healthRoutes, type Readiness, type Versions } from './http/health.ts'
-import { installLifecycle } from './http/lifecycle.ts'
+import { type Answered, installLifecycle } from './http/lifecycle.ts'
 import { installOpenApi } from './http/openapi.ts'
 import type { Examples } from './http/openapi-examples.ts'
 import { problemRoutes } from './http/problem-routes.ts'
 import { installRequestId, requestId } from './http/request-id.ts'
+import { installSecurityHeaders } from './http/security-headers.ts'
 import { installValidation } from './http/validation.ts'
 
 export interface AppParts {
   readonly log: FastifyBaseLogger
-  readonly config: Pick<Config, 'bodyLimit' | 'publicUrl' | 'requestTimeout'>
+  readonly config: Pick<Config, 'bodyLimit' | 'publicUrl' | 'requestTimeout' | 'trustedProxies'>
   /** What the service is for, one function for each file of routes. */
   readonly routes: readonly Routes[]
   readonly versions: Versions
   /** what is put before every route, in this order */
   readonly installs?: readonly ((app: App) => void)[]
   readonly onClose?: () => Promise<void>
+  /** told of every request that is over */
+  readonly onAnswered?: (answered: Answered) => void
   /** shown in the documentation */
   readonly examples?: Examples
   /** Undefined while the service cannot answer. */
@@ -35,13 +38,15 @@ const MAX_PATH_STEP = 200
 
 /** The whole service, ready to listen or to be asked directly. */
 export function buildApp(parts: AppParts): App {
-  const { bodyLimit, publicUrl, requestTimeout } = parts.config
+  const { bodyLimit, publicUrl, requestTimeout, trustedProxies } = parts.config
   const app: App = fastify({
     loggerInstance: parts.log,
     // One line for each reply comes from a hook of ours.
     logController: new LogController({ disableRequestLogging: true, requestIdLogLabel: 'request_id' }),
     genReqId: requestId,
     requestIdHeader: false,
+    // whom nobody vouches for may say of himself what he likes
+    trustProxy: trustedProxies.length > 0 ? [...trustedProxies] : false,
     bodyLimit,
     connectionTimeout: IDLE_TIMEOUT,
     keepAliveTimeout: KEEP_ALIVE_TIMEOUT,
@@ -56,7 +61,8 @@ export function buildApp(parts: AppParts): App {
   }).withTypeProvider<ZodTypes>()
 
   installRequestId(app)
-  installLifecycle(app)
+  installSecurityHeaders(app, publicUrl)
+  installLifecycle(app, parts.onAnswered)
   installErrors(app)
   installValidation(app)
   installJsonBodies(app, { timeout: requestTimeout })

@@ -1,3 +1,4 @@
+import { isIP } from 'node:net'
 import { availableParallelism } from 'node:os'
 import { z } from 'zod'
 
@@ -21,6 +22,16 @@ function isDatabase(text: string): boolean {
 }
 
 const MOST_WORKERS = 64
+
+const listOf = (text: string): string[] => text.split(',').map((item) => item.trim())
+
+/** Whether a text is an IP address, or a network as an address and the length of its prefix. */
+function isNetwork(text: string): boolean {
+  const [address = '', prefix, ...rest] = text.split('/')
+  const version = isIP(address)
+  if (version === 0 || rest.length > 0) return false
+  return prefix === undefined || (WHOLE.test(prefix) && Number(prefix) <= (version === 4 ? 32 : 128))
+}
 
 const LEVELS = ['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent'] as const
 
@@ -53,6 +64,16 @@ export const Environment = z.object({
     .enum(['true', 'false'], { error: 'must be true or false' })
     .transform((text) => text === 'true')
     .optional(),
+  RATE_LIMIT_PER_MINUTE: whole(0, 1_000_000, 0),
+  MAX_REQUESTS: whole(1, 100_000, 100),
+  MAX_STREAMS: whole(1, 10_000, 32),
+  TRUSTED_PROXIES: z
+    .string()
+    .refine((text) => listOf(text).every(isNetwork), {
+      error: 'must be addresses or networks with commas between, such as 10.0.0.7,172.16.0.0/12',
+    })
+    .transform(listOf)
+    .default([]),
   CORS_ORIGINS: z
     .string()
     .refine((text) => text.split(',').every((origin) => URL.canParse(origin.trim())), {
@@ -81,6 +102,14 @@ export interface Config {
   readonly access: 'open' | 'keys'
   /** Whether an empty registry is filled with the demo waterway; undefined: when it is a SQLite file. */
   readonly demo: boolean | undefined
+  /** Requests of one key, or of one address without a key, in a minute; 0 for no limit. */
+  readonly rateLimit: number
+  /** Requests that are worked on at a time, streams not among them. */
+  readonly maxRequests: number
+  /** Streams that are open at a time. */
+  readonly maxStreams: number
+  /** Addresses and networks whose word on where a request comes from is taken. */
+  readonly trustedProxies: readonly string[]
   /** Origins of pages that may call the service. */
   readonly corsOrigins: readonly string[]
   /** Threads that compute studies. */
@@ -114,6 +143,10 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     // open without a word only where no one else can reach it
     access: values.ACCESS ?? (LOOPBACK.has(values.HOST) ? 'open' : 'keys'),
     demo: values.DEMO,
+    rateLimit: values.RATE_LIMIT_PER_MINUTE,
+    maxRequests: values.MAX_REQUESTS,
+    maxStreams: values.MAX_STREAMS,
+    trustedProxies: values.TRUSTED_PROXIES,
     corsOrigins: values.CORS_ORIGINS,
     workers: values.WORKERS,
   })

@@ -2,11 +2,15 @@ import { readdirSync, readFileSync } from 'node:fs'
 import { METHOD_VERSION } from './advisory/catalogue.ts'
 import type { AppParts } from './app.ts'
 import type { Config } from './config.ts'
-import { installAccess } from './http/access.ts'
+import { Admission, installAdmission } from './http/admission.ts'
+import { installAccess, installKeys } from './http/access.ts'
+import type { App } from './http/app-type.ts'
 import { installCors } from './http/cors.ts'
 import { readFeature, type FeatureWire } from './http/feature-in.ts'
+import { installMetrics, Metrics, metricsRoutes } from './http/metrics.ts'
 import type { Examples } from './http/openapi-examples.ts'
 import { concludeWith } from './http/plan-verify.ts'
+import { installRateLimit, RateLimiter } from './http/rate-limit.ts'
 import type { Service } from './http/service.ts'
 import { serviceRoutes } from './http/service-routes.ts'
 import type { Jobs } from './jobs/jobs.ts'
@@ -55,6 +59,10 @@ export function serviceParts(config: Config, listeners: Listeners = {}): Service
     now,
     methodVersion: METHOD_VERSION,
   })
+  const versions = { service: version, methods: METHOD_VERSION }
+  const admission = new Admission(config)
+  const revision = async () => (await store.current()).revision
+  const metrics = new Metrics({ versions, admission, revision, jobs: () => unfinished(store) })
   const service: Service = {
     store,
     jobs,
@@ -62,6 +70,7 @@ export function serviceParts(config: Config, listeners: Listeners = {}): Service
     now,
     bodyTimeout: config.requestTimeout,
     judges,
+    watch: metrics,
   }
   return {
     config,
@@ -69,19 +78,16 @@ export function serviceParts(config: Config, listeners: Listeners = {}): Service
     opened: opening.then(() => jobs.start()),
     installs: [
       (app) => {
-        installCors(app, config.corsOrigins)
+        guard(app, config, service, admission)
+        installMetrics(app, metrics)
       },
-      ...(config.access === 'keys'
-        ? [
-            (app: Parameters<typeof installAccess>[0]) => {
-              installAccess(app, service)
-            },
-          ]
-        : []),
     ],
-    routes: serviceRoutes(service),
-    versions: { service: version, methods: METHOD_VERSION },
-    isReady: async () => ({ registryRevision: (await store.current()).revision, database: store.kind }),
+    routes: [...serviceRoutes(service), metricsRoutes(metrics)],
+    versions,
+    onAnswered: (answered) => {
+      metrics.answered(answered)
+    },
+    isReady: async () => ({ registryRevision: await revision(), database: store.kind }),
     onClose: async () => {
       await Promise.all([judges.end(), jobs.close()])
       await store.close()
@@ -94,6 +100,13 @@ export function serviceParts(config: Config, listeners: Listeners = {}): Service
   }
 }
 
+/** Unfinished jobs by state. */
+async function unfinished(store: Store): Promise<Record<string, number>> {
+  const counts = { queued: 0, running: 0 }
+  for (const { state } of await store.unfinishedJobs()) if (state in counts) counts[state as 'queued'] += 1
+  return counts
+}
+
 /** Jobs of this process, or shared by the replicas on one database. */
 function jobsOn(
   { databaseUrl }: Config,
@@ -103,6 +116,15 @@ function jobsOn(
   const running = { ...parts, onError: onJobError }
   if (databaseUrl.startsWith('sqlite:')) return localJobs(running)
   return sharedJobs({ ...running, database: openQueueDatabase(databaseUrl, onLostConnection) })
+}
+
+/** What stands before every route: the cheapest refusal first, and readable by pages of other origins. */
+function guard(app: App, config: Config, service: Service, admission: Admission): void {
+  installCors(app, config.corsOrigins)
+  installAdmission(app, admission)
+  if (config.access === 'keys') installKeys(app, service)
+  if (config.rateLimit > 0) installRateLimit(app, new RateLimiter(config.rateLimit))
+  if (config.access === 'keys') installAccess(app)
 }
 
 async function openRegistry(

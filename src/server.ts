@@ -6,6 +6,10 @@ import type { App } from './http/app-type.ts'
 import { serviceParts } from './parts.ts'
 
 const STOP_TIMEOUT = 10_000 // ms that open streams have to end
+const TELLING = 1_000 // ms in which those that have not are told
+
+/** Never logged, wherever an error or a request brings it along. */
+const SECRETS = ['authorization', '*.authorization', '*.headers.authorization', '*.*.headers.authorization']
 
 function settings(): Config {
   if (existsSync('.env')) process.loadEnvFile('.env')
@@ -23,8 +27,11 @@ function stopOnSignals(app: App): void {
     process.once(signal, () => {
       app.log.info({ signal }, 'stopping')
       setTimeout(() => {
-        app.server.closeAllConnections()
+        app.grace.abort()
       }, STOP_TIMEOUT).unref()
+      setTimeout(() => {
+        app.server.closeAllConnections()
+      }, STOP_TIMEOUT + TELLING).unref()
       void app.close().then(() => {
         app.log.info('stopped')
       })
@@ -33,7 +40,7 @@ function stopOnSignals(app: App): void {
 }
 
 const config = settings()
-const log = pino({ level: config.logLevel })
+const log = pino({ level: config.logLevel, redact: SECRETS })
 const { opened, findExample, ...parts } = serviceParts(config, {
   onLostConnection: (error) => {
     log.error({ err: error }, 'a connection to the database was lost')

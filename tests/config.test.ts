@@ -16,6 +16,10 @@ test('an empty environment gives the defaults, frozen', () => {
     demo: undefined,
     corsOrigins: [],
     workers: Math.min(64, availableParallelism()),
+    rateLimit: 0,
+    maxRequests: 100,
+    maxStreams: 32,
+    trustedProxies: [],
   })
   expect(Object.isFrozen(config)).toBe(true)
 })
@@ -45,6 +49,25 @@ test.each(['1', '64'])('%s threads may compute studies', (text) => {
 
 test.each(['0', '65', '-1', '2.5', 'all'])('%s threads are refused', (text) => {
   expect(() => readConfig({ WORKERS: text })).toThrow('WORKERS must be a whole number from 1 to 64')
+})
+
+test('load balancers are addresses or networks, and what is neither stops the start', () => {
+  const read = (text: string) => readConfig({ TRUSTED_PROXIES: text }).trustedProxies
+  expect(read('10.0.0.7, 172.16.0.0/12,fd00::/8')).toEqual(['10.0.0.7', '172.16.0.0/12', 'fd00::/8'])
+  for (const text of ['balancer', '10.0.0.0/33', '10.0.0.0/8/8', 'fd00::/129', '10.0.0.7,', '10.0.0.0/']) {
+    expect(() => read(text), text).toThrow('TRUSTED_PROXIES must be addresses or networks')
+  }
+})
+
+test('bounds on load are whole numbers, of which only the rate may be none', () => {
+  expect(readConfig({ RATE_LIMIT_PER_MINUTE: '600', MAX_REQUESTS: '7', MAX_STREAMS: '3' })).toMatchObject({
+    rateLimit: 600,
+    maxRequests: 7,
+    maxStreams: 3,
+  })
+  expect(() => readConfig({ RATE_LIMIT_PER_MINUTE: '-1', MAX_REQUESTS: '0', MAX_STREAMS: '1.5' })).toThrow(
+    /RATE_LIMIT_PER_MINUTE must be a whole number from 0[\s\S]*MAX_REQUESTS must be[\s\S]*MAX_STREAMS must be/,
+  )
 })
 
 test('given values are read, and a URL loses the slash at its end', () => {

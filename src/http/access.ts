@@ -46,18 +46,25 @@ const includes = (role: Role, needed: Role): boolean => ROLES.indexOf(role) >= R
 const keyRequired = (): Fault =>
   new Fault('key-required', 'Send an access key that is valid: Authorization: Bearer <key>')
 
-async function check(request: FastifyRequest, reply: FastifyReply, service: Service): Promise<void> {
+/** Finds the key that a request comes with, where one is asked for. */
+async function identify(request: FastifyRequest, service: Service): Promise<void> {
+  const [path = ''] = request.url.split('?')
+  if (neededRole(request.method, path) === undefined) return
+  const given = keyOf(request.headers.authorization, PAGES.test(path))
+  if (given === undefined) return
+  const key = await service.store.findKey(hashOf(given), service.now())
+  if (key) request.accessKey = key
+}
+
+function check(request: FastifyRequest, reply: FastifyReply): void {
   const [path = ''] = request.url.split('?')
   const needed = neededRole(request.method, path)
   if (needed === undefined) return
-  const isPage = PAGES.test(path)
-  const given = keyOf(request.headers.authorization, isPage)
-  const key = given === undefined ? undefined : await service.store.findKey(hashOf(given), service.now())
+  const key = request.accessKey
   if (!key) {
-    if (isPage) void reply.header('www-authenticate', 'Basic realm="Washlimit", charset="UTF-8"')
+    if (PAGES.test(path)) void reply.header('www-authenticate', 'Basic realm="Washlimit", charset="UTF-8"')
     throw keyRequired()
   }
-  request.accessKey = key
   if (!includes(key.role, needed)) {
     throw new Fault(
       'role-too-small',
@@ -69,7 +76,15 @@ async function check(request: FastifyRequest, reply: FastifyReply, service: Serv
   }
 }
 
+/** Tells of every request whose key it comes with. */
+export function installKeys(app: App, service: Service): void {
+  app.addHook('onRequest', (request) => identify(request, service))
+}
+
 /** Asks every request for a key, but for those that tell nothing about the caller's water. */
-export function installAccess(app: App, service: Service): void {
-  app.addHook('onRequest', (request, reply) => check(request, reply, service))
+export function installAccess(app: App): void {
+  app.addHook('onRequest', (request, reply, done) => {
+    check(request, reply)
+    done()
+  })
 }

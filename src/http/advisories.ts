@@ -129,7 +129,9 @@ function addAdvisory(app: App, service: Service): void {
       const view = await viewFor(body, service)
       const resolved = resolve(body, view.registry)
       const { segment, vessel, conditions, options } = resolved
+      const begun = performance.now()
       const advisory = advise(segment, vessel, conditions, options)
+      service.watch.advised(advisory, (performance.now() - begun) / 1000)
       return advisoryText(toAdvisoryReply(advisory, resolved, contextOf(view), body))
     },
   })

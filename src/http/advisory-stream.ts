@@ -11,12 +11,14 @@ import { readCsvRows } from './csv.ts'
 import { csvRow } from './csv-write.ts'
 import { parseJson, toFiniteJson } from './json.ts'
 import { acceptLines, bodyStream, readLines } from './lines.ts'
+import type { Watch } from './metrics.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { problemResponses, toProblem } from './problems.ts'
 import { toAdvisoryReply } from './reply.ts'
 import { AdvisoryRequest, resolve } from './request.ts'
 import { viewOf, type Service, type View } from './service.ts'
 import { sendStream } from './stream.ts'
+import { turn } from './turns.ts'
 import { columnOfPointer, CSV_COLUMNS, requestOfRow } from './stream-csv.ts'
 import { parse } from './validation.ts'
 
@@ -78,7 +80,7 @@ function byColumn(fault: Fault): Fault {
   return errors ? new Fault(fault.code, fault.message, { ...fault.parts, errors }) : fault
 }
 
-function compactLine(item: Item, { registry }: View, isCsv: boolean): CompactRow {
+function compactLine(item: Item, { registry }: View, isCsv: boolean, watch: Watch): CompactRow {
   let input: unknown
   try {
     input = item.read()
@@ -86,23 +88,30 @@ function compactLine(item: Item, { registry }: View, isCsv: boolean): CompactRow
     const resolved = resolve(wire, registry)
     const { segment, vessel, conditions, options } = resolved
     const brief = adviseBriefly(segment, vessel, conditions, options)
+    watch.advised(brief)
+    watch.row('advisories', 'answered')
     return { ...toCompactRow(brief, resolved, wire.label ?? null), line: item.line }
   } catch (error) {
     const fault = toFault(error)
+    watch.row('advisories', 'refused')
     return { ...toProblemRow(isCsv ? byColumn(fault) : fault, labelOf(input)), line: item.line }
   }
 }
 
-function fullLine(item: Item, { registry, serviceVersion }: View, requestId: string): string {
+function fullLine(item: Item, { registry, serviceVersion }: View, requestId: string, watch: Watch): string {
   try {
     const wire = parse(AdvisoryRequest, item.read())
     const resolved = resolve(wire, registry)
     const { segment, vessel, conditions, options } = resolved
     const context = { serviceVersion, registryRevision: registry.revision }
     const advisory = advise(segment, vessel, conditions, options)
+    watch.advised(advisory)
+    watch.row('advisories', 'answered')
     return advisoryText(toAdvisoryReply(advisory, resolved, context, { line: item.line, label: wire.label }))
   } catch (error) {
-    return toFiniteJson({ line: item.line, problem: toProblem(toFault(error), requestId) })
+    const fault = toFault(error)
+    watch.row('advisories', 'refused')
+    return toFiniteJson({ line: item.line, problem: toProblem(fault, requestId) })
   }
 }
 
@@ -120,6 +129,7 @@ async function* answered(
   let text = head
   let made = 0
   for await (const batch of items) {
+    await turn()
     // a stream may run for hours: each piece of it sees the registry as it is then
     const view = await viewOf(service)
     for (const item of batch) {
@@ -129,7 +139,7 @@ async function* answered(
       yield text
       text = ''
       // other requests have their turn: a piece of the body may hold a thousand lines
-      await new Promise(setImmediate)
+      await turn()
     }
     yield text
     text = ''
@@ -153,6 +163,7 @@ export function advisoryStreamRoutes(service: Service): Routes {
 
 function addRoute(app: App, service: Service): void {
   app.post('/v1/advisories/stream', {
+    config: { place: 'stream' },
     schema: {
       operationId: 'streamAdvisories',
       tags: ['batches'],
@@ -190,18 +201,19 @@ async function respond(
 ): Promise<FastifyReply> {
   const isCsvIn = isCsvType(request)
   const format = negotiate(request, reply, isCsvIn ? ['csv', 'ndjson'] : ['ndjson', 'csv'])
+  const { watch } = service
   const stream = bodyStream(request)
   const items = isCsvIn ? csvItems(stream) : ndjsonItems(stream)
   if (format === 'csv') {
     const head = csvRow(COMPACT_COLUMNS)
     return sendStream(
       reply,
-      answered(items, head, service, (item, view) => csvOf(compactLine(item, view, isCsvIn))),
+      answered(items, head, service, (item, view) => csvOf(compactLine(item, view, isCsvIn, watch))),
     )
   }
   const isCompact = isCsvIn || detail === 'compact'
   const toLine = isCompact
-    ? (item: Item, view: View) => `${toFiniteJson(compactLine(item, view, isCsvIn))}\n`
-    : (item: Item, view: View) => `${fullLine(item, view, request.id)}\n`
+    ? (item: Item, view: View) => `${toFiniteJson(compactLine(item, view, isCsvIn, watch))}\n`
+    : (item: Item, view: View) => `${fullLine(item, view, request.id, watch)}\n`
   return sendStream(reply, answered(items, '', service, toLine))
 }

@@ -62,7 +62,14 @@ export function detached<Through extends Duplex>(payload: Readable, through: Thr
   return through
 }
 
-/** All bytes of a body. Stops, without holding more, at the limit of the route or when they come too slowly. */
+/** Bytes of bodies that are held while they come in, all together: four of the largest (own choice). */
+const MAX_HELD = 268_435_456
+let held = 0
+
+/**
+ * All bytes of a body. Stops, without holding more, at the limit of the route, when they come too slowly, or when the bodies
+ * that are coming in take too much memory together.
+ */
 export async function readBody(
   request: FastifyRequest,
   payload: IncomingMessage,
@@ -77,8 +84,13 @@ export async function readBody(
     const timer = setTimeout(() => {
       stop(new Fault('request-timeout', `The body did not arrive within ${timeout / 1000} s`))
     }, timeout)
-    const stop = (fault: Error): void => {
+    const release = (): void => {
       clearTimeout(timer)
+      held -= length
+      length = 0
+    }
+    const stop = (fault: Error): void => {
+      release()
       source.removeAllListeners('data')
       if (source !== payload) source.destroy()
       else source.resume()
@@ -86,18 +98,26 @@ export async function readBody(
     }
     source.on('data', (chunk: Buffer) => {
       length += chunk.length
+      held += chunk.length
       if (length > limit) stop(tooLarge(limit))
+      else if (held > MAX_HELD) stop(TOO_MUCH_AT_ONCE)
       else chunks.push(chunk)
     })
     source.once('error', (error) => {
       stop(unreadable(error))
     })
     source.once('end', () => {
-      clearTimeout(timer)
-      resolve(Buffer.concat(chunks, length))
+      const body = Buffer.concat(chunks, length)
+      release()
+      resolve(body)
     })
   })
 }
+
+const TOO_MUCH_AT_ONCE = new Fault(
+  'overloaded',
+  'The bodies that are coming in are too large together; repeat the request shortly',
+)
 
 const tooLarge = (limit: number): Fault =>
   new Fault('payload-too-large', `The body is larger than ${limit} bytes, counted after decompression`, {

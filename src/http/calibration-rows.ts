@@ -5,6 +5,7 @@ import { MOST_PASSAGES } from './calibrations.schema.ts'
 import { readCsvRows } from './csv.ts'
 import { parseJson } from './json.ts'
 import { readLines } from './lines.ts'
+import { turn } from './turns.ts'
 import { parse } from './validation.ts'
 
 /** A row of a body, still to be read, and how what is wrong with it is told. */
@@ -113,7 +114,7 @@ export async function readRows<Made>(
     } catch (error) {
       errors.push(...itemsOf(error).map(told))
     }
-    if (index % ROWS_AT_ONCE === ROWS_AT_ONCE - 1) await new Promise(setImmediate)
+    if (index % ROWS_AT_ONCE === ROWS_AT_ONCE - 1) await turn()
   }
   return { rows, made, errors }
 }

@@ -1,7 +1,15 @@
 import cors from '@fastify/cors'
 import type { App } from './app-type.ts'
 
-const EXPOSED = ['etag', 'location', 'registry-revision', 'retry-after', 'x-request-id']
+const EXPOSED = [
+  'etag',
+  'location',
+  'ratelimit',
+  'ratelimit-policy',
+  'registry-revision',
+  'retry-after',
+  'x-request-id',
+]
 
 /** Lets pages of these origins call the service; without any, browsers keep other origins out. */
 export function installCors(app: App, origins: readonly string[]): void {

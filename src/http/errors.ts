@@ -10,6 +10,7 @@ import { problemRow } from './problem-table.ts'
 import { PROBLEM_TYPE, toProblem } from './problems.ts'
 import { allowedMethods, type KnownRoute } from './known-routes.ts'
 import { hasBegunReply } from './lifecycle.ts'
+import { BROWSER_HEADERS, DATA_POLICY } from './security-headers.ts'
 
 const INTERNAL = new Fault(
   'internal',
@@ -46,7 +47,9 @@ function answerError(error: unknown, request: FastifyRequest, reply: FastifyRepl
   const { status, retryAfter } = problemRow(fault.code)
   if (status >= 500 && !(error instanceof Fault)) request.log.error({ err: error }, 'failed')
   else request.log.info({ code: fault.code, detail: fault.message }, 'refused')
-  if (retryAfter !== undefined) reply.header('retry-after', String(retryAfter))
+  // the limit of a caller knows better
+  if (retryAfter !== undefined && !reply.hasHeader('retry-after'))
+    reply.header('retry-after', String(retryAfter))
   // The framework closes the connection after a refused body; reading on lets the caller see the reply.
   reply.removeHeader('connection').removeHeader('content-encoding').removeHeader('content-length')
   if (fault.code === 'stopping') reply.header('connection', 'close')
@@ -95,6 +98,8 @@ function answerUnknown(request: FastifyRequest, reply: FastifyReply, routes: rea
 
 /** Answers errors that come up before there is a route, such as a path with broken percent signs. */
 export function answerFrameworkError(error: unknown, request: FastifyRequest, reply: FastifyReply): void {
+  // no hook runs for it
+  void reply.headers(BROWSER_HEADERS).header('content-security-policy', DATA_POLICY)
   answerError(error, request, reply)
 }
 
@@ -125,6 +130,7 @@ export function answerConnectionError(error: NodeJS.ErrnoException, socket: Sock
     `content-type: ${PROBLEM_TYPE}; charset=utf-8`,
     `content-length: ${Buffer.byteLength(body)}`,
     `x-request-id: ${id}`,
+    'x-content-type-options: nosniff',
     'connection: close',
   ]
   socket.end(`${head.join('\r\n')}\r\n\r\n${body}`)

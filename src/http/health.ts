@@ -34,6 +34,7 @@ export function healthRoutes(
 ): Routes {
   return (app) => {
     app.get('/health/live', {
+      config: { place: 'none' },
       schema: {
         operationId: 'getLive',
         tags: ['service'],
@@ -43,6 +44,7 @@ export function healthRoutes(
       handler: () => ({ status: 'live' }),
     })
     app.get('/health/ready', {
+      config: { place: 'none' },
       schema: {
         operationId: 'getReady',
         tags: ['service'],

@@ -10,6 +10,7 @@ import { toKmh } from '../domain/units.ts'
 import type { Registry, SegmentRecord } from '../store/registry.ts'
 import type { Routes } from './app-type.ts'
 import { LayerReply } from './layer.schema.ts'
+import type { Watch } from './metrics.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { isKnown, notModified } from './preconditions.ts'
 import { problemResponses } from './problems.ts'
@@ -17,6 +18,7 @@ import { maximumColumns } from './compact.ts'
 import { optionsOn, segmentOf } from './request.ts'
 import { ADVISORY_FIELDS, askedOf, FILTER_FIELDS, toFilter, type AdvisoryQuery } from './segment-query.ts'
 import { openView, type Service, type View } from './service.ts'
+import { turn } from './turns.ts'
 
 /** Segments that are answered before other requests have their turn. */
 const SEGMENTS_AT_ONCE = 100
@@ -44,11 +46,14 @@ export async function answersOf(
   records: readonly SegmentRecord[],
   asked: Asked,
   registry: Registry,
+  watch: Watch,
 ): Promise<{ record: SegmentRecord; answer: Answer }[]> {
   const answers: { record: SegmentRecord; answer: Answer }[] = []
   for (const [i, record] of records.entries()) {
-    answers.push({ record, answer: answerOf(record, asked, registry) })
-    if (i % SEGMENTS_AT_ONCE === SEGMENTS_AT_ONCE - 1) await new Promise(setImmediate)
+    const answer = answerOf(record, asked, registry)
+    if (!(answer instanceof Fault)) watch.advised(answer)
+    answers.push({ record, answer })
+    if (i % SEGMENTS_AT_ONCE === SEGMENTS_AT_ONCE - 1) await turn()
   }
   return answers
 }
@@ -179,7 +184,7 @@ export function layerRoutes(service: Service): Routes {
         const { bbox, waterway, gauge_id, format: _, ...query } = request.query
         const asked = askedOf(query satisfies AdvisoryQuery, view)
         const records = view.registry.segments(toFilter({ bbox, waterway, gauge_id }))
-        const answers = await answersOf(records, asked, view.registry)
+        const answers = await answersOf(records, asked, view.registry, service.watch)
         return { type: 'FeatureCollection', features: answers.map((item) => toFeature(item, asked)) }
       },
     })

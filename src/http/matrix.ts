@@ -17,8 +17,10 @@ import { ConditionsFields, OptionsFields, toConditions, toOptions } from './opti
 import { problemResponses } from './problems.ts'
 import { optionsOn, resolveSegment, segmentNotFound, segmentOf } from './request.ts'
 import { SegmentFields, type SegmentWire } from './segment.schema.ts'
+import type { Watch } from './metrics.ts'
 import type { Service } from './service.ts'
 import { sendStream } from './stream.ts'
+import { turn } from './turns.ts'
 import { toVessel, VesselFields } from './vessel.schema.ts'
 
 const MAX_CELLS = 2_000_000
@@ -105,12 +107,13 @@ interface Cell {
   readonly label: string | null
 }
 
-function cellRow({ segment: chosen, vessel, conditions, label }: Cell): CompactRow {
+function cellRow({ segment: chosen, vessel, conditions, label }: Cell, watch: Watch): CompactRow {
   if (!chosen.segment || !chosen.options)
     return toProblemRow(chosen.fault ?? new Fault('internal', 'No segment'), label)
   try {
     const { segment, record, options } = chosen
     const brief = adviseBriefly(segment, vessel, conditions, options)
+    watch.advised(brief)
     const inputs = { segment, vessel, conditions, options, ...(record && { record }) }
     return toCompactRow(brief, inputs, label)
   } catch (error) {
@@ -140,6 +143,7 @@ function axesOf(wire: MatrixWire, registry: Registry) {
 async function* cells(
   { segments, vessels, conditions }: ReturnType<typeof axesOf>,
   toText: (indices: readonly [number, number, number], row: CompactRow) => string,
+  watch: Watch,
 ): AsyncGenerator<string> {
   let text = ''
   let made = 0
@@ -148,13 +152,14 @@ async function* cells(
       for (const [k, condition] of conditions.entries()) {
         const label = labelOf(segment.label, vessel.label, condition.label)
         const { conditions: water } = condition
-        text += toText([i, j, k], cellRow({ segment, vessel: vessel.vessel, conditions: water, label }))
+        const cell = { segment, vessel: vessel.vessel, conditions: water, label }
+        text += toText([i, j, k], cellRow(cell, watch))
         made += 1
         if (made % ROWS_AT_ONCE !== 0) continue
         yield text
         text = ''
         // other requests have their turn
-        await new Promise(setImmediate)
+        await turn()
       }
     }
   }
@@ -180,11 +185,11 @@ async function respond(
   request: FastifyRequest,
   reply: FastifyReply,
   wire: MatrixWire,
-  registry: Registry,
+  service: Service,
 ): Promise<FastifyReply> {
   const format = negotiate(request, reply, ['ndjson', 'csv'])
   // Before the first row goes out, so that an unknown id is a problem in every form of the reply.
-  const axes = axesOf(wire, registry)
+  const axes = axesOf(wire, await service.store.current())
   const count = axes.segments.length * axes.vessels.length * axes.conditions.length
   if (count > MAX_CELLS) {
     throw new Fault(
@@ -196,15 +201,16 @@ async function respond(
     )
   }
   return format === 'csv'
-    ? sendStream(reply, prefixed(csvRow(CELL_COLUMNS), cells(axes, toCsvLine)))
-    : sendStream(reply, cells(axes, toJsonLine))
+    ? sendStream(reply, prefixed(csvRow(CELL_COLUMNS), cells(axes, toCsvLine, service.watch)))
+    : sendStream(reply, cells(axes, toJsonLine, service.watch))
 }
 
 /** Every segment with every vessel in all conditions, as rows. */
-export function matrixRoutes({ store }: Service): Routes {
+export function matrixRoutes(service: Service): Routes {
   return (app) => {
     app.post('/v1/advisories/matrix', {
       bodyLimit: MAX_BODY_BYTES,
+      config: { place: 'stream' },
       schema: {
         operationId: 'createAdvisoryMatrix',
         tags: ['batches'],
@@ -224,7 +230,7 @@ export function matrixRoutes({ store }: Service): Routes {
           ...problemResponses(400, 404, 406, 413, 415, 422),
         },
       },
-      handler: async (request, reply) => respond(request, reply, request.body, await store.current()),
+      handler: (request, reply) => respond(request, reply, request.body, service),
     })
   }
 }

@@ -4,6 +4,7 @@ import { z } from 'zod'
 import type { App } from './app-type.ts'
 import { addExamples, type Examples } from './openapi-examples.ts'
 import { SchemaBook } from './openapi-schemas.ts'
+import { Problem, PROBLEM_TYPE } from './problems.ts'
 
 type Json = Record<string, unknown>
 
@@ -92,6 +93,12 @@ export function installOpenApi(app: App, api: ApiDescription): void {
   })
 }
 
+/** Refusals that no route makes and any may meet: no key, too many requests, too much work, a service that stops. */
+const REFUSED = {
+  description: 'Why the request was refused; any status from 400 on that is not listed.',
+  content: { [PROBLEM_TYPE]: { schema: Problem } },
+}
+
 function documented(schema: Json | undefined, book: SchemaBook): Json {
   const { querystring, params, headers, body, response, ...rest } = schema ?? {}
   const result: Json = rest
@@ -100,7 +107,7 @@ function documented(schema: Json | undefined, book: SchemaBook): Json {
   }
   if (body !== undefined) result['body'] = content(body, book, 'input')
   if (response !== undefined) {
-    const replies = Object.entries(response as Json).map(([status, reply]) => [
+    const replies = Object.entries({ ...(response as Json), default: REFUSED }).map(([status, reply]) => [
       status,
       content(reply, book, 'output'),
     ])

@@ -46,7 +46,7 @@ export function overviewRoutes(service: Service): Routes {
           sign_unit = 'km/h',
         } = request.query
         const asked = askedOf({ vessel_class, loading, water_level_m, sign_unit }, view)
-        const answers = await answersOf(view.registry.segments(), asked, view.registry)
+        const answers = await answersOf(view.registry.segments(), asked, view.registry, service.watch)
         const own = view.registry.classes().map(({ vesselClass }) => vesselClass)
         const page = overviewPage({
           answered: answers.map(({ record, answer }) => ({

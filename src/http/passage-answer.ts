@@ -8,6 +8,7 @@ import { HeldText } from './held-text.ts'
 import { inOrder } from './in-order.ts'
 import { toFiniteJson } from './json.ts'
 import { summaryParts, toEventRow, toReportRow } from './passage-lines.ts'
+import { turn } from './turns.ts'
 import {
   EVENT_COLUMN_NAMES,
   GROUP_COLUMN_NAMES,
@@ -26,6 +27,8 @@ export interface Log {
 export interface AnswerSettings {
   readonly format: 'ndjson' | 'csv'
   readonly detail: 'reports' | 'events' | 'summary'
+  /** told of each row */
+  readonly onRow: (status: Finding['status']) => void
   readonly about: Pick<SummaryWire, 'parameters' | 'reproducibility'>
 }
 
@@ -108,8 +111,8 @@ async function judged(
 async function* pieces(batches: AsyncIterable<readonly LogRow[]>): AsyncGenerator<readonly LogRow[]> {
   for await (const batch of batches) {
     for (let from = 0; from < batch.length; from += ROWS_AT_ONCE) {
+      await turn()
       yield batch.slice(from, from + ROWS_AT_ONCE)
-      await new Promise(setImmediate)
     }
   }
 }
@@ -135,7 +138,9 @@ export async function* passageAnswer(
       PIECES_AT_ONCE,
     )) {
       for (const [placed, judgement] of rows) {
-        text += write.report(check.conclude(placed, judgement))
+        const finding = check.conclude(placed, judgement)
+        settings.onRow(finding.status)
+        text += write.report(finding)
         text += closedEvents()
       }
       if (held) held.add(text)

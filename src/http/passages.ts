@@ -103,6 +103,7 @@ export function passageRoutes(service: Service): Routes {
 
 function addRoute(app: App, service: Service): void {
   app.post('/v1/passages/check', {
+    config: { place: 'stream' },
     schema: {
       operationId: 'checkPassages',
       tags: ['passages'],
@@ -152,6 +153,9 @@ async function respond(
   const answer = passageAnswer(log, check, session, {
     format,
     detail: parameters.detail,
+    onRow: (status) => {
+      service.watch.row('passages', status)
+    },
     about: {
       parameters: { ...parameters },
       reproducibility: {

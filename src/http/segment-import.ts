@@ -15,6 +15,7 @@ import { booleanParameter, enumParameter } from './parameters.ts'
 import { problemResponses } from './problems.ts'
 import { authorOf, refusedFeatures } from './segment-writes.ts'
 import { openView, type Service } from './service.ts'
+import { turn } from './turns.ts'
 
 const MAX_BODY_BYTES = 64 * 1024 * 1024
 const MAX_FEATURES = 20_000
@@ -123,7 +124,7 @@ async function readAll(
     const naming = content ? calibrationItems(content, registry, `#/features/${i}`) : []
     for (const fault of [...faults, ...naming]) all.faults.push(fault)
     for (const remark of remarks) all.remarks.push(remark)
-    if (i % FEATURES_AT_ONCE === FEATURES_AT_ONCE - 1) await new Promise(setImmediate)
+    if (i % FEATURES_AT_ONCE === FEATURES_AT_ONCE - 1) await turn()
   }
   return all
 }

@@ -10,6 +10,7 @@ import { advisoryText } from './advisory-text.ts'
 import { SegmentCollection, SegmentFeature, toFeature } from './feature.schema.ts'
 import { inputHash } from './input-hash.ts'
 import { list, listOf } from './list.ts'
+import type { Watch } from './metrics.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { PAGE_FIELDS, slice } from './paging.ts'
 import { integerParameter } from './parameters.ts'
@@ -78,10 +79,13 @@ type Kept = LRUCache<string, Answered>
 const keyOf = (request: FastifyRequest, { registry }: View): string =>
   `${registry.revision} ${request.headers.accept ?? ''} ${request.url}`
 
-function answerTo(resolved: Resolved, view: View): Answered {
+function answerTo(resolved: Resolved, view: View, watch: Watch): Answered {
   const { segment, vessel, conditions, options } = resolved
   const context = { serviceVersion: view.serviceVersion, registryRevision: view.registry.revision }
-  const reply = toAdvisoryReply(advise(segment, vessel, conditions, options), resolved, context, {})
+  const begun = performance.now()
+  const advisory = advise(segment, vessel, conditions, options)
+  watch.advised(advisory, (performance.now() - begun) / 1000)
+  const reply = toAdvisoryReply(advisory, resolved, context, {})
   return { etag: etagOf(resolved, view.serviceVersion), text: advisoryText(reply) }
 }
 
@@ -177,7 +181,7 @@ function addAdvisory(app: App, service: Service): void {
       negotiate(request, reply, ['json'])
       const view = await openView(service, reply)
       const resolved = resolveQuery(recordOf(request.params.id, view), request.query, view)
-      const answered = answerTo(resolved, view)
+      const answered = answerTo(resolved, view, service.watch)
       kept.set(keyOf(request, view), answered)
       return sendAnswer(request, reply, answered)
     },

@@ -2,6 +2,7 @@ import type { FastifyReply } from 'fastify'
 import type { Jobs } from '../jobs/jobs.ts'
 import type { JobStore } from '../store/job-records.ts'
 import type { Registry, Store } from '../store/registry.ts'
+import type { Watch } from './metrics.ts'
 import type { JudgeThreads } from '../threads/judge-threads.ts'
 
 /** What routes answer from. */
@@ -14,6 +15,8 @@ export interface Service {
   readonly bodyTimeout: number
   readonly judges: JudgeThreads
   readonly jobs: Jobs
+  /** told of what is computed */
+  readonly watch: Watch
 }
 
 /** What one request is answered from: the registry does not change under it. */

@@ -11,6 +11,8 @@ import type { FromThread, ToThread } from './judge-messages.ts'
 const ALONE = 5000
 /** Tasks that wait at a thread before the caller takes one itself: one to work on and one to go on with. */
 const MOST_WAITING = 2
+/** ms that a thread lives at least before another takes its place: one that cannot start is not tried for each piece */
+const LIFE = 1000
 /** Threads at most; beyond it reading and writing are what takes the time (own choice). */
 const MOST_THREADS = 8
 
@@ -42,6 +44,7 @@ export class JudgeThreads {
   readonly #most: number
   readonly #alone: number
   #threads: Thread[] | undefined
+  #isEnded = false
   #sessions = 0
 
   constructor({ threads = availableParallelism() - 1, alone = ALONE } = {}) {
@@ -68,14 +71,18 @@ export class JudgeThreads {
   }
 
   async end(): Promise<void> {
+    this.#isEnded = true
     await Promise.all((this.#threads ?? []).map((thread) => thread.end()))
   }
 
   #leastBusy(): Thread | undefined {
+    if (this.#isEnded) return undefined
     this.#threads ??= Array.from({ length: this.#most }, () => new Thread())
     let found: Thread | undefined
-    for (const thread of this.#threads)
-      if (thread.isAlive && !(found && found.waiting <= thread.waiting)) found = thread
+    for (const [i, thread] of this.#threads.entries()) {
+      if (!thread.isAlive && performance.now() - thread.started > LIFE) this.#threads[i] = new Thread()
+      else if (thread.isAlive && !(found && found.waiting <= thread.waiting)) found = thread
+    }
     return found
   }
 }
@@ -97,6 +104,7 @@ class Thread {
   /** by session, the vessels that were sent, in their order */
   readonly #sent = new Map<number, Map<VesselGuess, number>>()
   #count = 0
+  readonly started = performance.now()
   isAlive = true
 
   constructor() {

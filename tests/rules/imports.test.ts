@@ -14,6 +14,7 @@ const HTTP_PACKAGES = [
   'fastify',
   '@fastify/*',
   'lru-cache',
+  'prom-client',
   'zod',
   'csv-*',
   'fastest-levenshtein',
@@ -50,12 +51,13 @@ const TABLE: Readonly<Record<string, Rule>> = {
     ],
     packages: HTTP_PACKAGES,
   },
-  'config.ts': { src: [], packages: ['zod', 'node:os'] },
+  'config.ts': { src: [], packages: ['zod', 'node:net', 'node:os'] },
   'app.ts': { src: ['http', 'config.ts (types)'], packages: ['fastify'] },
   'parts.ts': { src: ['*'], packages: ['node:*'] },
   'server.ts': { src: ['*'], packages: ['*'] },
   'verify.ts': { src: ['*'], packages: ['node:*'] },
   'keys.ts': { src: ['*'], packages: ['node:*'] },
+  'copies.ts': { src: ['*'], packages: ['node:*'] },
 }
 
 interface Import {

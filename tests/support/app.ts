@@ -12,6 +12,9 @@ export interface TestApp {
 export interface TestSettings {
   readonly bodyLimit?: number
   readonly requestTimeout?: number
+  readonly publicUrl?: string
+  readonly trustedProxies?: readonly string[]
+  readonly install?: (app: App) => void
   readonly isReady?: () => { registryRevision: number; database: string } | undefined
 }
 
@@ -27,9 +30,11 @@ export function buildTestApp(routes: readonly Routes[] = [], settings: TestSetti
     config: {
       bodyLimit: settings.bodyLimit ?? 1_048_576,
       requestTimeout: settings.requestTimeout ?? 5_000,
-      publicUrl: undefined,
+      publicUrl: settings.publicUrl,
+      trustedProxies: settings.trustedProxies ?? [],
     },
     routes,
+    ...(settings.install && { installs: [settings.install] }),
     versions: { service: '1.2.3', methods: '4' },
     isReady: settings.isReady ?? (() => ({ registryRevision: 7, database: 'none' })),
   })

@@ -1,3 +1,5 @@
+import { setTimeout as wait } from 'node:timers/promises'
+import type { Worker } from 'node:worker_threads'
 import { afterAll, describe, expect, it } from 'vitest'
 import { findVesselClass } from '../../src/domain/vessel-classes.ts'
 import { Judge, type MatchedReport } from '../../src/passages/judge.ts'
@@ -81,5 +83,27 @@ describe('a thread', () => {
     expect(await waiting).toEqual(reports.map((report) => log.judge.judge(report)))
     expect(await session.judge(reports)).toEqual(await waiting)
     session.close()
+  })
+
+  it('that is killed has its work done again, to the last digit, and another takes its place', async () => {
+    const made: Worker[] = []
+    const note = (worker: Worker): void => void made.push(worker)
+    process.on('worker', note)
+    const killed = new JudgeThreads({ threads: 1, alone: 0 })
+    const log = logOf(true)
+    const session = killed.open(log)
+    const reports = reportsOf(90)
+    const waiting = session.judge(reports)
+    await made[0]?.terminate()
+    expect(await waiting).toEqual(reports.map((report) => new Judge(log.judging).judge(report)))
+    await wait(1100)
+    expect(await session.judge(reports)).toEqual(await waiting)
+    expect(await session.judge(reports)).toEqual(await waiting)
+    expect(made).toHaveLength(2)
+    process.off('worker', note)
+    session.close()
+    await killed.end()
+    expect(await session.judge(reports)).toEqual(await waiting)
+    expect(made).toHaveLength(2)
   })
 })

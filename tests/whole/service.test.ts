@@ -1,6 +1,7 @@
 import { once } from 'node:events'
 import { request as httpRequest, type IncomingMessage } from 'node:http'
 import type { AddressInfo } from 'node:net'
+import { setTimeout as wait } from 'node:timers/promises'
 import request from 'supertest'
 import { expect, onTestFinished, test } from 'vitest'
 import { PLAIN } from '../support/requests.ts'
@@ -129,5 +130,39 @@ test('a service that stops lets a stream come to its end, and takes nothing new'
   expect(reply.complete).toBe(true)
   expect(linesOf(String(Buffer.concat(chunks))).map(({ line: number }) => number)).toEqual([1, 2])
   sender.destroy()
+  await closed
+})
+
+test('streams that outlast the grace of a service that stops are told before their reply, and reset after it began', async () => {
+  const { app, port } = await listening()
+  const opened = (path: string, type: string) => {
+    const sender = httpRequest({
+      port,
+      host: '127.0.0.1',
+      method: 'POST',
+      path,
+      headers: { 'content-type': type },
+    })
+    sender.on('error', () => undefined)
+    onTestFinished(() => void sender.destroy())
+    return sender
+  }
+  const answered = opened('/v1/advisories/stream?detail=compact', 'application/x-ndjson')
+  answered.write(`${JSON.stringify(PLAIN)}\n`)
+  const [reply] = (await once(answered, 'response')) as [IncomingMessage]
+  const unanswered = opened('/v1/passages/check', 'text/csv')
+  unanswered.write('time,lat,lon,sog_kn,mmsi\n')
+  await once(reply, 'data')
+  while (!(await app.inject('/metrics')).body.includes('in_hand{kind="stream"} 2')) await wait(10)
+  const closed = app.close()
+  const broken = once(reply.resume(), 'error')
+  const told = once(unanswered, 'response')
+  app.grace.abort()
+  const [problem] = (await told) as [IncomingMessage]
+  expect(problem.statusCode).toBe(503)
+  expect(JSON.parse(String(Buffer.concat(await problem.toArray())))).toMatchObject({ code: 'stopping' })
+  await broken
+  expect(reply.complete).toBe(false)
+  app.server.closeAllConnections()
   await closed
 })
