@@ -4,7 +4,7 @@ import { secondaryWaveForStone, sternWaveForStone } from '../../hydro/stone-stab
 import { cuspPeriodAt, speedAtCuspPeriod } from '../../hydro/wedge.ts'
 import { WAVE_METHODS } from '../../hydro/waves/all.ts'
 import { bankSternWave, sternWaveFirstSpeed, unsteadyFrom } from '../primary.ts'
-import { firstExcess } from '../scan.ts'
+import { firstExcess, type SpeedSpan } from '../scan.ts'
 import { secondaryFirstSpeed, secondaryUnknownFrom, secondaryWave } from '../secondary-wave.ts'
 import { NATURAL_SLOPE, slopeOf } from '../section-of.ts'
 import type { Situation } from '../situation.ts'
@@ -116,16 +116,10 @@ function evaluateBank(situation: Situation, index: 0 | 1, limits: BankLimits, sp
 }
 
 /** First speed at which the secondary wave that reaches a bank exceeds what it withstands. */
-function secondaryFirst(
-  situation: Situation,
-  index: 0 | 1,
-  limits: BankLimits,
-  from: number,
-  to: number,
-): number {
+function secondaryFirst(situation: Situation, index: 0 | 1, limits: BankLimits, span: SpeedSpan): number {
   const distance = situation.section.distances[index]
   if (limits.stone) {
-    return firstExcess(situation.waveBands, from, to, (speed) => {
+    return firstExcess(situation.waveBands, span, (speed) => {
       const height = Math.min(
         breakingAt(situation, index, speed),
         secondaryWave(situation, speed, distance).height,
@@ -137,8 +131,9 @@ function secondaryFirst(
   }
   const limit = limits.secondary ?? Infinity
   const unbroken = unbrokenFrom(situation, index, limit)
-  const exceeded = secondaryFirstSpeed(situation, limit, distance, Math.max(from, unbroken), to)
-  return Math.min(exceeded, secondaryUnknownFrom(situation, from))
+  const from = Math.max(span.from, unbroken)
+  const exceeded = secondaryFirstSpeed(situation, limit, distance, { ...span, from })
+  return Math.min(exceeded, secondaryUnknownFrom(situation, span.from))
 }
 
 /** First speed at which the stern wave at a bank exceeds what it withstands, or cannot be evaluated. */
@@ -160,11 +155,10 @@ export function bankWaveCriterion(situation: Situation, index: 0 | 1): Criterion
     sense: 'at-most',
     unit: 'm',
     origin: limits.origin,
-    firstSpeed: (from, to) => {
-      const first = Math.min(
-        sternFirst(situation, index, limits, from),
-        secondaryFirst(situation, index, limits, from, to),
-      )
+    firstSpeed: (from, to, most = Infinity) => {
+      const stern = sternFirst(situation, index, limits, from)
+      const span = { from, to, most: Math.min(most, stern) }
+      const first = Math.min(stern, secondaryFirst(situation, index, limits, span))
       return first < to ? first : Infinity
     },
     evaluate: (speed) => evaluateBank(situation, index, limits, speed),

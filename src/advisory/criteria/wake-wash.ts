@@ -46,8 +46,8 @@ export function wakeWashCriterion(situation: Situation, bank: 0 | 1): Criterion 
     sense: 'at-most',
     unit: 'm',
     origin: situation.options.limits.wakeWash === undefined ? 'policy' : 'request',
-    firstSpeed: (from, to) =>
-      firstExcess(situation.waveBands, Math.max(from, longFrom), to, (speed) =>
+    firstSpeed: (from, to, most = Infinity) =>
+      firstExcess(situation.waveBands, { from: Math.max(from, longFrom), to, most }, (speed) =>
         excessAt(situation, distance, speed),
       ),
     evaluate: (speed) => evaluateWash(situation, distance, longFrom, speed),
