@@ -58,6 +58,18 @@ function firstSpeedAtBank(
   )
 }
 
+/** What keeps a wave method out at a speed. */
+function waveOutside(
+  { waveBands, waveFactors, setting }: Situation,
+  index: number,
+  speed: number,
+): readonly Outside[] {
+  const method = WAVE_METHODS[index]
+  if (!method || isInRange(waveBands, index, speed)) return INSIDE
+  const outside = outsideAt(method, setting, speed)
+  return (waveFactors.without & (1 << index)) === 0 ? outside : [...outside, ...NOT_CALIBRATED]
+}
+
 /** Every wave method at a speed, in range or not. */
 export function waveReports(situation: Situation, speed: number): WaveReport[] {
   const limits = BANKS.map((bank) => bankLimits(situation, bank))
@@ -76,9 +88,7 @@ export function waveReports(situation: Situation, speed: number): WaveReport[] {
     }
     return {
       id: method.id,
-      outside: isInRange(situation.waveBands, i, speed)
-        ? INSIDE
-        : [...outsideAt(method, situation.setting, speed), ...(isWithout ? NOT_CALIBRATED : [])],
+      outside: waveOutside(situation, i, speed),
       height: heightByMethod(situation, i, speed, distance),
       factor: isCorrected && !isWithout ? byMethod[i] : undefined,
       firstSpeed,

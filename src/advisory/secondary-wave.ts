@@ -34,9 +34,7 @@ export function heightByMethod(situation: Situation, index: number, speed: numbe
  * @param speed     through the water, m/s, > 0
  * @param distance  from the sailing line, m, > B/2
  */
-export const secondaryWave = heldAtPlaces(waveAt)
-
-function waveAt(situation: Situation, speed: number, distance: number): SecondaryWave {
+export function waveAt(situation: Situation, speed: number, distance: number): SecondaryWave {
   const active = activeAt(situation.waveBands, speed)
   if (active === 0) return UNKNOWN
   if (situation.options.combine === 'median') return medianWave(situation, active, speed, distance)
@@ -52,6 +50,9 @@ function waveAt(situation: Situation, speed: number, distance: number): Secondar
   }
   return method === -1 ? UNKNOWN : { height, method }
 }
+
+/** The same, of which the last two are held: effects, criteria and reports of one answer ask for the same waves. */
+export const secondaryWave = heldAtPlaces(waveAt)
 
 /** Median of the methods that count; of an even number the mean of the middle two, named by the upper one. */
 function medianWave(situation: Situation, active: number, speed: number, distance: number): SecondaryWave {
@@ -75,15 +76,52 @@ export function secondaryFirstSpeed(
   situation: Situation,
   height: number,
   distance: number,
+  span: SpeedSpan,
+): number {
+  if (held && isHeld(held, situation, height, distance, span)) return held.found
+  const found =
+    situation.options.combine === 'median'
+      ? firstExcess(situation.waveBands, span, (speed) => waveAt(situation, speed, distance).height - height)
+      : highestFirstSpeed(situation, height, distance, span)
+  held = { situation, height, distance, span, found }
+  return found
+}
+
+/** The last one: banks that are alike ask for the same. */
+interface HeldFirstSpeed {
+  readonly situation: Situation
+  readonly height: number
+  readonly distance: number
+  readonly span: SpeedSpan
+  readonly found: number
+}
+
+let held: HeldFirstSpeed | undefined
+
+function isHeld(
+  last: HeldFirstSpeed,
+  situation: Situation,
+  height: number,
+  distance: number,
+  { from, to, most }: SpeedSpan,
+): boolean {
+  const { span } = last
+  return (
+    last.situation === situation &&
+    last.height === height &&
+    last.distance === distance &&
+    span.from === from &&
+    span.to === to &&
+    span.most === most
+  )
+}
+
+function highestFirstSpeed(
+  situation: Situation,
+  height: number,
+  distance: number,
   { from, to, most }: SpeedSpan,
 ): number {
-  if (situation.options.combine === 'median') {
-    return firstExcess(
-      situation.waveBands,
-      { from, to, most },
-      (speed) => secondaryWave(situation, speed, distance).height - height,
-    )
-  }
   for (const band of situation.waveBands.list) {
     const start = Math.max(band.from, from)
     const end = Math.min(band.to, to)

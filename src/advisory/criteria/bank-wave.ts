@@ -5,7 +5,7 @@ import { cuspPeriodAt, speedAtCuspPeriod } from '../../hydro/wedge.ts'
 import { WAVE_METHODS } from '../../hydro/waves/all.ts'
 import { bankSternWave, sternWaveFirstSpeed, unsteadyFrom } from '../primary.ts'
 import { firstExcess, type SpeedSpan } from '../scan.ts'
-import { secondaryFirstSpeed, secondaryUnknownFrom, secondaryWave } from '../secondary-wave.ts'
+import { secondaryFirstSpeed, secondaryUnknownFrom, secondaryWave, waveAt } from '../secondary-wave.ts'
 import { NATURAL_SLOPE, slopeOf } from '../section-of.ts'
 import type { Situation } from '../situation.ts'
 import { atMost, type Criterion, type Evaluation, type Origin } from './criterion.ts'
@@ -120,10 +120,7 @@ function secondaryFirst(situation: Situation, index: 0 | 1, limits: BankLimits, 
   const distance = situation.section.distances[index]
   if (limits.stone) {
     return firstExcess(situation.waveBands, span, (speed) => {
-      const height = Math.min(
-        breakingAt(situation, index, speed),
-        secondaryWave(situation, speed, distance).height,
-      )
+      const height = Math.min(breakingAt(situation, index, speed), waveAt(situation, speed, distance).height)
       const excess = height - secondaryLimitAt(situation, limits, speed)
       // no finite period: unknown, so exceeded
       return Number.isNaN(excess) ? 1 : excess
