@@ -115,11 +115,26 @@ function evaluateBank(situation: Situation, index: 0 | 1, limits: BankLimits, sp
     : atMost(wave.secondary, limit, WAVE_METHODS[wave.method]?.id)
 }
 
+/** Share by which a speed or height is below another whatever rounding does. */
+const SURELY_BELOW = 1e-9
+
+/**
+ * Speed below which the secondary wave does not exceed what a stone withstands: what it withstands falls with speed, so
+ * that up to a speed it is never less than there. 0 where that cannot be told.
+ */
+function clearOfStone(situation: Situation, limits: BankLimits, distance: number, span: SpeedSpan): number {
+  const end = Math.min(span.to, span.most)
+  const least = secondaryLimitAt(situation, limits, end) * (1 - SURELY_BELOW)
+  if (!(least > 0) || situation.options.combine === 'median') return 0
+  return secondaryFirstSpeed(situation, least, distance, { ...span, to: end }) * (1 - SURELY_BELOW)
+}
+
 /** First speed at which the secondary wave that reaches a bank exceeds what it withstands. */
 function secondaryFirst(situation: Situation, index: 0 | 1, limits: BankLimits, span: SpeedSpan): number {
   const distance = situation.section.distances[index]
   if (limits.stone) {
-    return firstExcess(situation.waveBands, span, (speed) => {
+    const clearTo = clearOfStone(situation, limits, distance, span)
+    return firstExcess(situation.waveBands, { ...span, clearTo }, (speed) => {
       const height = Math.min(breakingAt(situation, index, speed), waveAt(situation, speed, distance).height)
       const excess = height - secondaryLimitAt(situation, limits, speed)
       // no finite period: unknown, so exceeded
