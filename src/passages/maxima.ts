@@ -44,15 +44,19 @@ export class Maxima {
 
   /** At the position as reported; where the hull cannot float there, on the sailing line. Undefined when it fits neither. */
   actual(placement: Whereabouts, vessel: Vessel, conditions: Conditions): Maximum | undefined {
-    const { water, ...seen } = seenBy(placement, vessel, conditions)
+    const seen = seenBy(placement, vessel, conditions)
+    const { water, distances, leftBank } = seen
     const decision = fitting(() =>
       govern(water.segment, water.station, vessel, conditions, optionsOf(placement)),
     )
-    if (decision) return { vessel, decision, situation: decision.situation, ...seen }
+    if (decision) {
+      const { situation } = decision
+      return { vessel, decision, situation, distances, leftBank, cautions: seen.cautions }
+    }
     const onLine = this.#decisionOnLine(placement, vessel, conditions)
     if (!onLine) return undefined
     const cautions = [...seen.cautions, 'judged-on-sailing-line' as const]
-    return { vessel, decision: onLine, situation: onLine.situation, ...seen, cautions }
+    return { vessel, decision: onLine, situation: onLine.situation, distances, leftBank, cautions }
   }
 
   /** On the sailing line beside the position, which the situation is still that of. */
