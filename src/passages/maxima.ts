@@ -101,15 +101,20 @@ export function postedOverGround({ situation, direction }: Governed): number {
   return posted.reference === 'through-water' ? posted.speed + current : posted.speed
 }
 
-const optionsOf = (placement: Whereabouts): Options => waterOf(placement).fairway.options
+const optionsOf = ({ fairway }: Whereabouts): Options => fairwayOf(fairway).options
+
+function fairwayOf(fairway: Fairway | undefined): Fairway {
+  if (!fairway) throw new RangeError('A report without a fairway is not judged')
+  return fairway
+}
 
 /** What a matched report lies on. */
-function waterOf({ fairway, chainage }: Whereabouts): {
+function waterOf({ fairway: known, chainage }: Whereabouts): {
   fairway: Fairway
   segment: Segment
   station: Station
 } {
-  if (!fairway) throw new RangeError('A report without a fairway is not judged')
+  const fairway = fairwayOf(known)
   return { fairway, segment: fairway.segment, station: stationAt(fairway.segment, chainage) }
 }
 
