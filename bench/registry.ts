@@ -67,6 +67,9 @@ export async function registryRows(): Promise<{ what: string; value: string; bar
     const cpuBefore = cpuSeconds()
     const answers = await answersOf(registry.segments(), asked, registry, watch)
     const layer = cpuSeconds() - cpuBefore
+    const fewBefore = cpuSeconds()
+    const few = await answersOf(registry.segments().slice(0, SEGMENTS / 10), asked, registry)
+    const fewer = cpuSeconds() - fewBefore
 
     const beforeLooks = performance.now()
     for (let i = 0; i < 10_000; i += 1) await store.current()
@@ -76,6 +79,11 @@ export async function registryRows(): Promise<{ what: string; value: string; bar
       { what: `import of ${SEGMENTS} segments, SQLite`, value: `${imported.toFixed(0)} ms`, bar: '' },
       { what: `opening a registry of ${SEGMENTS} segments`, value: `${opened.toFixed(0)} ms`, bar: '' },
       { what: `layer of ${answers.length} segments, CPU`, value: `${layer.toFixed(2)} s`, bar: '1 s' },
+      {
+        what: `layer, CPU a segment with ${few.length} and with ${answers.length}`,
+        value: `${((fewer / few.length) * 1e6).toFixed(0)} us, ${((layer / answers.length) * 1e6).toFixed(0)} us`,
+        bar: 'alike: linear',
+      },
       { what: 'looking whether anything changed', value: `${look.toFixed(1)} us`, bar: '' },
     ]
   } finally {

@@ -7,8 +7,11 @@ import { Bench } from 'tinybench'
 import { advise, adviseBriefly } from '../src/advisory/advise.ts'
 import { assess } from '../src/advisory/assess.ts'
 import { decide } from '../src/advisory/decide.ts'
+import { effectsAt } from '../src/advisory/effects.ts'
+import { govern } from '../src/advisory/govern.ts'
 import { resolve, type AdvisoryWire } from '../src/http/request.ts'
 import { fileRegistry } from '../src/store/file-registry.ts'
+import { growthRows } from './growth.ts'
 import { passageRows } from './passages.ts'
 import { registryRows } from './registry.ts'
 import { studyRows } from './study.ts'
@@ -38,15 +41,20 @@ const rows: { what: string; value: string; bar: string }[] = []
 /** Rates in one thread, and in units of one Math.pow of the same run, which carries over between machines. */
 async function kernel(): Promise<void> {
   const { segment, vessel, conditions, options } = resolve(wire, fileRegistry([], '2026-01-01T00:00:00Z'))
+  const { situation } = decide(segment, vessel, conditions, options).main
   const sailed = { value: 2, reference: 'through-water' } as const
   let sink = 0
+  let turn = 0
   const bench = new Bench({ time: 1500, warmupTime: 500 })
     .add('pow', () => {
       for (let i = 0; i < 1000; i += 1) sink += Math.pow(1.5 + i * 1e-3, 0.35 + sink * 1e-12)
     })
+    .add('govern', () => void govern(segment, segment.stations[0], vessel, conditions, options))
     .add('decide', () => void decide(segment, vessel, conditions, options))
     .add('brief', () => void adviseBriefly(segment, vessel, conditions, options))
     .add('advise', () => void advise(segment, vessel, conditions, options))
+    // two speeds in turn, so that no figure of the one before is of use
+    .add('effects', () => void effectsAt(situation, (turn += 1) % 2 === 0 ? 2 : 2.01))
     .add('assess', () => void assess(segment, vessel, conditions, options, sailed))
   await bench.run()
   const seconds = (name: string): number => {
@@ -54,15 +62,20 @@ async function kernel(): Promise<void> {
     return result && 'latency' in result ? result.latency.p50 / 1000 : NaN
   }
   const pow = seconds('pow') / 1000
-  for (const [name, bar] of [
-    ['decide', ''],
-    ['brief', ''],
-    ['advise', '20,000/s'],
-    ['assess', ''],
+  for (const [name, what, bar] of [
+    ['advise', 'advisory with every reason', '400, aim 150'],
+    ['brief', 'advisory in brief', ''],
+    ['decide', 'decision with every bound', ''],
+    ['govern', 'what governs alone', ''],
+    ['effects', 'effects at a given speed', '60'],
+    ['assess', 'effects with decision, verdict and every report', ''],
   ] as const) {
     const each = seconds(name)
-    rows.push({ what: `${name}, in process`, value: `${Math.round(1 / each)}/s`, bar })
-    rows.push({ what: `${name}, in units of Math.pow`, value: (each / pow).toFixed(0), bar: '' })
+    rows.push({
+      what: `${what}, one thread, in units of Math.pow`,
+      value: `${(each / pow).toFixed(0)} (${Math.round(1 / each)}/s)`,
+      bar,
+    })
   }
 }
 
@@ -142,7 +155,7 @@ async function http(): Promise<void> {
   const [first] = (await once(server.stdout, 'data')) as [Buffer]
   const url = first.toString().trim()
   try {
-    await pairs('POST /v1/advisories against an echo that validates and stringifies', '0.60', post, [
+    await pairs('POST /v1/advisories against an echo that validates and stringifies', '0.80', post, [
       `${url}/v1/advisories`,
       `${url}/bench/echo`,
     ])
@@ -150,18 +163,22 @@ async function http(): Promise<void> {
       `${url}/v1/advisories`,
       `${url}/bench/echo-ready`,
     ])
-    await pairs('GET …/advisory of a segment against a still reply', '0.70', get, [
+    await pairs('GET …/advisory of a segment against a still reply', '0.85', get, [
       `${url}/v1/segments/harrow-long-pound/advisory?vessel_class=cemt-iv&water_level_m=0.1`,
       `${url}/bench/still`,
     ])
-    await pairs('NDJSON stream, full, against bare parse and stringify', '0.50', stream, [
-      `${url}/v1/advisories/stream`,
-      `${url}/bench/stream`,
-    ])
-    await pairs('NDJSON stream, compact, against bare parse and stringify', '', stream, [
-      `${url}/v1/advisories/stream?detail=compact`,
-      `${url}/bench/stream?compact`,
-    ])
+    await pairs(
+      'NDJSON stream, full, against bare parse and stringify',
+      '0.60; above 1 with both cores',
+      stream,
+      [`${url}/v1/advisories/stream`, `${url}/bench/stream`],
+    )
+    await pairs(
+      'NDJSON stream, compact, against bare parse and stringify',
+      '0.60; above 1 with both cores',
+      stream,
+      [`${url}/v1/advisories/stream?detail=compact`, `${url}/bench/stream?compact`],
+    )
   } finally {
     server.kill('SIGTERM')
   }
@@ -169,6 +186,7 @@ async function http(): Promise<void> {
 
 await kernel()
 rows.push(...studyRows())
+rows.push(...growthRows())
 rows.push(...(await registryRows()))
 rows.push(...(await passageRows()))
 await http()

@@ -129,18 +129,16 @@ export function adviseBriefly(
 ): Brief {
   const { main, byDirection } = decide(segment, vessel, conditions, options)
   const { situation } = main
-  const effects = effectsAt(situation, speedOfFigures(main))
   const sign = main.outcome === 'no-safe-speed' ? undefined : signOfDecision(main)
-  return {
-    decision: main,
-    byDirection,
-    sign,
-    effects,
-    uncalibrated: main.situation.waveFactors.isCorrected
-      ? withoutFactor(segment, vessel, conditions, options)
-      : undefined,
-    cautions: [...cautionsAt(situation, effects, main.direction), ...decisionCautions(main, sign)],
-  }
+  const ofDecision = decisionCautions(main, sign)
+  const uncalibrated = situation.waveFactors.isCorrected
+    ? withoutFactor(segment, vessel, conditions, options)
+    : undefined
+  // last, since the reports of an answer are at the same speed, of which the figures are held
+  const effects = effectsAt(situation, speedOfFigures(main))
+  const cautions = cautionsAt(situation, effects, main.direction)
+  cautions.push(...ofDecision)
+  return { decision: main, byDirection, sign, effects, uncalibrated, cautions }
 }
 
 /** The advisory of a vessel on a segment, with every reason; parameters and faults as of `adviseBriefly`. */

@@ -12,24 +12,24 @@ const BASIS_TEXT: Readonly<Record<Exclude<Basis, 'given' | 'derived'>, string>> 
 }
 
 /** Figures of a vessel as they are named at the edge. */
-const VESSEL_FIELDS: readonly (readonly [VesselField, string])[] = [
-  ['length', 'vessel.length_m'],
-  ['beam', 'vessel.beam_m'],
-  ['draught', 'vessel.draught_m'],
-  ['blockCoefficient', 'vessel.block_coefficient'],
-  ['midshipCoefficient', 'vessel.midship_coefficient'],
-  ['entranceLength', 'vessel.entrance_length_m'],
-  ['volume', 'vessel.displacement_m3'],
-  ['maxSpeed', 'vessel.max_speed_mps'],
-  ['minSteerageSpeed', 'vessel.min_steerage_speed_mps'],
-  ['envelopeCoefficient', 'vessel.rock_manual_coefficient'],
-  ['centralCoefficient', 'vessel.blaauw_coefficient'],
+const VESSEL_FIELDS: readonly { readonly field: VesselField; readonly name: string }[] = [
+  { field: 'length', name: 'vessel.length_m' },
+  { field: 'beam', name: 'vessel.beam_m' },
+  { field: 'draught', name: 'vessel.draught_m' },
+  { field: 'blockCoefficient', name: 'vessel.block_coefficient' },
+  { field: 'midshipCoefficient', name: 'vessel.midship_coefficient' },
+  { field: 'entranceLength', name: 'vessel.entrance_length_m' },
+  { field: 'volume', name: 'vessel.displacement_m3' },
+  { field: 'maxSpeed', name: 'vessel.max_speed_mps' },
+  { field: 'minSteerageSpeed', name: 'vessel.min_steerage_speed_mps' },
+  { field: 'envelopeCoefficient', name: 'vessel.rock_manual_coefficient' },
+  { field: 'centralCoefficient', name: 'vessel.blaauw_coefficient' },
 ]
 
 function vesselAssumptions({ vessel, segment, uncappedDraught }: Situation): Assumption[] {
   const found: Assumption[] = []
   const owner = vessel.className ?? 'described vessel of this size and hull'
-  for (const [field, name] of VESSEL_FIELDS) {
+  for (const { field, name } of VESSEL_FIELDS) {
     const value = vessel[field]
     const basis = vessel.basis[field]
     if (value === undefined || basis === 'given') continue

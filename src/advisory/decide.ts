@@ -72,7 +72,10 @@ export function stationBounds(
   return [first, ...rest]
 }
 
-function decideDirection({ situation, water }: StationBounds, direction: Direction | undefined): Decision {
+export function decideDirection(
+  { situation, water }: StationBounds,
+  direction: Direction | undefined,
+): Decision {
   const { maxSpeed, minSteerageSpeed } = situation.vessel
   const posted = postedLimitCriterion(situation, direction)
   const service: Bound = { criterion: serviceSpeedCriterion(situation), firstSpeed: maxSpeed }

@@ -2,7 +2,7 @@ import { isInRange, outsideAt, type Bands, type Outside } from '../hydro/bands.t
 import { SQUAT_METHODS } from '../hydro/squat/all.ts'
 import { WAVE_METHODS } from '../hydro/waves/all.ts'
 import { bankLimits, secondaryLimitAt, type BankLimits } from './criteria/bank-wave.ts'
-import { firstExcess } from './scan.ts'
+import { firstExcess, type SpeedSpan } from './scan.ts'
 import { firstSpeedOfMethodAlone, heightByMethod } from './secondary-wave.ts'
 import type { Situation } from './situation.ts'
 
@@ -39,24 +39,35 @@ const INSIDE: readonly Outside[] = []
 function firstSpeedAtBank(
   situation: Situation,
   method: number,
-  interval: { readonly from: number; readonly to: number },
+  span: SpeedSpan,
   bank: 0 | 1,
   limits: BankLimits,
 ): number {
   const distance = situation.section.distances[bank]
   if (limits.secondary !== undefined) {
-    return firstSpeedOfMethodAlone(situation, interval, method, limits.secondary, distance)
+    return firstSpeedOfMethodAlone(situation, span, method, limits.secondary, distance)
   }
   const { steps } = situation.waveBands
-  const list = [{ ...interval, active: 1 << method }]
+  const list = [{ from: span.from, to: span.to, active: 1 << method }]
   const own: Bands = { list, intervals: [], isOutOfRange: false, ...(steps && { steps }) }
   return firstExcess(
     own,
-    0,
-    situation.vessel.maxSpeed,
+    { from: 0, to: situation.vessel.maxSpeed, most: span.most },
     (speed) =>
       heightByMethod(situation, method, speed, distance) - secondaryLimitAt(situation, limits, speed),
   )
+}
+
+/** What keeps a wave method out at a speed. */
+function waveOutside(
+  { waveBands, waveFactors, setting }: Situation,
+  index: number,
+  speed: number,
+): readonly Outside[] {
+  const method = WAVE_METHODS[index]
+  if (!method || isInRange(waveBands, index, speed)) return INSIDE
+  const outside = outsideAt(method, setting, speed)
+  return (waveFactors.without & (1 << index)) === 0 ? outside : [...outside, ...NOT_CALIBRATED]
 }
 
 /** Every wave method at a speed, in range or not. */
@@ -70,14 +81,14 @@ export function waveReports(situation: Situation, speed: number): WaveReport[] {
     let firstSpeed = Infinity
     for (const bank of BANKS) {
       const own = limits[bank]
-      if (interval && own)
-        firstSpeed = Math.min(firstSpeed, firstSpeedAtBank(situation, i, interval, bank, own))
+      if (!interval || !own) continue
+      // the second bank only up to what the first one allows
+      const span = { from: interval.from, to: interval.to, most: firstSpeed }
+      firstSpeed = Math.min(firstSpeed, firstSpeedAtBank(situation, i, span, bank, own))
     }
     return {
       id: method.id,
-      outside: isInRange(situation.waveBands, i, speed)
-        ? INSIDE
-        : [...outsideAt(method, situation.setting, speed), ...(isWithout ? NOT_CALIBRATED : [])],
+      outside: waveOutside(situation, i, speed),
       height: heightByMethod(situation, i, speed, distance),
       factor: isCorrected && !isWithout ? byMethod[i] : undefined,
       firstSpeed,

@@ -4,6 +4,16 @@ import { risingRoot } from '../hydro/root.ts'
 /** Samples per band: the laws are smooth and nearly straight in logarithms, one hump a band at most. */
 const SAMPLES = 48
 
+/** Speeds that are searched, m/s. */
+export interface SpeedSpan {
+  readonly from: number
+  readonly to: number
+  /** what is found above it need not be told: Infinity may stand for it */
+  readonly most: number
+  /** nothing is exceeded below it, as is known: it need not be looked for there */
+  readonly clearTo?: number
+}
+
 /** First speed from `from` on from which no method counts, m/s. */
 export function firstUnknownSpeed(bands: Bands, from: number): number {
   for (const band of bands.list) {
@@ -22,8 +32,7 @@ export function firstUnknownSpeed(bands: Bands, from: number): number {
  */
 export function firstExcess(
   bands: Bands,
-  from: number,
-  to: number,
+  { from, to, most, clearTo = 0 }: SpeedSpan,
   excess: (speed: number) => number,
 ): number {
   for (const band of bands.list) {
@@ -31,7 +40,8 @@ export function firstExcess(
     const end = Math.min(band.to, to)
     if (!(start < end)) continue
     if (band.active === 0) return start
-    const found = firstExcessInBand(bands.steps ?? [], start, end, excess)
+    if (start > most) return Infinity
+    const found = firstExcessInBand(bands.steps ?? [], { from: start, to: end, most, clearTo }, excess)
     if (found < Infinity) return found
   }
   return Infinity
@@ -40,28 +50,31 @@ export function firstExcess(
 /** Up to each step of a law by itself: a bound that lies within the step is reached on both sides of it. */
 function firstExcessInBand(
   steps: readonly number[],
-  from: number,
-  to: number,
+  { from, to, most, clearTo = 0 }: SpeedSpan,
   excess: (speed: number) => number,
 ): number {
   let start = from
   for (const end of [...steps.filter((step) => step > from && step < to), to]) {
-    const found = firstExcessWithin(start, end, excess)
+    const found = firstExcessWithin({ from: start, to: end, most, clearTo }, excess)
     if (found < Infinity) return found
     start = end
   }
   return Infinity
 }
 
-function firstExcessWithin(from: number, to: number, excess: (speed: number) => number): number {
+function firstExcessWithin(
+  { from, to, most, clearTo = 0 }: SpeedSpan,
+  excess: (speed: number) => number,
+): number {
   let below = from * (1 + 4 * Number.EPSILON)
-  if (below > 0 && excess(below) > 0) return from
+  if (below > 0 && below >= clearTo && excess(below) > 0) return from
   for (let i = 1; i <= SAMPLES; i += 1) {
+    if (below > most) return Infinity
     const above = i === SAMPLES ? to : from + ((to - from) * i) / SAMPLES
-    if (excess(above) > 0) {
+    if (above >= clearTo && excess(above) > 0) {
       // the law has no value at rest: start where it is far below any bound
       const low = below > 0 ? below : above * 1e-6
-      return excess(low) > 0 ? low : risingRoot(excess, low, above)
+      return low >= clearTo && excess(low) > 0 ? low : risingRoot(excess, low, above)
     }
     below = above
   }

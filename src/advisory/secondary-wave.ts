@@ -1,6 +1,7 @@
 import { activeAt } from '../hydro/bands.ts'
+import { heldAtPlaces } from '../hydro/held.ts'
 import { WAVE_METHODS } from '../hydro/waves/all.ts'
-import { firstExcess, firstUnknownSpeed } from './scan.ts'
+import { firstExcess, firstUnknownSpeed, type SpeedSpan } from './scan.ts'
 import type { Situation } from './situation.ts'
 
 /** Highest secondary wave at a place, with the method it comes from. */
@@ -10,6 +11,11 @@ export interface SecondaryWave {
   /** index into the list of methods; -1 where none counts */
   readonly method: number
 }
+
+/** Methods by number, those whose inverse is an iteration last: they are solved only up to the lowest of the others. */
+const SOLVED_IN_ORDER: readonly number[] = [...WAVE_METHODS.keys()].sort(
+  (a, b) => Number(WAVE_METHODS[a]?.isIterated ?? false) - Number(WAVE_METHODS[b]?.isIterated ?? false),
+)
 
 const UNKNOWN: SecondaryWave = { height: NaN, method: -1 }
 
@@ -28,7 +34,7 @@ export function heightByMethod(situation: Situation, index: number, speed: numbe
  * @param speed     through the water, m/s, > 0
  * @param distance  from the sailing line, m, > B/2
  */
-export function secondaryWave(situation: Situation, speed: number, distance: number): SecondaryWave {
+export function waveAt(situation: Situation, speed: number, distance: number): SecondaryWave {
   const active = activeAt(situation.waveBands, speed)
   if (active === 0) return UNKNOWN
   if (situation.options.combine === 'median') return medianWave(situation, active, speed, distance)
@@ -44,6 +50,9 @@ export function secondaryWave(situation: Situation, speed: number, distance: num
   }
   return method === -1 ? UNKNOWN : { height, method }
 }
+
+/** The same, of which the last two are held: effects, criteria and reports of one answer ask for the same waves. */
+export const secondaryWave = heldAtPlaces(waveAt)
 
 /** Median of the methods that count; of an even number the mean of the middle two, named by the upper one. */
 function medianWave(situation: Situation, active: number, speed: number, distance: number): SecondaryWave {
@@ -67,26 +76,63 @@ export function secondaryFirstSpeed(
   situation: Situation,
   height: number,
   distance: number,
-  from: number,
-  to: number,
+  span: SpeedSpan,
 ): number {
-  if (situation.options.combine === 'median') {
-    return firstExcess(
-      situation.waveBands,
-      from,
-      to,
-      (speed) => secondaryWave(situation, speed, distance).height - height,
-    )
-  }
+  if (held && isHeld(held, situation, height, distance, span)) return held.found
+  const found =
+    situation.options.combine === 'median'
+      ? firstExcess(situation.waveBands, span, (speed) => waveAt(situation, speed, distance).height - height)
+      : highestFirstSpeed(situation, height, distance, span)
+  held = { situation, height, distance, span, found }
+  return found
+}
+
+/** The last one: banks that are alike ask for the same. */
+interface HeldFirstSpeed {
+  readonly situation: Situation
+  readonly height: number
+  readonly distance: number
+  readonly span: SpeedSpan
+  readonly found: number
+}
+
+let held: HeldFirstSpeed | undefined
+
+function isHeld(
+  last: HeldFirstSpeed,
+  situation: Situation,
+  height: number,
+  distance: number,
+  { from, to, most }: SpeedSpan,
+): boolean {
+  const { span } = last
+  return (
+    last.situation === situation &&
+    last.height === height &&
+    last.distance === distance &&
+    span.from === from &&
+    span.to === to &&
+    span.most === most
+  )
+}
+
+function highestFirstSpeed(
+  situation: Situation,
+  height: number,
+  distance: number,
+  { from, to, most }: SpeedSpan,
+): number {
   for (const band of situation.waveBands.list) {
     const start = Math.max(band.from, from)
     const end = Math.min(band.to, to)
     if (!(start < end)) continue
     if (band.active === 0) return start
+    if (start > most) return Infinity
     let first = Infinity
-    for (let i = 0; i < WAVE_METHODS.length; i += 1) {
+    for (const i of SOLVED_IN_ORDER) {
       if ((band.active & (1 << i)) === 0) continue
-      first = Math.min(first, firstSpeedByMethod(situation, i, height, distance, start, end))
+      const span = { from: start, to: end, most: Math.min(most, first) }
+      first = Math.min(first, firstSpeedByMethod(situation, i, height, distance, span))
     }
     if (first < Infinity) return first
   }
@@ -98,24 +144,26 @@ function firstSpeedByMethod(
   index: number,
   height: number,
   distance: number,
-  from: number,
-  to: number,
+  { from, to, most }: SpeedSpan,
 ): number {
   const bare = height / factorAt(situation, index)
-  return WAVE_METHODS[index]?.firstSpeed(situation.setting, bare, distance, from, to) ?? Infinity
+  return WAVE_METHODS[index]?.firstSpeed(situation.setting, bare, distance, from, to, most) ?? Infinity
 }
 
-/** First speed at which one method alone exceeds a height, where it counts by its own range; Infinity when never. */
+/**
+ * First speed within a span at which one method alone exceeds a height, where it counts by its own range; Infinity when
+ * never.
+ */
 export function firstSpeedOfMethodAlone(
   situation: Situation,
-  interval: { readonly from: number; readonly to: number },
+  span: SpeedSpan,
   index: number,
   height: number,
   distance: number,
 ): number {
-  const to = Math.min(interval.to, situation.vessel.maxSpeed)
-  if (!(interval.from < to)) return Infinity
-  return firstSpeedByMethod(situation, index, height, distance, interval.from, to)
+  const to = Math.min(span.to, situation.vessel.maxSpeed)
+  if (!(span.from < to)) return Infinity
+  return firstSpeedByMethod(situation, index, height, distance, { ...span, to })
 }
 
 /** First speed from `from` on at which no wave method counts, m/s. */

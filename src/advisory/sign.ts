@@ -23,7 +23,8 @@ const SIGN_DIGITS = 9
  */
 export function signOf(overGround: number, unit: SignUnit, step: number): Sign {
   const steps = Math.floor(overGround / SIGN_UNITS[unit] / step + WHOLE_STEP_SLACK)
-  return { value: Number((steps * step).toFixed(SIGN_DIGITS)), unit }
+  const value = steps * step
+  return { value: Number.isInteger(value) ? value : Number(value.toFixed(SIGN_DIGITS)), unit }
 }
 
 /** The sign of a decision; undefined when a vessel that obeys it would be below steerage. */

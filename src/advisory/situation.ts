@@ -114,6 +114,7 @@ function settingOf(
 /** Bits of the wave methods asked for; none when every method that applies counts. */
 function preferredBits(options: Options): number {
   let bits = 0
+  if (!options.waveMethods) return bits
   WAVE_METHODS.forEach((method, i) => {
     if (options.waveMethods?.includes(method.id)) bits |= 1 << i
   })

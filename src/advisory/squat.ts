@@ -1,9 +1,10 @@
 import { activeAt } from '../hydro/bands.ts'
+import { heldAt } from '../hydro/held.ts'
 import { SQUAT_METHODS } from '../hydro/squat/all.ts'
 import type { Situation } from './situation.ts'
 
 /** Greatest squat of the methods that count at a speed, m; NaN where none does. */
-export function squatAt(situation: Situation, speed: number): number {
+export const squatAt = heldAt((situation: Situation, speed: number): number => {
   const active = activeAt(situation.squatBands, speed)
   let squat = active === 0 ? NaN : 0
   for (let i = 0; i < SQUAT_METHODS.length; i += 1) {
@@ -14,7 +15,7 @@ export function squatAt(situation: Situation, speed: number): number {
     squat = Math.max(squat, own)
   }
   return squat
-}
+})
 
 /** First speed in (from, to] above which the squat exceeds a value, or cannot be evaluated; Infinity when never. */
 export function squatFirstSpeed(situation: Situation, squat: number, from: number, to: number): number {
@@ -23,10 +24,13 @@ export function squatFirstSpeed(situation: Situation, squat: number, from: numbe
     const end = Math.min(band.to, to)
     if (!(start < end)) continue
     if (band.active === 0) return start
+    // from the last, which is in closed form: each need only be solved up to the lowest of those before
     let first = Infinity
-    for (let i = 0; i < SQUAT_METHODS.length; i += 1) {
+    for (let i = SQUAT_METHODS.length - 1; i >= 0; i -= 1) {
       if ((band.active & (1 << i)) === 0) continue
-      first = Math.min(first, SQUAT_METHODS[i]?.firstSpeed(situation.setting, squat, start, end) ?? Infinity)
+      const to = Math.min(end, first)
+      if (!(start < to)) return first
+      first = Math.min(first, SQUAT_METHODS[i]?.firstSpeed(situation.setting, squat, start, to) ?? Infinity)
     }
     if (first < Infinity) return first
   }

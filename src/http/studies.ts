@@ -111,6 +111,7 @@ function addStudy(app: App, service: Service): void {
 
 function addResults(app: App, service: Service): void {
   app.get('/v1/studies/:id/results', {
+    config: { place: 'stream' },
     schema: {
       operationId: 'getStudyResults',
       tags: ['studies'],

@@ -114,19 +114,31 @@ export function bandsOf(
   const intervals: (SpeedInterval | undefined)[] = []
   const edges = [0, Infinity]
   const speeds: number[] = []
-  for (const [i, method] of methods.entries()) {
+  for (let i = 0; i < methods.length; i += 1) {
+    const method = methods[i] as Candidate
     const found = (excluded & (1 << i)) === 0 ? speedInterval(method, setting) : undefined
     intervals.push(found)
     if (found) edges.push(found.from, found.to)
     const step = method.stepSpeed?.(setting)
     if (step !== undefined) speeds.push(step)
   }
-  const steps = speeds.length > 0 ? { steps: speeds } : {}
-  if (edges.length === 2) {
-    const list = [{ from: 0, to: Infinity, active: fallback(methods, setting, excluded) }]
-    return { list, intervals, isOutOfRange: true, ...steps }
+  const isOutOfRange = edges.length === 2
+  const list = isOutOfRange
+    ? [{ from: 0, to: Infinity, active: fallback(methods, setting, excluded) }]
+    : bandsBetween(edges, intervals, preferred)
+  return speeds.length > 0
+    ? { list, intervals, isOutOfRange, steps: speeds }
+    : { list, intervals, isOutOfRange }
+}
+
+/** Puts a few numbers in rising order, where they are: a general sort costs more than all the rest of the bands. */
+function sortFew(numbers: number[]): void {
+  for (let i = 1; i < numbers.length; i += 1) {
+    const number = numbers[i] as number
+    let at = i
+    for (; at > 0 && (numbers[at - 1] as number) > number; at -= 1) numbers[at] = numbers[at - 1] as number
+    numbers[at] = number
   }
-  return { list: bandsBetween(edges, intervals, preferred), intervals, isOutOfRange: false, ...steps }
 }
 
 /** Bands between edges in any order, repeated ones among them. */
@@ -135,7 +147,7 @@ function bandsBetween(
   intervals: readonly (SpeedInterval | undefined)[],
   preferred: number,
 ): Band[] {
-  edges.sort((a, b) => a - b)
+  sortFew(edges)
   const list: Band[] = []
   let from = 0
   for (const to of edges) {

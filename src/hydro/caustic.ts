@@ -103,6 +103,18 @@ export function cuspFroudeNumber(p: number): number {
  * @example cuspWaveNumber(0.5) // 5.99309
  */
 export function cuspWaveNumber(F: number): number {
+  if (F !== heldFroude) {
+    heldWaveNumber = solvedWaveNumber(F)
+    heldFroude = F
+  }
+  return heldWaveNumber
+}
+
+/** The last one: angle, period and length of one wake ask for the same. */
+let heldFroude = NaN
+let heldWaveNumber = NaN
+
+function solvedWaveNumber(F: number): number {
   if (!(F < 1)) return F === 1 ? 0 : NaN
   if (F <= DEEP_FROUDE) return KELVIN_WAVE_NUMBER / (F * F)
   const e = (1 - F) * (1 + F)

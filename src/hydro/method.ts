@@ -44,8 +44,20 @@ export interface WaveMethod extends MethodDescription {
   /**
    * First speed in (from, to] above which the height exceeds `height`: `from` when it does so at once, Infinity when it
    * never does. The law is taken as it stands, whatever its range.
+   *
+   * @param most  a speed above it need not be told: Infinity may stand for it; default none. What is told is the same to
+   *   the last digit whatever `most` is
    */
-  firstSpeed(setting: Setting, height: number, distance: number, from: number, to: number): number
+  firstSpeed(
+    setting: Setting,
+    height: number,
+    distance: number,
+    from: number,
+    to: number,
+    most?: number,
+  ): number
+  /** whether `firstSpeed` is found by iteration, so that a low `most` spares work */
+  readonly isIterated?: boolean
 }
 
 /** A law for the greatest sinkage of bow or stern. */

@@ -1,5 +1,6 @@
 import { GRAVITY } from './constants.ts'
 import { CORRECTION_AT_REST, correctionFactor, flowRatio, supercriticalFlowRatio } from './flow-ratio.ts'
+import { heldAt } from './held.ts'
 import { risingRoot } from './root.ts'
 import type { Setting } from './setting.ts'
 import { smoothstep } from './smoothstep.ts'
@@ -15,14 +16,14 @@ export function isSteady(setting: Setting, speed: number): boolean {
 }
 
 /** w at a speed, NaN where no steady flow exists. */
-function flowRatioAt(setting: Setting, speed: number): number {
+const flowRatioAt = heldAt((setting: Setting, speed: number): number => {
   const froude = speed / meanWaveSpeed(setting)
   if (speed <= setting.criticalSpeed) {
     const alpha = correctionFactor(setting.correctionShare, speed / setting.criticalSpeed)
     return flowRatio(froude, setting.blockage, alpha)
   }
   return speed > setting.supercriticalOnset ? supercriticalFlowRatio(froude, setting.blockage) : NaN
-}
+})
 
 /**
  * Mean return current beside the hull.

@@ -1,6 +1,7 @@
 import { GRAVITY } from './constants.ts'
+import { heldFor } from './held.ts'
 import type { Setting } from './setting.ts'
-import { romischCriticalSpeed } from './squat/romisch-1989.ts'
+import { heldCriticalSpeed } from './squat/romisch-1989.ts'
 
 /** What the ranges of validity are stated in. */
 export type QuantityName =
@@ -28,7 +29,9 @@ export interface Quantity {
 export const DEPTH_CAP_FROUDE = 0.42
 
 const shallowWaveSpeed = (setting: Setting): number => Math.sqrt(GRAVITY * setting.depth)
-const volumeWaveSpeed = (setting: Setting): number => Math.sqrt(GRAVITY * Math.cbrt(setting.volume))
+/** Edge of the cube of the displaced volume, m. */
+const volumeLength = heldFor((setting) => Math.cbrt(setting.volume))
+const volumeWaveSpeed = (setting: Setting): number => Math.sqrt(GRAVITY * volumeLength(setting))
 
 /** d_e = min(h, V²/(0.42² g)), the depth that `weggel-sorensen-1986` is evaluated at, m. */
 function effectiveDepth(setting: Setting, speed: number): number {
@@ -45,10 +48,10 @@ export const QUANTITIES: Readonly<Record<QuantityName, Quantity>> = {
     speedAt: (setting, value) => value * volumeWaveSpeed(setting),
   },
   effective_relative_depth: {
-    at: (setting, speed) => effectiveDepth(setting, speed) / Math.cbrt(setting.volume),
+    at: (setting, speed) => effectiveDepth(setting, speed) / volumeLength(setting),
     speedAt: (setting, value) =>
-      value <= setting.depth / Math.cbrt(setting.volume)
-        ? DEPTH_CAP_FROUDE * Math.sqrt(value * GRAVITY * Math.cbrt(setting.volume))
+      value <= setting.depth / volumeLength(setting)
+        ? DEPTH_CAP_FROUDE * Math.sqrt(value * GRAVITY * volumeLength(setting))
         : Infinity,
   },
   critical_ratio: {
@@ -56,8 +59,8 @@ export const QUANTITIES: Readonly<Record<QuantityName, Quantity>> = {
     speedAt: (setting, value) => value * setting.criticalSpeed,
   },
   romisch_speed_ratio: {
-    at: (setting, speed) => speed / romischCriticalSpeed(setting),
-    speedAt: (setting, value) => value * romischCriticalSpeed(setting),
+    at: (setting, speed) => speed / heldCriticalSpeed(setting),
+    speedAt: (setting, value) => value * heldCriticalSpeed(setting),
   },
   length_m: { at: (setting) => setting.length },
   draught_m: { at: (setting) => setting.draught },

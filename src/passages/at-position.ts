@@ -50,6 +50,7 @@ function fartherBy(
 }
 
 function receptorsFrom(segment: Segment, shift: Shift, nearer: 0 | 1, least: number): readonly Receptor[] {
+  if (segment.receptors.length === 0) return segment.receptors
   return segment.receptors.map((receptor) => ({
     ...receptor,
     distance: Math.max(least, receptor.distance + fartherBy(receptor, segment, shift, nearer)),

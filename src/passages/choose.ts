@@ -102,6 +102,12 @@ export function choose(
   route: Route,
   areTouching: AreTouching,
 ): Choice | undefined {
+  const [only] = candidates
+  // the usual case: alone on the way it is on
+  if (candidates.length === 1 && only && only.foot.line === route.line) {
+    const goesOn = route.challenges === 0 ? route : onto(only)
+    return { candidate: only, isDoubtful: false, route: goesOn }
+  }
   const known = route.line < 0 ? undefined : continued(candidates, route, areTouching)
   if (!known) return first(candidates, route, areTouching)
   const rival = bestOf(

@@ -135,8 +135,9 @@ export class FairwayNetwork {
     if (!fairway || chainage === undefined) return undefined
     const station = stationAt(fairway.segment, chainage)
     const bank = bankDistance(fairway, station, foot.offset)
-    const [aside, beyond] = [Math.abs(foot.offset), Math.abs(foot.beyond)]
-    const distance = Math.hypot(aside, beyond)
+    const aside = Math.abs(foot.offset)
+    const beyond = Math.abs(foot.beyond)
+    const distance = beyond === 0 ? aside : Math.hypot(aside, beyond)
     const inside = insideDistance(bank)
     const isInside = aside <= inside && beyond <= Math.min(inside, END_MARGIN + aside)
     if (!isInside && distance > station.width / 2 + NEAR_MARGIN) return undefined

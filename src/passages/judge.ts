@@ -49,8 +49,7 @@ function verdictOf(all: readonly Assessed[]): PassageVerdict {
 }
 
 /** The loading whose figures are shown: the stricter one; where both are exceeded, one that has a maximum. */
-function shown([first, second]: readonly [Assessed, ...Assessed[]]): Assessed {
-  if (!second) return first
+function shown(first: Assessed, second: Assessed): Assessed {
   const strict = stricter(first, second)
   const other = strict === first ? second : first
   return Number.isNaN(strict.max) && other.exceeds && !Number.isNaN(other.max) ? other : strict
@@ -71,10 +70,14 @@ export class Judge {
    */
   judge({ report, placement, guess }: MatchedReport): Judgement | undefined {
     const conditions = conditionsOf(report, placement, this.#judging)
-    const all = guess.variants.flatMap((vessel) => this.#assess(report, placement, vessel, conditions))
-    const [first, ...rest] = all
+    const all: Assessed[] = []
+    for (const vessel of guess.variants) {
+      const assessed = this.#assess(report, placement, vessel, conditions)
+      if (assessed) all.push(assessed)
+    }
+    const [first, second] = all
     if (!first) return undefined
-    const chosen = shown([first, ...rest])
+    const chosen = second ? shown(first, second) : first
     const { maximum, max } = chosen
     const { situation, vessel, decision } = maximum
     const throughWater = report.speed - currentAlong(conditions, decision.direction)
@@ -83,6 +86,7 @@ export class Judge {
     const isShown = isFull || verdict !== 'within'
     const effects = isShown && throughWater > 0 ? effectsAt(situation, throughWater) : undefined
     const postedLimit = postedOverGround(decision)
+    const figures = figuresOf(maximum, throughWater, effects)
     return {
       guess,
       vessel,
@@ -98,7 +102,10 @@ export class Judge {
       verdict,
       postedLimit,
       postedExcess: report.speed - postedLimit,
-      ...figuresOf(maximum, throughWater, effects),
+      depthFroudeNumber: figures.depthFroudeNumber,
+      criticalRatio: figures.criticalRatio,
+      waveHeights: figures.waveHeights,
+      waveEnergies: figures.waveEnergies,
       cautions: isFull ? cautionsOf(chosen, effects, guess, all.length) : [],
     }
   }
@@ -126,16 +133,16 @@ export class Judge {
     placement: Whereabouts,
     vessel: Vessel,
     conditions: Conditions,
-  ): readonly Assessed[] {
+  ): Assessed | undefined {
     const { position, tolerance } = this.#judging
     const maximum =
       position === 'actual'
         ? this.#maxima.actual(placement, vessel, conditions)
         : this.#maxima.onSailingLine(placement, vessel, conditions)
-    if (!maximum) return []
+    if (!maximum) return undefined
     const max = maxOf(maximum.decision)
     // without a safe speed every speed exceeds
-    return [{ maximum, max, exceeds: Number.isNaN(max) || report.speed - max > tolerance }]
+    return { maximum, max, exceeds: Number.isNaN(max) || report.speed - max > tolerance }
   }
 
   #lineMax({ vessel, decision }: Maximum, placement: Whereabouts, conditions: Conditions): number {
@@ -147,13 +154,10 @@ export class Judge {
 
 /** The water of a report: what its row says, else what the call says. */
 export function conditionsOf(report: Sailed, { direction }: Whereabouts, judging: Judging): Conditions {
-  return {
-    waterLevel: Number.isNaN(report.waterLevel) ? judging.waterLevel : report.waterLevel,
-    current: Number.isNaN(report.current) ? judging.current : report.current,
-    isWaterLevelGiven: true,
-    isCurrentGiven: true,
-    ...(direction && { direction }),
-  }
+  const waterLevel = Number.isNaN(report.waterLevel) ? judging.waterLevel : report.waterLevel
+  const current = Number.isNaN(report.current) ? judging.current : report.current
+  const water = { waterLevel, current, isWaterLevelGiven: true, isCurrentGiven: true }
+  return direction ? { ...water, direction } : water
 }
 
 function figuresOf(

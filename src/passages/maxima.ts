@@ -1,5 +1,5 @@
 import { bindingPostedLimit } from '../advisory/criteria/speed-limits.ts'
-import { decide, type Decision } from '../advisory/decide.ts'
+import { govern, type Governed } from '../advisory/govern.ts'
 import { currentAlong } from '../advisory/direction.ts'
 import { situationOf, type Situation } from '../advisory/situation.ts'
 import type { Conditions, Options } from '../domain/conditions.ts'
@@ -14,7 +14,7 @@ import { stationAt } from './station-at.ts'
 /** The recommended maximum at a place, and the vessel as it is there. */
 export interface Maximum {
   readonly vessel: Vessel
-  readonly decision: Decision
+  readonly decision: Governed
   /** at the actual position */
   readonly situation: Situation
   /** to the left and to the right waterline at the level, from the position as reported, m */
@@ -40,17 +40,23 @@ const MOST_KEPT = 1000
 /** Recommended maxima of vessels along fairways, by the same decision as every other call. */
 export class Maxima {
   /** on the sailing line of segments that are the same all along; null where the vessel does not fit */
-  readonly #onLine = new WeakMap<Vessel, Map<string, Decision | null>>()
+  readonly #onLine = new WeakMap<Vessel, Map<string, Governed | null>>()
 
   /** At the position as reported; where the hull cannot float there, on the sailing line. Undefined when it fits neither. */
   actual(placement: Whereabouts, vessel: Vessel, conditions: Conditions): Maximum | undefined {
-    const { water, ...seen } = seenBy(placement, vessel, conditions)
-    const decision = fitting(() => decide(water.segment, vessel, conditions, optionsOf(placement)).main)
-    if (decision) return { vessel, decision, situation: decision.situation, ...seen }
+    const seen = seenBy(placement, vessel, conditions)
+    const { water, distances, leftBank } = seen
+    const decision = fitting(() =>
+      govern(water.segment, water.station, vessel, conditions, optionsOf(placement)),
+    )
+    if (decision) {
+      const { situation } = decision
+      return { vessel, decision, situation, distances, leftBank, cautions: seen.cautions }
+    }
     const onLine = this.#decisionOnLine(placement, vessel, conditions)
     if (!onLine) return undefined
     const cautions = [...seen.cautions, 'judged-on-sailing-line' as const]
-    return { vessel, decision: onLine, situation: onLine.situation, ...seen, cautions }
+    return { vessel, decision: onLine, situation: onLine.situation, distances, leftBank, cautions }
   }
 
   /** On the sailing line beside the position, which the situation is still that of. */
@@ -64,14 +70,14 @@ export class Maxima {
     return { vessel, decision, situation: situation ?? decision.situation, ...seen }
   }
 
-  #decisionOnLine(placement: Whereabouts, vessel: Vessel, conditions: Conditions): Decision | undefined {
+  #decisionOnLine(placement: Whereabouts, vessel: Vessel, conditions: Conditions): Governed | undefined {
     const { segment, station, fairway } = waterOf(placement)
     const compute = () =>
-      fitting(() => decide(waterAt(segment, station), vessel, conditions, fairway.options).main)
+      fitting(() => govern(waterAt(segment, station), station, vessel, conditions, fairway.options))
     if (segment.stations.length > 1) return compute()
     let known = this.#onLine.get(vessel)
     if (!known || known.size >= MOST_KEPT) {
-      this.#onLine.set(vessel, (known = new Map<string, Decision | null>()))
+      this.#onLine.set(vessel, (known = new Map<string, Governed | null>()))
     }
     const { waterLevel, current, direction = '' } = conditions
     const key = `${fairway.id} ${waterLevel} ${current} ${direction}`
@@ -84,26 +90,31 @@ export class Maxima {
 }
 
 /** Over ground, m/s; NaN without a safe speed. */
-export const maxOf = ({ outcome, overGround }: Decision): number =>
+export const maxOf = ({ outcome, overGround }: Governed): number =>
   outcome === 'no-safe-speed' ? NaN : overGround
 
 /** The posted limit that binds, over ground, m/s; NaN where none is posted for the vessel. */
-export function postedOverGround({ situation, direction }: Decision): number {
+export function postedOverGround({ situation, direction }: Governed): number {
   const posted = bindingPostedLimit(situation, direction)
   if (!posted) return NaN
   const current = currentAlong(situation.conditions, direction)
   return posted.reference === 'through-water' ? posted.speed + current : posted.speed
 }
 
-const optionsOf = (placement: Whereabouts): Options => waterOf(placement).fairway.options
+const optionsOf = ({ fairway }: Whereabouts): Options => fairwayOf(fairway).options
+
+function fairwayOf(fairway: Fairway | undefined): Fairway {
+  if (!fairway) throw new RangeError('A report without a fairway is not judged')
+  return fairway
+}
 
 /** What a matched report lies on. */
-function waterOf({ fairway, chainage }: Whereabouts): {
+function waterOf({ fairway: known, chainage }: Whereabouts): {
   fairway: Fairway
   segment: Segment
   station: Station
 } {
-  if (!fairway) throw new RangeError('A report without a fairway is not judged')
+  const fairway = fairwayOf(known)
   return { fairway, segment: fairway.segment, station: stationAt(fairway.segment, chainage) }
 }
 

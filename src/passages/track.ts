@@ -16,10 +16,17 @@ const MAX_STEP = 2000
 /** Change along a fairway that tells the direction, m: own choice, three times the error of a position. */
 const DIRECTION_STEP = 30
 
-const distanceBetween = (a: Fix, b: Fix): number => edgeLength([a.lon, a.lat], [b.lon, b.lat])
+/** Above the length of a degree anywhere on WGS 84, m: 111694 of latitude at the poles. */
+const MOST_METRES_PER_DEGREE = 111_700
+
+/** Whether two positions are within a distance, m. Most are by far, which is told without measuring. */
+function areWithin(a: Fix, b: Fix, distance: number): boolean {
+  const most = MOST_METRES_PER_DEGREE * (Math.abs(b.lon - a.lon) + Math.abs(b.lat - a.lat))
+  return most <= distance || edgeLength([a.lon, a.lat], [b.lon, b.lat]) <= distance
+}
 
 function isReachable(a: Fix, b: Fix): boolean {
-  return distanceBetween(a, b) <= POSITION_SLACK + MAX_SPEED * Math.abs(b.time - a.time)
+  return areWithin(a, b, POSITION_SLACK + MAX_SPEED * Math.abs(b.time - a.time))
 }
 
 /** What is remembered of one vessel. */
@@ -60,20 +67,24 @@ export class Track {
   }
 
   #follows(fix: Fix): boolean {
-    const [last, suspect] = [this.#last, this.#suspect]
+    const last = this.#last
     const isGap = !last || fix.time - last.time > this.#maxGap
-    const isNear = (other: Fix) => fix.time - other.time <= this.#maxGap && isReachable(other, fix)
-    if (!isGap && !isReachable(last, fix) && !(suspect && isNear(suspect))) {
+    if (!isGap && !isReachable(last, fix) && !this.#agreesWithSuspect(fix)) {
       this.#suspect = fix
       return false
     }
-    if (isGap || distanceBetween(last, fix) > MAX_STEP) {
+    if (isGap || !areWithin(last, fix, MAX_STEP)) {
       this.route = NO_ROUTE
       this.#line = -1
     }
     this.#last = fix
     this.#suspect = undefined
     return true
+  }
+
+  #agreesWithSuspect(fix: Fix): boolean {
+    const suspect = this.#suspect
+    return suspect !== undefined && fix.time - suspect.time <= this.#maxGap && isReachable(suspect, fix)
   }
 
   /** The direction last told on a line, as long as the track has no gap. */

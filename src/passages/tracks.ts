@@ -21,6 +21,8 @@ function at(
   return { status, reason, fairway, along: foot.along, chainage, offset: foot.offset, direction }
 }
 
+const isInside = (candidate: Candidate): boolean => candidate.isInside
+
 /** What is wrong with a position, kebab-case; undefined when it can be looked up. */
 function positionFault({ lon, lat }: PositionReport): string | undefined {
   if (!Number.isFinite(lon) || !Number.isFinite(lat)) return 'position-missing'
@@ -82,10 +84,7 @@ export class Tracks {
   #placeOn(track: Track, report: PositionReport, isNewest: boolean): Placement {
     const stationary = stationaryReason(report)
     const near = this.#fairways.near(report)
-    const inside = withoutEnded(
-      near.filter(({ isInside }) => isInside),
-      this.#areTouching,
-    )
+    const inside = withoutEnded(near.every(isInside) ? near : near.filter(isInside), this.#areTouching)
     const choice = choose(inside, track.route, this.#areTouching)
     if (!choice) return placeOutside(near, report)
     const { candidate, isDoubtful, route } = choice

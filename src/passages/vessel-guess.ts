@@ -124,19 +124,22 @@ export function vesselGuess(
   return { classId, basis, variants: variantsOf(vesselClass, figures, loading) }
 }
 
-const KEYS = [
-  'shipType',
-  'length',
-  'beam',
-  'draught',
-  'vesselClass',
-  'loading',
-  'convoyLength',
-  'convoyBeam',
-  'convoyDraught',
-] as const satisfies readonly (keyof Particulars)[]
+/** Whether a report says what is known already: what it leaves out of type and size counts as said before. */
+function saysTheSame(known: Particulars, now: Particulars): boolean {
+  return (
+    isSameOrUnsaid(known.shipType, now.shipType) &&
+    isSameOrUnsaid(known.length, now.length) &&
+    isSameOrUnsaid(known.beam, now.beam) &&
+    isSameOrUnsaid(known.draught, now.draught) &&
+    known.vesselClass === now.vesselClass &&
+    known.loading === now.loading &&
+    Object.is(known.convoyLength, now.convoyLength) &&
+    Object.is(known.convoyBeam, now.convoyBeam) &&
+    Object.is(known.convoyDraught, now.convoyDraught)
+  )
+}
 
-const isSame = (a: Particulars, b: Particulars): boolean => KEYS.every((key) => Object.is(a[key], b[key]))
+const isSameOrUnsaid = (known: number, now: number): boolean => known === now || Number.isNaN(now)
 
 const later = (before: number, now: number): number => (Number.isNaN(now) ? before : now)
 
@@ -169,8 +172,8 @@ export class Fleet {
   /** As `vesselGuess`, with what earlier reports of the vessel said of its type and size. */
   guess(report: PositionReport): VesselGuess | undefined {
     const before = this.#known.get(report.vesselKey)
+    if (before && saysTheSame(before.particulars, report)) return before.guess
     const particulars = carriedOver(before?.particulars, report)
-    if (before && isSame(before.particulars, particulars)) return before.guess
     const guess = vesselGuess(particulars, this.#convoy, this.#findClass)
     this.#known.set(report.vesselKey, { particulars, guess })
     return guess

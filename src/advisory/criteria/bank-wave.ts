@@ -4,8 +4,8 @@ import { secondaryWaveForStone, sternWaveForStone } from '../../hydro/stone-stab
 import { cuspPeriodAt, speedAtCuspPeriod } from '../../hydro/wedge.ts'
 import { WAVE_METHODS } from '../../hydro/waves/all.ts'
 import { bankSternWave, sternWaveFirstSpeed, unsteadyFrom } from '../primary.ts'
-import { firstExcess } from '../scan.ts'
-import { secondaryFirstSpeed, secondaryUnknownFrom, secondaryWave } from '../secondary-wave.ts'
+import { firstExcess, type SpeedSpan } from '../scan.ts'
+import { secondaryFirstSpeed, secondaryUnknownFrom, secondaryWave, waveAt } from '../secondary-wave.ts'
 import { NATURAL_SLOPE, slopeOf } from '../section-of.ts'
 import type { Situation } from '../situation.ts'
 import { atMost, type Criterion, type Evaluation, type Origin } from './criterion.ts'
@@ -115,21 +115,27 @@ function evaluateBank(situation: Situation, index: 0 | 1, limits: BankLimits, sp
     : atMost(wave.secondary, limit, WAVE_METHODS[wave.method]?.id)
 }
 
+/** Share by which a speed or height is below another whatever rounding does. */
+const SURELY_BELOW = 1e-9
+
+/**
+ * Speed below which the secondary wave does not exceed what a stone withstands: what it withstands falls with speed, so
+ * that up to a speed it is never less than there. 0 where that cannot be told.
+ */
+function clearOfStone(situation: Situation, limits: BankLimits, distance: number, span: SpeedSpan): number {
+  const end = Math.min(span.to, span.most)
+  const least = secondaryLimitAt(situation, limits, end) * (1 - SURELY_BELOW)
+  if (!(least > 0) || situation.options.combine === 'median') return 0
+  return secondaryFirstSpeed(situation, least, distance, { ...span, to: end }) * (1 - SURELY_BELOW)
+}
+
 /** First speed at which the secondary wave that reaches a bank exceeds what it withstands. */
-function secondaryFirst(
-  situation: Situation,
-  index: 0 | 1,
-  limits: BankLimits,
-  from: number,
-  to: number,
-): number {
+function secondaryFirst(situation: Situation, index: 0 | 1, limits: BankLimits, span: SpeedSpan): number {
   const distance = situation.section.distances[index]
   if (limits.stone) {
-    return firstExcess(situation.waveBands, from, to, (speed) => {
-      const height = Math.min(
-        breakingAt(situation, index, speed),
-        secondaryWave(situation, speed, distance).height,
-      )
+    const clearTo = clearOfStone(situation, limits, distance, span)
+    return firstExcess(situation.waveBands, { ...span, clearTo }, (speed) => {
+      const height = Math.min(breakingAt(situation, index, speed), waveAt(situation, speed, distance).height)
       const excess = height - secondaryLimitAt(situation, limits, speed)
       // no finite period: unknown, so exceeded
       return Number.isNaN(excess) ? 1 : excess
@@ -137,8 +143,9 @@ function secondaryFirst(
   }
   const limit = limits.secondary ?? Infinity
   const unbroken = unbrokenFrom(situation, index, limit)
-  const exceeded = secondaryFirstSpeed(situation, limit, distance, Math.max(from, unbroken), to)
-  return Math.min(exceeded, secondaryUnknownFrom(situation, from))
+  const from = Math.max(span.from, unbroken)
+  const exceeded = secondaryFirstSpeed(situation, limit, distance, { ...span, from })
+  return Math.min(exceeded, secondaryUnknownFrom(situation, span.from))
 }
 
 /** First speed at which the stern wave at a bank exceeds what it withstands, or cannot be evaluated. */
@@ -160,11 +167,10 @@ export function bankWaveCriterion(situation: Situation, index: 0 | 1): Criterion
     sense: 'at-most',
     unit: 'm',
     origin: limits.origin,
-    firstSpeed: (from, to) => {
-      const first = Math.min(
-        sternFirst(situation, index, limits, from),
-        secondaryFirst(situation, index, limits, from, to),
-      )
+    firstSpeed: (from, to, most = Infinity) => {
+      const stern = sternFirst(situation, index, limits, from)
+      const span = { from, to, most: Math.min(most, stern) }
+      const first = Math.min(stern, secondaryFirst(situation, index, limits, span))
       return first < to ? first : Infinity
     },
     evaluate: (speed) => evaluateBank(situation, index, limits, speed),

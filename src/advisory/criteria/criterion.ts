@@ -35,8 +35,10 @@ export interface Criterion {
   /**
    * First speed in [from, to) above which the criterion is reached, or cannot be evaluated: `from` when it is at once,
    * Infinity when it never is up to `to`.
+   *
+   * @param most  a speed above it need not be told: Infinity may stand for it; default none
    */
-  firstSpeed(from: number, to: number): number
+  firstSpeed(from: number, to: number, most?: number): number
   evaluate(speed: number): Evaluation
 }
 

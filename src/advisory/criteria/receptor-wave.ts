@@ -51,11 +51,10 @@ export function receptorWaveCriterion(situation: Situation, receptor: Receptor, 
     sense: 'at-most',
     unit: 'm',
     origin,
-    firstSpeed: (from, to) => {
-      const first = Math.min(
-        sternWaveFirstSpeed(situation, bank, limit, from),
-        secondaryFirstSpeed(situation, limit, receptor.distance, from, to),
-      )
+    firstSpeed: (from, to, most = Infinity) => {
+      const stern = sternWaveFirstSpeed(situation, bank, limit, from)
+      const span = { from, to, most: Math.min(most, stern) }
+      const first = Math.min(stern, secondaryFirstSpeed(situation, limit, receptor.distance, span))
       return first < to ? first : Infinity
     },
     evaluate: (speed) => evaluateReceptor(situation, receptor, bank, limit, speed),

@@ -1,16 +1,20 @@
+import { heldFor } from '../../hydro/held.ts'
 import { allowedWakeWashHeight } from '../../hydro/wake-wash.ts'
 import { WAVE_METHODS } from '../../hydro/waves/all.ts'
 import { cuspPeriodAt, speedAtCuspPeriod } from '../../hydro/wedge.ts'
 import { firstExcess } from '../scan.ts'
-import { secondaryWave } from '../secondary-wave.ts'
+import { secondaryWave, waveAt } from '../secondary-wave.ts'
 import type { Situation } from '../situation.ts'
 import { atMost, type Criterion, type Evaluation } from './criterion.ts'
 import { POLICY } from './policy.ts'
 
+/** Speed from which the waves are as long as the rule is meant for, m/s: one for both banks. */
+const longWavesFrom = heldFor(({ depth }) => speedAtCuspPeriod(depth, POLICY.longWavePeriod))
+
 /** Excess of the secondary wave over the rule at a speed; 1 where either is unknown, which counts as reached. */
 function excessAt(situation: Situation, distance: number, speed: number): number {
   const period = cuspPeriodAt(speed, situation.section.depth)
-  const excess = secondaryWave(situation, speed, distance).height - allowedWakeWashHeight(period)
+  const excess = waveAt(situation, speed, distance).height - allowedWakeWashHeight(period)
   return Number.isNaN(excess) ? 1 : excess
 }
 
@@ -37,7 +41,7 @@ function evaluateWash(situation: Situation, distance: number, longFrom: number, 
 export function wakeWashCriterion(situation: Situation, bank: 0 | 1): Criterion | undefined {
   const mode = situation.options.limits.wakeWash ?? 'when-long'
   if (mode === 'never') return undefined
-  const longFrom = mode === 'always' ? 0 : speedAtCuspPeriod(situation.section.depth, POLICY.longWavePeriod)
+  const longFrom = mode === 'always' ? 0 : longWavesFrom(situation.setting)
   if (longFrom >= situation.vessel.maxSpeed) return undefined
   const distance = situation.section.distances[bank]
   return {
@@ -46,8 +50,8 @@ export function wakeWashCriterion(situation: Situation, bank: 0 | 1): Criterion 
     sense: 'at-most',
     unit: 'm',
     origin: situation.options.limits.wakeWash === undefined ? 'policy' : 'request',
-    firstSpeed: (from, to) =>
-      firstExcess(situation.waveBands, Math.max(from, longFrom), to, (speed) =>
+    firstSpeed: (from, to, most = Infinity) =>
+      firstExcess(situation.waveBands, { from: Math.max(from, longFrom), to, most }, (speed) =>
         excessAt(situation, distance, speed),
       ),
     evaluate: (speed) => evaluateWash(situation, distance, longFrom, speed),

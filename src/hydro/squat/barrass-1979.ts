@@ -1,5 +1,5 @@
+import { heldFor } from '../held.ts'
 import { risingFirstSpeed, type SquatMethod } from '../method.ts'
-import type { Setting } from '../setting.ts'
 import { KNOT } from './knot.ts'
 
 const SPEED_EXPONENT = 2.08 // dimensionless, Barrass (1979), from memory
@@ -7,10 +7,10 @@ const BLOCKAGE_EXPONENT = 2 / 3 // dimensionless, Barrass (1979), from memory
 const DIVISOR = 30 // kn^2.08 / m, Barrass (1979), from memory
 
 /** Squat at one knot, m. */
-function squatAtOneKnot(setting: Setting): number {
+const squatAtOneKnot = heldFor((setting) => {
   const velocityReturn = setting.blockage / (1 - setting.blockage)
   return (setting.blockCoefficient * velocityReturn ** BLOCKAGE_EXPONENT) / DIVISOR
-}
+})
 
 /**
  * Barrass (1979): greatest squat from block coefficient, blockage and speed in knots.

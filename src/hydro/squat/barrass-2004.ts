@@ -1,5 +1,5 @@
+import { heldFor } from '../held.ts'
 import { risingFirstSpeed, type SquatMethod } from '../method.ts'
-import type { Setting } from '../setting.ts'
 import { KNOT } from './knot.ts'
 
 const CONFINEMENT_FACTOR = 5.74 // dimensionless, Barrass (2004), from memory
@@ -9,10 +9,10 @@ const CONFINED_FACTOR = 2 // dimensionless, greatest K, reached at a blockage of
 const DIVISOR = 100 // kn² / m, Barrass (2004), from memory
 
 /** Squat at one knot, m. */
-function squatAtOneKnot(setting: Setting): number {
+const squatAtOneKnot = heldFor((setting) => {
   const K = CONFINEMENT_FACTOR * setting.blockage ** CONFINEMENT_EXPONENT
   return (Math.min(Math.max(K, OPEN_WATER_FACTOR), CONFINED_FACTOR) * setting.blockCoefficient) / DIVISOR
-}
+})
 
 /**
  * Barrass (2004): greatest squat, with one factor that leads from open to confined water.

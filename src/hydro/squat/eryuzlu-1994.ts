@@ -1,6 +1,6 @@
 import { GRAVITY } from '../constants.ts'
+import { heldFor } from '../held.ts'
 import { risingFirstSpeed, type SquatMethod } from '../method.ts'
-import type { Setting } from '../setting.ts'
 
 // Eryuzlu, Cao & D'Agnolo (1994), from memory
 const COEFFICIENT = 0.298 // dimensionless
@@ -10,13 +10,13 @@ const WIDTH_FACTOR = 3.1 // dimensionless, of K_b
 const WIDE_CHANNEL = 9.61 // dimensionless, W/B from which K_b is 1
 
 /** Squat at V = √(g T), m. */
-function squatAtUnitSpeed(setting: Setting): number {
+const squatAtUnitSpeed = heldFor((setting) => {
   const h = setting.depth
   const T = setting.draught
   const widthRatio = setting.effectiveWidth / setting.beam
   const K_b = widthRatio < WIDE_CHANNEL ? WIDTH_FACTOR / Math.sqrt(widthRatio) : 1
   return COEFFICIENT * ((h * h) / T) * (h / T) ** DEPTH_EXPONENT * K_b
-}
+})
 
 /**
  * Eryuzlu, Cao & D'Agnolo (1994): bow squat of full ships in open and dredged channels.

@@ -1,14 +1,14 @@
+import { heldFor } from '../held.ts'
 import { risingFirstSpeed, type SquatMethod } from '../method.ts'
-import type { Setting } from '../setting.ts'
 import { KNOT } from './knot.ts'
 
 const DIVISOR = 15 // kn² / m, Norrbin (1986), from memory
 
 /** Squat at one knot, m. */
-function squatAtOneKnot(setting: Setting): number {
+const squatAtOneKnot = heldFor((setting) => {
   const beamRatio = setting.beam / setting.length
   return ((setting.blockCoefficient / DIVISOR) * beamRatio * setting.draught) / setting.depth
-}
+})
 
 /**
  * Norrbin (1986): bow squat in open water at low depth Froude number.

@@ -1,4 +1,5 @@
 import { GRAVITY } from '../constants.ts'
+import { heldFor } from '../held.ts'
 import { risingFirstSpeed, type SquatMethod } from '../method.ts'
 import type { Setting } from '../setting.ts'
 
@@ -10,6 +11,9 @@ const SPEED_CENTRE = 0.5 // dimensionless, C_V
 const SPEED_OFFSET = 0.0625 // dimensionless, C_V
 const BOW_FACTOR = 10 // dimensionless, C_F
 const DRAUGHT_FACTOR = 0.155 // dimensionless, K_dT
+
+/** Share by which a squat is below a bound whatever rounding does. */
+const SURELY_BELOW = 1e-9 // dimensionless
 
 /** Steps after which bisection alone would have reached the last bit. */
 const MOST_STEPS = 60
@@ -40,12 +44,15 @@ export function romischCriticalSpeed(
   return OPEN_COEFFICIENT * shape ** OPEN_EXPONENT * Math.sqrt(GRAVITY * setting.depth)
 }
 
+/** The same, for as long as one setting is asked about. */
+export const heldCriticalSpeed = heldFor(romischCriticalSpeed)
+
 /** Greater of bow and stern squat at V = V_cr, m: there C_V is 1. */
-function squatAtCriticalSpeed(setting: Setting): number {
+const squatAtCriticalSpeed = heldFor((setting) => {
   const bow = (BOW_FACTOR * setting.blockCoefficient * (setting.beam / setting.length)) ** 2
   const K_dT = DRAUGHT_FACTOR * Math.sqrt(setting.depth / setting.draught)
   return Math.max(bow, 1) * K_dT * setting.draught
-}
+})
 
 /** C_V at r = V/V_cr; it rises throughout. */
 function speedCoefficient(r: number): number {
@@ -106,10 +113,13 @@ export const romisch1989: SquatMethod = {
   isFromMemory: true,
   version: '1',
   squat(setting, speed) {
-    return squatAtCriticalSpeed(setting) * speedCoefficient(speed / romischCriticalSpeed(setting))
+    return squatAtCriticalSpeed(setting) * speedCoefficient(speed / heldCriticalSpeed(setting))
   },
   firstSpeed(setting, squat, from, to) {
-    const r = speedRatio(squat / squatAtCriticalSpeed(setting))
-    return risingFirstSpeed(r * romischCriticalSpeed(setting), from, to)
+    const c = squat / squatAtCriticalSpeed(setting)
+    const criticalSpeed = heldCriticalSpeed(setting)
+    // the way to the root is spared where the end is clearly below it
+    if (speedCoefficient(to / criticalSpeed) < c * (1 - SURELY_BELOW)) return Infinity
+    return risingFirstSpeed(speedRatio(c) * criticalSpeed, from, to)
   },
 }

@@ -1,6 +1,6 @@
 import { GRAVITY } from '../constants.ts'
+import { heldFor } from '../held.ts'
 import { risingFirstSpeed, type SquatMethod } from '../method.ts'
-import type { Setting } from '../setting.ts'
 
 // Yoshimura (1986), from memory
 const BASE = 0.7 // dimensionless
@@ -8,11 +8,11 @@ const DRAUGHT_SLOPE = 1.5 // dimensionless
 const CUBIC = 15 // dimensionless
 
 /** Squat over V_e²/g, dimensionless. */
-function squatNumber(setting: Setting): number {
+const squatNumber = heldFor((setting) => {
   const T_h = setting.draught / setting.depth
   const fullness = (setting.blockCoefficient * setting.beam) / setting.length
   return (BASE + DRAUGHT_SLOPE * T_h) * fullness + CUBIC * T_h * fullness ** 3
-}
+})
 
 /**
  * Yoshimura (1986), with the speed of Ohtsu et al. (2006) for confined water: bow squat.

@@ -1,4 +1,5 @@
 import { GRAVITY } from '../constants.ts'
+import { heldFor } from '../held.ts'
 import { risingFirstSpeed, type WaveMethod } from '../method.ts'
 import type { Setting } from '../setting.ts'
 import {
@@ -23,11 +24,13 @@ function bowFactor(lengthToEntrance: number): number {
   return 1 + BOW_AMPLITUDE * Math.tanh(BOW_SLOPE * (Math.max(2, lengthToEntrance) - 2)) ** 3
 }
 
+const bowFactorOf = heldFor((setting) => bowFactor(setting.length / setting.entranceLength))
+
 /** F* over V: exp(2.35 (1 - C_B) T/h)/√(g L), s/m. */
-function froudePerSpeed(setting: Setting): number {
+const froudePerSpeed = heldFor((setting) => {
   const a = DEPTH_EFFECT * (1 - setting.blockCoefficient)
   return Math.exp((a * setting.draught) / setting.depth) / Math.sqrt(GRAVITY * setting.length)
-}
+})
 
 /**
  * Secondary waves by Kriebel & Seelig.
@@ -45,7 +48,7 @@ function froudePerSpeed(setting: Setting): number {
  */
 export function kriebelSeeligWaveHeight(setting: Setting, speed: number, distance: number): number {
   const excess = Math.max(0, froudePerSpeed(setting) * speed - THRESHOLD)
-  const b = bowFactor(setting.length / setting.entranceLength)
+  const b = bowFactorOf(setting)
   return (b * speed * speed * excess * excess) / (GRAVITY * Math.cbrt(distance / setting.length))
 }
 
@@ -75,7 +78,7 @@ export const kriebelSeelig2005: WaveMethod = {
   firstSpeed(setting, height, distance, from, to) {
     // V (k V - 0.1) = √(g H (y/L)^(1/3)/b)
     const k = froudePerSpeed(setting)
-    const b = bowFactor(setting.length / setting.entranceLength)
+    const b = bowFactorOf(setting)
     const root = Math.sqrt((GRAVITY * height * Math.cbrt(distance / setting.length)) / b)
     return risingFirstSpeed((THRESHOLD + Math.sqrt(THRESHOLD * THRESHOLD + 4 * k * root)) / (2 * k), from, to)
   },
