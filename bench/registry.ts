@@ -68,7 +68,7 @@ export async function registryRows(): Promise<{ what: string; value: string; bar
     const answers = await answersOf(registry.segments(), asked, registry, watch)
     const layer = cpuSeconds() - cpuBefore
     const fewBefore = cpuSeconds()
-    const few = await answersOf(registry.segments().slice(0, SEGMENTS / 10), asked, registry)
+    const few = await answersOf(registry.segments().slice(0, SEGMENTS / 10), asked, registry, watch)
     const fewer = cpuSeconds() - fewBefore
 
     const beforeLooks = performance.now()

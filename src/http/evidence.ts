@@ -15,6 +15,7 @@ import { problemResponses } from './problems.ts'
 import { basisOf, type PlanBasis } from './record.ts'
 import type { Service } from './service.ts'
 import { cellsOf } from './study-results.ts'
+import { turn } from './turns.ts'
 
 /** Where a cell of a study is, as text. */
 const keyOf = (place: Pick<Cell, 'segment' | 'vessel' | 'waterLevel' | 'current' | 'direction'>): string =>
@@ -102,7 +103,7 @@ async function inTurns<Result>(steps: Generator<undefined, Result>): Promise<Res
   for (;;) {
     const step = steps.next()
     if (step.done === true) return step.value
-    await new Promise(setImmediate)
+    await turn()
   }
 }
 

@@ -7,6 +7,7 @@ import { studyNotFound } from './job-reply.ts'
 import { toFiniteJson } from './json.ts'
 import type { StudyInputs } from './study-of.ts'
 import { studyColumns, toStudyRow } from './study-rows.ts'
+import { turn } from './turns.ts'
 
 /** Studies whose inputs are held; those of a large one take some tens of megabytes. */
 const HELD = 4
@@ -65,7 +66,7 @@ export async function* resultLines(
         .slice(from, from + ROWS_AT_ONCE)
         .map((cell) => lineOf(columns, toStudyRow(study, cell), format))
         .join('')
-      await new Promise(setImmediate)
+      await turn()
     }
   }
 }
