@@ -12,6 +12,7 @@ interface Reason {
 const STEPS = 'a count of steps: one more than needed changes no digit'
 const START = 'a start for an iteration that converges to the last digits from anywhere near'
 const CHANGEOVER = 'where two forms change over that agree to the last digits on both sides'
+const MARGIN = 'spares work well below a bound: a margin a per cent wider or narrower changes no answer'
 const PACE = 'decides how fast the iteration closes its bracket, not where'
 
 export const REASONS: readonly Reason[] = [
@@ -52,6 +53,7 @@ export const REASONS: readonly Reason[] = [
   { file: 'root.ts', text: 'const margin = Math.min(0.5', literal: '0.5', reason: PACE },
   { file: 'root.ts', text: 'if (!(phi * phi < xi', reason: PACE },
   { file: 'squat/romisch-1989.ts', text: 'MOST_STEPS = 60', reason: STEPS },
+  { file: 'squat/romisch-1989.ts', text: 'SURELY_BELOW = 1e-9', reason: MARGIN },
   { file: 'squat/romisch-1989.ts', text: 'let high = c < 1', reason: START },
   { file: 'squat/romisch-1989.ts', text: 'const slope = SPEED_FACTOR', reason: PACE },
   {
@@ -60,6 +62,7 @@ export const REASONS: readonly Reason[] = [
     literal: '1',
     reason: 'just above 1 the root of a negative number is NaN as well',
   },
+  { file: 'waves/weggel-sorensen-1986.ts', text: 'SURELY_BELOW = 1e-9', reason: MARGIN },
   {
     file: 'waves/weggel-sorensen-1986.ts',
     text: 'Math.min(0.1 * DEPTH_CAP_FROUDE',

@@ -37,6 +37,28 @@ const FALLING_BITS = WAVE_METHODS.reduce(
   0,
 )
 
+/** Whether no method counts somewhere between two speeds: beyond it what was unknown may hold. */
+function hasHole({ list }: Bands, from: number, to: number): boolean {
+  return list.some((band) => band.active === 0 && band.to > from && band.from < to)
+}
+
+const OF_WAVES: readonly string[] = ['bank-wave-height', 'receptor-wave-height', 'wake-wash']
+
+/** Whether what governs may hold again between two speeds: a criterion whose figure only rises never does. */
+function mayHoldAgain({ situation, governing }: Decision, from: number, to: number): boolean {
+  const { waveBands, squatBands, setting, options } = situation
+  const { id } = governing.criterion
+  if (id === 'under-keel-clearance') {
+    return hasHole(squatBands, from, to) || canFall(squatBands, 0, from, to, false)
+  }
+  if (!OF_WAVES.includes(id)) return true
+  const hasStep = waveBands.steps?.some((step) => step >= from && step <= to) ?? false
+  // above the upper limit the stern wave falls
+  const isBeyondLimits = setting.isConfined && to > setting.supercriticalOnset
+  if (hasStep || isBeyondLimits || hasHole(waveBands, from, to)) return true
+  return canFall(waveBands, FALLING_BITS, from, to, options.combine === 'median')
+}
+
 /** A second, faster window beyond a wave hump or the edge of a method's range; undefined when there is none. */
 export function fasterWindow(decision: Decision): FasterWindow | undefined {
   const { situation, bounds, speed } = decision
@@ -46,8 +68,11 @@ export function fasterWindow(decision: Decision): FasterWindow | undefined {
   const mayFall =
     canFall(situation.waveBands, FALLING_BITS, speed, ceiling, situation.options.combine === 'median') ||
     canFall(situation.squatBands, 0, speed, ceiling, false)
-  if (!(speed < ceiling) || !mayFall) return undefined
-  const holdsAt = (v: number): boolean => bounds.every(({ criterion }) => criterion.evaluate(v).isMet)
+  if (!(speed < ceiling) || !mayFall || !mayHoldAgain(decision, speed, ceiling)) return undefined
+  const { criterion: limiting } = decision.governing
+  // what governs is asked first: nearly everywhere it is what does not hold
+  const holdsAt = (v: number): boolean =>
+    limiting.evaluate(v).isMet && bounds.every(({ criterion }) => criterion.evaluate(v).isMet)
   let fails = speed * (1 + 1e-6)
   for (let i = 1; i <= SAMPLES; i += 1) {
     const v = speed + ((ceiling - speed) * i) / SAMPLES

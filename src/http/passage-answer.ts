@@ -1,5 +1,6 @@
 import type { Finding, PassageCheck, PlacedRow } from '../passages/check.ts'
 import type { PassageEvent } from '../passages/events.ts'
+import type { MatchedReport } from '../passages/judge.ts'
 import type { Judgement } from '../passages/judgement.ts'
 import type { LogRow } from '../passages/position-report.ts'
 import type { JudgeSession } from '../threads/judge-threads.ts'
@@ -101,7 +102,8 @@ async function judged(
   session: JudgeSession,
 ): Promise<readonly (readonly [PlacedRow, Judgement | undefined])[]> {
   const placed = rows.map((row) => check.place(row))
-  const matched = placed.flatMap((row) => row.matched ?? [])
+  const matched: MatchedReport[] = []
+  for (const row of placed) if (row.matched) matched.push(row.matched)
   const judgements = matched.length > 0 ? await session.judge(matched) : []
   let next = 0
   return placed.map((row) => [row, row.matched ? judgements[next++] : undefined])
@@ -129,7 +131,10 @@ export async function* passageAnswer(
 ): AsyncGenerator<string> {
   const write = writersOf(settings)
   const held = settings.detail === 'reports' ? undefined : new HeldText()
-  const closedEvents = (): string => check.takeEvents().map(write.event).join('')
+  const closedEvents = (): string => {
+    const events = check.takeEvents()
+    return events.length === 0 ? '' : events.map(write.event).join('')
+  }
   let text = write.head
   try {
     for await (const rows of inOrder(

@@ -187,24 +187,23 @@ export function outsideAt(method: Candidate, setting: Setting, speed: number): O
     outside.push({ quantity: 'vessel_coefficient', value: 'none' })
   for (const rule of method.range) {
     if (!binds(rule, setting)) continue
-    const quantity = QUANTITIES[rule.quantity]
-    if (isInside(rule, setting, speed)) continue
-    outside.push({
-      quantity: rule.quantity,
-      value: quantity.at(setting, speed),
-      min: rule.min,
-      max: rule.max,
-    })
+    const value = valueOutside(rule, setting, speed)
+    if (value !== undefined) outside.push({ quantity: rule.quantity, value, min: rule.min, max: rule.max })
   }
   return outside
 }
 
-/** A rule at a speed, decided by the same speeds as the bands, so that both agree to the last digit. */
-function isInside(rule: RangeRule, setting: Setting, speed: number): boolean {
+/**
+ * The quantity of a rule at a speed that is not within it, undefined where it is: decided by the same speeds as the bands,
+ * so that both agree to the last digit.
+ */
+function valueOutside(rule: RangeRule, setting: Setting, speed: number): number | undefined {
   const quantity = QUANTITIES[rule.quantity]
-  if (!quantity.speedAt) {
-    const value = quantity.at(setting, speed)
-    return value >= (rule.min ?? -Infinity) && value <= (rule.max ?? Infinity)
+  if (quantity.speedAt) {
+    const isInside =
+      speed > lowerSpeed(rule, quantity, setting) && speed <= upperSpeed(rule, quantity, setting)
+    return isInside ? undefined : quantity.at(setting, speed)
   }
-  return speed > lowerSpeed(rule, quantity, setting) && speed <= upperSpeed(rule, quantity, setting)
+  const value = quantity.at(setting, speed)
+  return value >= (rule.min ?? -Infinity) && value <= (rule.max ?? Infinity) ? undefined : value
 }

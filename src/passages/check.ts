@@ -57,6 +57,8 @@ export interface CheckSummary {
   readonly groups: readonly PassageGroup[]
 }
 
+const NO_EVENTS: readonly PassageEvent[] = []
+
 /** Reports that say where a vessel was: they enter its timeline, others do not. */
 const IN_TIMELINE: ReadonlySet<Status> = new Set<Status>([
   'matched',
@@ -150,6 +152,7 @@ export class PassageCheck {
   /** Events that have closed since the last call. */
   takeEvents(): readonly PassageEvent[] {
     const events = this.#events
+    if (events.length === 0) return NO_EVENTS
     this.#events = []
     return events
   }

@@ -39,7 +39,9 @@ export class Timeline {
       if (report.time >= this.#newest - this.#maxGap) break
       settled += 1
     }
-    if (settled > 0) for (const old of waiting.splice(0, settled)) settle(old)
+    // one for one as a rule
+    if (settled === 1) settle(waiting.shift() as Mark)
+    else if (settled > 1) for (const old of waiting.splice(0, settled)) settle(old)
   }
 
   /** Hands on all that is left. */

@@ -1,3 +1,4 @@
+import fc from 'fast-check'
 import { expect, test } from 'vitest'
 import {
   angleOf,
@@ -70,6 +71,27 @@ test.each([
   [12.5, 12.5],
 ])('%j is the number %d', (cell, value) => {
   expect(numberOf(cell)).toBe(value)
+})
+
+test('a plain decimal is the double that is nearest to it, as by the reader of the language', () => {
+  fc.assert(
+    fc.property(
+      fc.bigInt({ min: -(10n ** 17n), max: 10n ** 17n }),
+      fc.nat(18),
+      fc.boolean(),
+      (digits, decimals, isNegative) => {
+        const text = String(digits < 0n ? -digits : digits).padStart(decimals + 1, '0')
+        const whole = text.slice(0, text.length - decimals)
+        const cell = `${isNegative ? '-' : ''}${whole}${decimals > 0 ? '.' : ''}${text.slice(text.length - decimals)}`
+        expect(numberOf(cell)).toBe(Number(cell))
+      },
+    ),
+    { numRuns: 2000 },
+  )
+  expect([numberOf('0.1'), numberOf('-0'), numberOf('29.98765'), numberOf('007.50'), numberOf('5.')]).toEqual(
+    [0.1, -0, 29.98765, 7.5, 5],
+  )
+  expect(['.', '-', '-.', '1.2.3', '1-2'].map(numberOf)).toEqual(Array.from({ length: 5 }, () => REFUSED))
 })
 
 test.each([

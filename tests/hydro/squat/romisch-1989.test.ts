@@ -83,4 +83,17 @@ describe('romisch-1989', () => {
       expectClose(romisch1989.firstSpeed(setting, atCritical, 0, 1000), critical, { rel: 2e-15 })
     }
   })
+
+  it('finds a speed that is just within the end, and none just beyond it', () => {
+    for (const setting of [S1_OPEN, S3]) {
+      const critical = romischCriticalSpeed(setting)
+      for (let r = 0.01; r < 2; r += 0.0337) {
+        const squat = romisch1989.squat(setting, r * critical)
+        const found = romisch1989.firstSpeed(setting, squat, 0, 1000)
+        expect(romisch1989.firstSpeed(setting, squat, 0, found * (1 + 1e-12))).toBe(found)
+        expect(romisch1989.firstSpeed(setting, squat, 0, found * (1 - 1e-6))).toBe(Infinity)
+        expect(romisch1989.firstSpeed(setting, squat, 0, found)).toBe(Infinity)
+      }
+    }
+  })
 })

@@ -217,6 +217,35 @@ describe('weggel-sorensen-1986', () => {
     }
   })
 
+  it('tells what it finds to the last digit whatever the most that it is asked for, and may leave out what is above', () => {
+    fc.assert(
+      fc.property(
+        spread(1, 20),
+        spread(1, 3000),
+        between(0.1, 1),
+        between(0.2, 1.6),
+        (depth, volume, F, share) => {
+          const setting = aSetting({ depth, volume })
+          const celerity = Math.sqrt(G * depth)
+          const height = weggelSorensen1986.height(setting, F * celerity, 30)
+          const found = weggelSorensen1986.firstSpeed(setting, height, 30, 0, 2 * celerity)
+          const told = (most: number): number =>
+            weggelSorensen1986.firstSpeed(setting, height, 30, 0, 2 * celerity, most)
+          expect([told(found), told(found * 1.0001), told(Infinity)]).toEqual([found, found, found])
+          const bounded = told(share * found)
+          expect(bounded === found || (share < 1 && bounded === Infinity)).toBe(true)
+        },
+      ),
+    )
+  })
+
+  it('spares the search where the height is not reached by the most that is asked for', () => {
+    const setting = aSetting({ depth: 5, volume: 100 })
+    const height = weggelSorensen1986.height(setting, 4, 30)
+    expect(weggelSorensen1986.isIterated).toBe(true)
+    expect(weggelSorensen1986.firstSpeed(setting, height, 30, 0, 6, 3.9)).toBe(Infinity)
+  })
+
   it('can be computed for every vessel', () => {
     expect(
       weggelSorensen1986.hasCoefficients(aSetting({ envelopeCoefficient: NaN, centralCoefficient: NaN })),
