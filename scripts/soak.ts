@@ -4,7 +4,7 @@ import { join } from 'node:path'
 import { setTimeout as wait } from 'node:timers/promises'
 import { parseArgs } from 'node:util'
 import { kindAt, MIX, type Kind } from './load/mix.ts'
-import { RawClient } from './load/raw-client.ts'
+import { RawClient, rawRequest } from './load/raw-client.ts'
 import { startService } from './load/service-process.ts'
 import { longStream, slowSender, smallStream } from './load/slow.ts'
 
@@ -19,7 +19,7 @@ const { values } = parseArgs({
 const SECONDS = Number(values.seconds)
 const TIMES = Number(values.times)
 const AT_ONCE = 48 // requests of the closed loop, fewer than the service takes
-const MOST_CONNECTIONS = 3000
+const MOST_CONNECTIONS = 1000 // of the open loop, ten times what the service takes at once
 const TICK = 5 // ms
 const LONG_STREAMS = 4
 const SLOW_SENDERS = 150 // more than places for requests
@@ -101,9 +101,22 @@ async function capacity(port: number, choose: () => Kind, seconds: number): Prom
   return (account.accepted * 1000) / (performance.now() - begun)
 }
 
+/** A client whose connections are open already, as those of callers and balancers are. */
+async function opened(port: number, count: number): Promise<RawClient> {
+  const client = new RawClient(port, count)
+  const hello = rawRequest('GET', '/health/live')
+  for (let open = 0; open < count; open += 50) {
+    // all that are open have to be busy for another to be opened
+    await Promise.all(
+      Array.from({ length: open + 50 }, () => new Promise((settled) => client.send(hello, settled))),
+    )
+  }
+  return client
+}
+
 /** Sends at a rate, whatever is answered. */
 async function drive(port: number, rate: number, account: Account, seconds: number): Promise<number> {
-  const client = new RawClient(port, MOST_CONNECTIONS)
+  const client = await opened(port, MOST_CONNECTIONS)
   const begun = performance.now()
   let sent = 0
   let notSent = 0
@@ -135,7 +148,6 @@ const folder = mkdtempSync(join(tmpdir(), 'soak-'))
 const service = await startService({
   environment: {
     DATABASE_URL: `sqlite:${folder}/registry.db`,
-    LOG_LEVEL: 'warn',
     REQUEST_TIMEOUT_MS: '10000',
   },
   isQuiet: true,

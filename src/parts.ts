@@ -6,6 +6,7 @@ import { Admission, installAdmission } from './http/admission.ts'
 import { installAccess, installKeys } from './http/access.ts'
 import type { App } from './http/app-type.ts'
 import { installCors } from './http/cors.ts'
+import { installEarlyRefusal } from './http/early-refusal.ts'
 import { readFeature, type FeatureWire } from './http/feature-in.ts'
 import { installMetrics, Metrics, metricsRoutes } from './http/metrics.ts'
 import type { Examples } from './http/openapi-examples.ts'
@@ -122,6 +123,7 @@ function jobsOn(
 function guard(app: App, config: Config, service: Service, admission: Admission): void {
   installCors(app, config.corsOrigins)
   installAdmission(app, admission)
+  installEarlyRefusal(app, admission, config.corsOrigins)
   if (config.access === 'keys') installKeys(app, service)
   if (config.rateLimit > 0) installRateLimit(app, new RateLimiter(config.rateLimit))
   if (config.access === 'keys') installAccess(app)

@@ -6,6 +6,7 @@ import type { App } from './http/app-type.ts'
 import { serviceParts } from './parts.ts'
 
 const STOP_TIMEOUT = 10_000 // ms that open streams have to end
+const BACKLOG = 4096 // connections that wait to be taken in; the system may allow fewer
 const TELLING = 1_000 // ms in which those that have not are told
 
 /** Never logged, wherever an error or a request brings it along. */
@@ -61,7 +62,7 @@ try {
   process.exit(1)
 }
 if (config.access === 'open') log.warn('Access is open: everyone who reaches this address may read and write')
-const address = await app.listen({ host: config.host, port: config.port })
+const address = await app.listen({ host: config.host, port: config.port, backlog: BACKLOG })
 const url = config.publicUrl ?? address
 log.info(`Overview: ${url}/`)
 log.info(`Documentation: ${url}/docs`)

@@ -31,6 +31,7 @@ export async function terminated(folder: string): Promise<Result> {
   const text = reply.toArray()
   await wait(1500)
   service.child.kill('SIGTERM')
+  service.child.once('exit', () => (isOver = true))
   await wait(1000)
   sender.end(SHORT_LINE)
   const lines = String(Buffer.concat(await text))

@@ -37,7 +37,9 @@ export async function startService({
     env: { PATH: process.env['PATH'], HOST: '127.0.0.1', PORT: '0', ...environment },
     stdio: ['ignore', 'pipe', 'inherit'],
   })
-  process.once('exit', () => child.kill('SIGKILL'))
+  const end = (): void => void child.kill('SIGKILL')
+  process.once('exit', end)
+  child.once('exit', () => process.off('exit', end))
   const exit = once(child, 'exit') as Promise<[number | null, string | null]>
   const logged: Readonly<Record<string, unknown>>[] = []
   const url = await new Promise<string>((found, failed) => {

@@ -38,6 +38,8 @@ const BUSY = {
  */
 export class Admission {
   readonly inHand = { request: 0, stream: 0 }
+  /** requests that were refused before anything was done about them */
+  refusedEarly = 0
   readonly #most: Readonly<Record<keyof Admission['inHand'], number>>
   #lag = 0
 
@@ -47,8 +49,11 @@ export class Admission {
 
   /** @throws Fault `overloaded` when there is no place */
   check(kind: 'request' | 'stream'): void {
-    if (this.#lag > MAX_LAG || this.inHand[kind] >= this.#most[kind])
-      throw new Fault('overloaded', BUSY[kind])
+    if (this.isFull(kind)) throw new Fault('overloaded', BUSY[kind])
+  }
+
+  isFull(kind: 'request' | 'stream'): boolean {
+    return this.#lag > MAX_LAG || this.inHand[kind] >= this.#most[kind]
   }
 
   /**

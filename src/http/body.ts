@@ -53,6 +53,8 @@ export function decoded(request: FastifyRequest, payload: Readable): Readable {
  * body itself would close the socket before a reply could be written.
  */
 export function detached<Through extends Duplex>(payload: Readable, through: Through): Through {
+  // Nobody may be reading when it fails, if the request was refused meanwhile; whoever reads is told all the same.
+  through.on('error', () => undefined)
   payload.pipe(through)
   payload.once('error', (error) => through.destroy(error))
   through.once('close', () => {

@@ -9,6 +9,7 @@ import { Fault } from '../domain/fault.ts'
 import { toKmh } from '../domain/units.ts'
 import type { Registry, SegmentRecord } from '../store/registry.ts'
 import type { Routes } from './app-type.ts'
+import { geoJson } from './geo-json.ts'
 import { LayerReply } from './layer.schema.ts'
 import type { Watch } from './metrics.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
@@ -173,7 +174,7 @@ export function layerRoutes(service: Service): Routes {
         description:
           'A segment that cannot be answered is a feature with `problem_code`, never a failed layer.',
         querystring: LayerQuery,
-        response: { 200: LayerReply, ...problemResponses(400, 404, 406) },
+        response: { 200: geoJson(LayerReply), ...problemResponses(400, 404, 406) },
       },
       handler: async (request, reply) => {
         negotiate(request, reply, ['geojson', 'json'])

@@ -56,6 +56,11 @@ export function installLifecycle(app: App, onAnswered: (answered: Answered) => v
   })
   app.addHook('onResponse', (request, reply, done) => {
     onAnswered(log(request, reply, 'answered'))
+    // A connection that idles from now on would be waited for.
+    if (isStopping)
+      setImmediate(() => {
+        app.server.closeIdleConnections()
+      })
     done()
   })
 }

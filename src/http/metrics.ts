@@ -151,6 +151,15 @@ export class Metrics implements Watch {
         for (const [kind, count] of Object.entries(admission.inHand)) this.set({ kind }, count)
       },
     })
+    new Counter({
+      name: 'washlimit_refused_early_total',
+      help: 'requests refused as overloaded before anything was done about them; they are in no other figure',
+      registers,
+      collect() {
+        this.reset()
+        this.inc(admission.refusedEarly)
+      },
+    })
     new Gauge({
       name: 'washlimit_registry_revision',
       help: 'last known one',

@@ -7,6 +7,7 @@ import { acceptGeoJson } from './body.ts'
 import { calibrationItems } from './calibration-named.ts'
 import { FeatureIn, readFeature, type FeatureWire } from './feature-in.ts'
 import { SegmentFeature, toFeature } from './feature.schema.ts'
+import { geoJson } from './geo-json.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
 import { expectedOf, revisionRequired, writtenOr } from './preconditions.ts'
 import { problemResponses } from './problems.ts'
@@ -90,8 +91,8 @@ function addPut(app: App, service: Service): void {
       querystring: z.strictObject({ format: formatParameter(['geojson', 'json']) }),
       body: FeatureIn,
       response: {
-        200: SegmentFeature,
-        201: SegmentFeature,
+        200: geoJson(SegmentFeature),
+        201: geoJson(SegmentFeature),
         ...problemResponses(400, 401, 403, 404, 406, 412, 413, 415, 422, 428, 503),
       },
     },

@@ -8,6 +8,7 @@ import { Fault } from '../domain/fault.ts'
 import type { App, Routes } from './app-type.ts'
 import { advisoryText } from './advisory-text.ts'
 import { SegmentCollection, SegmentFeature, toFeature } from './feature.schema.ts'
+import { geoJson } from './geo-json.ts'
 import { inputHash } from './input-hash.ts'
 import { list, listOf } from './list.ts'
 import type { Watch } from './metrics.ts'
@@ -123,7 +124,7 @@ function addList(app: App, service: Service): void {
       tags: ['segments'],
       summary: 'List the segments of the registry.',
       querystring: ListQuery,
-      response: { 200: SegmentCollection, ...problemResponses(400, 406) },
+      response: { 200: geoJson(SegmentCollection), ...problemResponses(400, 406) },
     },
     handler: async (request, reply) => {
       negotiate(request, reply, ['geojson', 'json'])
@@ -143,7 +144,7 @@ function addSegment(app: App, service: Service): void {
         revision: integerParameter(1, 1e9).optional(),
         format: formatParameter(['geojson', 'json']),
       }),
-      response: { 200: SegmentFeature, ...problemResponses(400, 404, 406) },
+      response: { 200: geoJson(SegmentFeature), ...problemResponses(400, 404, 406) },
     },
     handler: async (request, reply) => {
       negotiate(request, reply, ['geojson', 'json'])
