@@ -2,7 +2,7 @@ import type { Conditions, Options } from '../domain/conditions.ts'
 import type { Segment, Station } from '../domain/segment.ts'
 import type { Vessel } from '../domain/vessel.ts'
 import { waterCriteria } from './criteria/all.ts'
-import { decideDirection, strictest, type Bound, type Decision } from './decide.ts'
+import { decideDirection, strictest, type Bound, type Decision, type SegmentBounds } from './decide.ts'
 import { directionsOf } from './direction.ts'
 import { situationOf, type Situation } from './situation.ts'
 
@@ -18,6 +18,26 @@ function lowestBounds(situation: Situation): Bound[] {
     most = Math.min(most, firstSpeed)
     return { criterion, firstSpeed }
   })
+}
+
+/**
+ * The bounds of the water at every station, for decisions of which only what governs is used: outcome, speeds and criterion
+ * are those of `stationBounds`, in every current and direction.
+ *
+ * @throws Fault `impossible-input` when the vessel does not fit one of the stations
+ */
+export function governingBounds(
+  segment: Segment,
+  vessel: Vessel,
+  conditions: Conditions,
+  options: Options,
+): SegmentBounds {
+  const [first, ...rest] = segment.stations.map((station) => {
+    const situation = situationOf(segment, station, vessel, conditions, options)
+    return { situation, water: lowestBounds(situation) }
+  })
+  if (!first) throw new RangeError('A segment has at least one station')
+  return [first, ...rest]
 }
 
 /**

@@ -12,12 +12,16 @@ function isShiftedSane({ segment, vessel }: Inputs): boolean {
   )
 }
 
-/** The bounds of the water of shifted inputs, or undefined where the shifted figures cannot hold together. */
-export function boundsIfPossible(inputs: Inputs): SegmentBounds | undefined {
+/**
+ * The bounds of the water of shifted inputs, or undefined where the shifted figures cannot hold together.
+ *
+ * @param boundsOf  all of them, or those that may govern
+ */
+export function boundsIfPossible(inputs: Inputs, boundsOf = stationBounds): SegmentBounds | undefined {
   const { segment, vessel, conditions, options } = inputs
   if (!isShiftedSane(inputs)) return undefined
   try {
-    return stationBounds(segment, vessel, conditions, options)
+    return boundsOf(segment, vessel, conditions, options)
   } catch (error) {
     if (error instanceof Fault && error.code === 'impossible-input') return undefined
     throw error

@@ -54,8 +54,8 @@ interface Scale {
 function scaleOf({ base, inputs }: Sensitivity, marks: readonly number[]): Scale {
   const all = inputs.flatMap(({ atLow, atHigh }) => [speedOf(atLow), speedOf(atHigh)])
   const found = [...all, speedOf(base), ...marks].filter((speed) => speed !== undefined).map(toKmh)
-  const least = Math.min(...found)
-  const most = Math.max(...found)
+  // no input may make any speed safe: bars of nothing then stand on an axis all the same
+  const [least, most] = found.length > 0 ? [Math.min(...found), Math.max(...found)] : [0, 1]
   const room = Math.max(0.15, 0.08 * (most - least))
   const speed = scaleLinear([Math.max(0, least - room), most + room], [...PLOT])
   return { speed, base: speed(toKmh(recommended(base))) }
