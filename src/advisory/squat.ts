@@ -28,9 +28,9 @@ export function squatFirstSpeed(situation: Situation, squat: number, from: numbe
     let first = Infinity
     for (let i = SQUAT_METHODS.length - 1; i >= 0; i -= 1) {
       if ((band.active & (1 << i)) === 0) continue
-      const to = Math.min(end, first)
-      if (!(start < to)) return first
-      first = Math.min(first, SQUAT_METHODS[i]?.firstSpeed(situation.setting, squat, start, to) ?? Infinity)
+      const stop = Math.min(end, first)
+      if (!(start < stop)) return first
+      first = Math.min(first, SQUAT_METHODS[i]?.firstSpeed(situation.setting, squat, start, stop) ?? Infinity)
     }
     if (first < Infinity) return first
   }
