@@ -12,6 +12,9 @@ interface Placed {
   readonly blockage: number
 }
 
+/** A figure for a sentence, to a tenth of a millimetre; `facts` hold it whole. */
+const shown = (figure: number): number => Number(figure.toFixed(4))
+
 /** Figures that are valid one by one and cannot hold together: each pair that clashes, with both figures. */
 export function impossibleItems(placed: Placed): FaultItem[] {
   const { vessel, conditions, section } = placed
@@ -21,7 +24,7 @@ export function impossibleItems(placed: Placed): FaultItem[] {
     items.push({
       pointer: '#/vessel/beam_m',
       code: 'clash',
-      detail: `The hull is as wide as the water: beam ${vessel.beam} m, water surface ${section.width} m`,
+      detail: `The hull is as wide as the water: beam ${shown(vessel.beam)} m, water surface ${shown(section.width)} m`,
       facts: { beam_m: vessel.beam, width_m: section.width },
     })
   } else items.push(...hullSideItems(placed))
@@ -62,8 +65,8 @@ function draughtItems(vessel: Vessel, depth: number, pointer: string): FaultItem
       pointer: `${pointer}/draught_m`,
       code: 'clash',
       detail: isGiven
-        ? `The vessel is aground: draught ${vessel.draught} m, depth ${depth} m`
-        : `The draught of the class, ${vessel.draught} m, is not below the depth, ${depth} m: give draught_m`,
+        ? `The vessel is aground: draught ${shown(vessel.draught)} m, depth ${shown(depth)} m`
+        : `The draught of the class, ${shown(vessel.draught)} m, is not below the depth, ${shown(depth)} m: give draught_m`,
       facts: { draught_m: vessel.draught, depth_m: depth },
     },
   ]
@@ -79,7 +82,7 @@ function hullSideItems({ segment, vessel, section }: Placed): FaultItem[] {
       pointer:
         bank.side === 'nearer' ? '#/segment/bank_distance_m' : `#/segment/banks/${bank.side}/distance_m`,
       code: 'clash',
-      detail: `The hull reaches over the ${bank.side} waterline: ${distance} m from the sailing line, half the beam is ${half} m`,
+      detail: `The hull reaches over the ${bank.side} waterline: ${shown(distance)} m from the sailing line, half the beam is ${shown(half)} m`,
       facts: { distance_m: distance, half_beam_m: half },
     })
   })
@@ -88,7 +91,7 @@ function hullSideItems({ segment, vessel, section }: Placed): FaultItem[] {
     items.push({
       pointer: `#/segment/receptors/${i}/distance_m`,
       code: 'clash',
-      detail: `The receptor lies under the hull: ${receptor.distance} m from the sailing line, half the beam is ${half} m`,
+      detail: `The receptor lies under the hull: ${shown(receptor.distance)} m from the sailing line, half the beam is ${shown(half)} m`,
       facts: { distance_m: receptor.distance, half_beam_m: half },
     })
   })

@@ -104,6 +104,30 @@ const toMethod = (method: MethodFit): CalibrationDocument['methods'][number] => 
   by_hull: method.byHull.map(toHull),
 })
 
+const fromMinMax = ({ min, max }: { readonly min: number; readonly max: number }): Extent => [min, max]
+
+/** What advisories take from a calibration that went out: the same as from its fit. */
+export function fromDocument(id: string, document: CalibrationDocument): Calibration {
+  const { name, methods, recommended_method: recommended, coverage } = document
+  const leading = methods.find((method) => method.id === recommended)
+  return {
+    id,
+    name,
+    methods: methods.map((method) => ({
+      id: method.id,
+      factor: method.factor,
+      factorByHull: Object.fromEntries(method.by_hull.map(({ hull, factor }) => [hull, factor])),
+    })),
+    scatter: leading?.scatter_log_sd ?? NaN,
+    coverage: {
+      speed: fromMinMax(coverage.speed_mps),
+      distance: fromMinMax(coverage.distance_m),
+      depth: fromMinMax(coverage.depth_m),
+      depthFroudeNumber: fromMinMax(coverage.depth_froude_number),
+    },
+  }
+}
+
 /** A calibration as it goes out, but for id and time. */
 export function toDocument(
   fitted: Fitted,

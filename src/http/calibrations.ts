@@ -204,11 +204,13 @@ function addSheet(app: App, service: Service): void {
       querystring: z.strictObject({}),
       response: {
         200: { description: 'The page.', content: { 'text/html': { schema: z.string() } } },
-        ...problemResponses(400, 401, 404),
+        ...problemResponses(400, 401, 404, 406),
       },
     },
-    handler: async (request, reply) =>
-      sendPage(reply, calibrationSheet(await viewOfCalibration(request.params.id, reply, service))),
+    handler: async (request, reply) => {
+      negotiate(request, reply, ['html'])
+      return sendPage(reply, calibrationSheet(await viewOfCalibration(request.params.id, reply, service)))
+    },
   })
 }
 

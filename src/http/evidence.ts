@@ -9,6 +9,7 @@ import type { PlanRecord } from '../store/job-records.ts'
 import type { App, Routes } from './app-type.ts'
 import type { LimitPlanWire } from './limit-plans.schema.ts'
 import { planOf, PlanParams } from './limit-plans.ts'
+import { negotiate } from './negotiate.ts'
 import { sendPage } from './page.ts'
 import { contentOf, fromPlanContent, publicationOf, toPlanRules } from './plan-reply.ts'
 import { problemResponses } from './problems.ts'
@@ -119,10 +120,11 @@ export function evidenceRoutes(service: Service): Routes {
         querystring: z.strictObject({}),
         response: {
           200: { description: 'The pages.', content: { 'text/html': { schema: z.string() } } },
-          ...problemResponses(400, 401, 404, 503),
+          ...problemResponses(400, 401, 404, 406, 503),
         },
       },
       handler: async (request, reply) => {
+        negotiate(request, reply, ['html'])
         const plan = await planOf(request.params.id, service)
         return sendPage(reply, await inTurns(evidenceSteps(await evidenceView(plan, service))))
       },

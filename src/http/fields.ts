@@ -10,7 +10,25 @@ export const Id = z
   .regex(ID_PATTERN, '')
   .describe('1 to 64 of A-Z a-z 0-9 . _ -, the first a letter or digit')
 
-export const Text = z.string().max(2000)
+/** Control characters but tab and line ends, and halves of characters: databases, canonical JSON and paper know none. */
+// eslint-disable-next-line no-control-regex -- they are what is looked for
+const UNWRITABLE = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f\u2028\u2029]|\p{Surrogate}/u
+
+const writable = (text: string): boolean => !UNWRITABLE.test(text)
+
+export const Text = z
+  .string()
+  .max(2000)
+  .refine(writable, {
+    error: 'must be text without control characters and without halves of characters',
+    params: { code: 'pattern' },
+  })
+
+/** Text that says something, on paper too: no spaces around it, and not all of it. */
+export const Name = Text.min(1).refine((text) => text === text.trim() && text !== '', {
+  error: 'must be text without spaces at its ends',
+  params: { code: 'pattern' },
+})
 
 export const Label = z.string().max(200).optional().describe("the caller's own mark, echoed unread")
 

@@ -3,14 +3,14 @@ import { CRITERION_IDS } from '../advisory/criteria/criterion.ts'
 import { DIRECTIONS } from '../domain/segment.ts'
 import { LOADINGS } from '../domain/vessel.ts'
 import { crossCheck } from './cross-check.ts'
-import { figure, Id, Label, Text } from './fields.ts'
+import { figure, Id, Label, Name, Text } from './fields.ts'
 import { GroupFields } from './group.schema.ts'
 import { listOf } from './list.ts'
 import { SIGN_UNIT_NAMES } from './options.schema.ts'
 import { Speed } from './reply-parts.schema.ts'
 
 const GroupIn = z
-  .strictObject({ label: Label, id: Id, name: Text.min(1), applies_to: GroupFields })
+  .strictObject({ label: Label, id: Id, name: Name, applies_to: GroupFields })
   .meta({ id: 'PlanGroup', description: 'Vessels for which one limit is posted.' })
 
 /** A summary of passages may have more than is read here. */
@@ -41,7 +41,7 @@ const SummaryIn = z
 export const LimitPlanRequest = z
   .strictObject({
     label: Label,
-    name: Text.min(1),
+    name: Name,
     study_id: Id,
     groups: z.array(GroupIn).min(1).max(50),
     percentile: z
@@ -132,10 +132,10 @@ export const StretchReply = z
 export type StretchWire = z.output<typeof StretchReply>
 
 const PUBLICATION = {
-  number: z.string().regex(/\S/).max(100).describe('unique among the plans'),
-  title: Text.min(1),
-  authority: Text.min(1),
-  signatory: Text.min(1).optional(),
+  number: Name.max(100).describe('unique among the plans'),
+  title: Name,
+  authority: Name,
+  signatory: Name.optional(),
   effective_from: z.iso.date(),
   supersedes: Id.optional().describe('id of the published plan that it takes the place of'),
   note: Text.optional(),

@@ -106,10 +106,11 @@ function addSheet(app: App, service: Service): void {
       querystring: z.strictObject(ADVISORY_FIELDS),
       response: {
         200: { description: 'The page.', content: { 'text/html': { schema: z.string() } } },
-        ...problemResponses(400, 401, 404, 422),
+        ...problemResponses(400, 401, 404, 406, 422),
       },
     },
     handler: async (request, reply) => {
+      negotiate(request, reply, ['html'])
       const { view, asked } = await resolved(request.params.id, request.query, reply, service)
       const advisory = adviseAll(asked)
       const page = segmentSheet({

@@ -3,7 +3,7 @@ import { CRITERION_IDS } from '../advisory/criteria/criterion.ts'
 import { DIRECTIONS } from '../domain/segment.ts'
 import { LOADINGS } from '../domain/vessel.ts'
 import { crossCheck } from './cross-check.ts'
-import { figure, Id, Label, Text } from './fields.ts'
+import { figure, Id, Label, Name, Text } from './fields.ts'
 import { listOf } from './list.ts'
 import { OptionsFields } from './options.schema.ts'
 import { OutcomeField } from './reply-parts.schema.ts'
@@ -42,7 +42,7 @@ const StudyUncertainty = z
 export const StudyRequest = z
   .strictObject({
     label: Label,
-    name: Text.min(1),
+    name: Name,
     segments: z
       .union([
         z.literal('all'),

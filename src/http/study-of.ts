@@ -37,11 +37,8 @@ export interface StudyInputs {
 
 function recordsOf({ segments }: StudyWire, registry: Registry): readonly SegmentRecord[] {
   if (Array.isArray(segments)) {
-    return [...segments].sort(byText).map((id) => {
-      const record = registry.findSegment(id)
-      if (!record) throw segmentNotFound(id, registry)
-      return record
-    })
+    refuseUnknown(segments, registry)
+    return [...segments].sort(byText).flatMap((id) => registry.findSegment(id) ?? [])
   }
   const filter = segments === 'all' ? {} : { waterway: segments.waterway }
   const found = registry.segments(filter)
@@ -49,6 +46,23 @@ function recordsOf({ segments }: StudyWire, registry: Registry): readonly Segmen
   const where = filter.waterway === undefined ? 'the registry' : `the waterway ${filter.waterway}`
   throw new Fault('segment-not-found', `There is no segment in ${where}: import some, or name others`, {
     facts: filter.waterway === undefined ? {} : { waterway: filter.waterway },
+  })
+}
+
+/** @throws Fault `segment-not-found` with every id that names nothing */
+function refuseUnknown(ids: readonly string[], registry: Registry): void {
+  const unknown = ids.flatMap((id, i) => (registry.findSegment(id) ? [] : [{ id, i }]))
+  const [first] = unknown
+  if (!first) return
+  const { message, parts } = segmentNotFound(first.id, registry)
+  const more = unknown.length > 1 ? ` (and ${unknown.length - 1} more)` : ''
+  throw new Fault('segment-not-found', `${message}${more}`, {
+    ...parts,
+    errors: unknown.map(({ id, i }) => ({
+      pointer: `#/segments/${i}`,
+      code: 'not-in-list' as const,
+      detail: `names the segment ${id}, which does not exist`,
+    })),
   })
 }
 
@@ -137,18 +151,12 @@ function calibrationsOf({ segments }: Study, registry: Registry): readonly Calib
   return registry.calibrations().filter(({ id }) => ids.has(id))
 }
 
-/**
- * A study as a job: everything it rests on is read from the registry once, here.
- *
- * @throws Fault `segment-not-found`, `vessel-class-not-found`, `calibration-not-found`, `too-many-cells`,
- * `impossible-input`
- */
-export function studyJob(wire: StudyWire, { registry, serviceVersion }: View): JobContent {
+/** Everything a study rests on, as it is in the registry. */
+export function inputsFrom(wire: StudyWire, registry: Registry): StudyInputs {
   const records = recordsOf(wire, registry)
   const study = studyOf(wire, records, registry)
-  assertSize(study)
   const classes = new Set(study.vessels.flatMap(({ classId }) => classId ?? []))
-  const inputs: StudyInputs = {
+  return {
     study,
     segments: records.map(toFeature),
     vessel_classes: [...classes].sort(byText).map((id) => toVesselClassReply(shownOf(id, { registry }))),
@@ -158,6 +166,18 @@ export function studyJob(wire: StudyWire, { registry, serviceVersion }: View): J
       ...document,
     })),
   }
+}
+
+/**
+ * A study as a job: everything it rests on is read from the registry once, here.
+ *
+ * @throws Fault `segment-not-found`, `vessel-class-not-found`, `calibration-not-found`, `too-many-cells`,
+ * `impossible-input`
+ */
+export function studyJob(wire: StudyWire, { registry, serviceVersion }: View): JobContent {
+  const inputs = inputsFrom(wire, registry)
+  const { study } = inputs
+  assertSize(study)
   return {
     kind: 'study',
     name: wire.name,

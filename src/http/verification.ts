@@ -3,6 +3,7 @@ import type { Cell } from '../limits/cell.ts'
 import { PlanBuilder } from '../limits/plan-builder.ts'
 import { toPlanContent, toPlanRules } from './plan-reply.ts'
 import { canonicalText, recordHash, type RecordWire } from './record.ts'
+import { comparableInputs, inputsAnew } from './record-inputs.ts'
 import { studyColumns, toStudyRow } from './study-rows.ts'
 
 const MAX_DIFFERENCES = 100
@@ -39,13 +40,13 @@ export interface VerificationWire {
 
 const TEXTS: Readonly<Record<Verdict, string>> = {
   reproduced:
-    'Every figure of the record comes out again to the last digit, and the record is as it was published.',
+    'Every figure comes out again to the last digit from the segments, vessels and rules of the record, and its hash is that of its content.',
   'methods-changed':
-    'The record is as it was published, but some figures come out differently: the methods have changed since. The service version that it names reproduces it.',
+    'The hash of the record is that of its content, but some figures come out differently: the methods have changed since. The service version that it names reproduces it.',
   'not-reproduced':
-    'The record is as it was published, and the methods are the same, but some figures come out differently: report this to whoever runs the service.',
+    'The hash of the record is that of its content, and the methods are the same, but some figures come out differently: either they were never computed so, or this service is at fault.',
   'record-altered':
-    'The record is not what was published: its hash, or what the database holds, does not agree.',
+    'The record is not what was published: its hash is not that of its content, not the one that was published, or not what the database holds.',
 }
 
 /** Compares two values leaf by leaf. */
@@ -100,9 +101,9 @@ const isObject = (value: unknown): value is Fields => typeof value === 'object' 
 
 const escaped = (name: string): string => name.replaceAll('~', '~0').replaceAll('/', '~1')
 
-/** What the database holds beside the record, which has to agree with it. */
+/** What is known of a record from elsewhere, the database or the evidence on paper: it has to agree. */
 export interface Stored {
-  readonly plan: RecordWire['plan']
+  readonly plan?: RecordWire['plan']
   readonly publication?: RecordWire['publication']
   readonly recordHash?: string
 }
@@ -112,8 +113,9 @@ function isAltered(record: RecordWire, computedHash: string, stored: Stored | un
   if (!stored) return false
   return (
     (stored.recordHash ?? computedHash) !== computedHash ||
-    canonicalText(stored.plan) !== canonicalText(record.plan) ||
-    canonicalText(stored.publication ?? {}) !== canonicalText(record.publication ?? {})
+    (stored.plan !== undefined &&
+      (canonicalText(stored.plan) !== canonicalText(record.plan) ||
+        canonicalText(stored.publication ?? {}) !== canonicalText(record.publication ?? {})))
   )
 }
 
@@ -150,8 +152,21 @@ export class Verification {
     }
   }
 
+  /** Whether what readers see of the inputs gives what is computed with. */
+  #compareInputs(): void {
+    const { inputs, segments, vessel_classes, calibrations } = this.#record
+    const published = comparableInputs({ study: inputs.study, segments, vessel_classes, calibrations })
+    let anew: Readonly<Record<string, unknown>>
+    try {
+      anew = comparableInputs(inputsAnew(this.#record))
+    } catch (error) {
+      anew = { inputs: error instanceof Error ? error.message : String(error) }
+    }
+    this.#comparison.compare(published, anew, '')
+  }
+
   /**
-   * @param stored  what the database holds of the plan; absent where there is only the record
+   * @param stored  what else is known of the plan; absent where there is only the record
    */
   conclude(serviceVersion: string, stored?: Stored): VerificationWire {
     const { study } = this.#record.inputs
@@ -159,6 +174,7 @@ export class Verification {
     const { columns, rows } = this.#record.results
     const comparison = this.#comparison
     comparison.compare(columns, studyColumns(study), '/results/columns')
+    this.#compareInputs()
     for (let i = this.#rows; i < rows.length; i += 1)
       comparison.compareRow(rows[i] ?? [], [], `/results/rows/${i}`, columns)
     const content = JSON.parse(JSON.stringify(toPlanContent(this.#plan.plan(), study))) as Fields

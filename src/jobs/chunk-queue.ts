@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto'
 import PgBoss from 'pg-boss'
+import { partOf } from '../limits/chunks.ts'
 import type { JobHead } from '../store/job-records.ts'
 import type { QueueDatabase } from '../store/queue-database.ts'
 import type { Task, Work } from './runner.ts'
@@ -41,9 +42,12 @@ function messageId(job: string, chunk: number): string {
 }
 
 /** s after which a chunk that was taken counts as lost. */
-function expiryOf({ study, chunks, mostStations }: Work, chunk: number, lostAfter: number): number {
+function expiryOf({ study, chunks }: Work, chunk: number, lostAfter: number): number {
   const [from, to] = chunks[chunk] ?? [0, 0]
-  const decisions = (to - from) * mostStations * (1 + (study.uncertainty?.samples ?? 0))
+  // of its own segments: another may have hundreds of stations
+  const { segments } = partOf(study, from, to).study
+  const stations = Math.max(1, ...segments.map(({ segment }) => segment.stations.length))
+  const decisions = (to - from) * stations * (1 + (study.uncertainty?.samples ?? 0))
   return Math.min(LONGEST, Math.ceil(lostAfter + SLOWNESS * DECISION * decisions))
 }
 

@@ -40,8 +40,6 @@ export interface Task {
 export interface Work {
   readonly study: Study
   readonly chunks: readonly CellRange[]
-  /** of any segment */
-  readonly mostStations: number
 }
 
 /** `stored`: the job goes on. `finished`: it was the last chunk. `dropped`: the job has ended or is gone. */
@@ -133,11 +131,7 @@ export class Runner {
     const inputs = await this.patiently(() => this.#parts.store.jobInputs(id))
     if (!inputs) return undefined
     const study = inputs['study'] as Study
-    const mostStations = study.segments.reduce(
-      (most, { segment }) => Math.max(most, segment.stations.length),
-      1,
-    )
-    return { study, chunks: chunksOf(study), mostStations }
+    return { study, chunks: chunksOf(study) }
   }
 
   async #endOf({ id, kind }: JobHead): Promise<JobEnd> {

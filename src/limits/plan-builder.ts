@@ -192,6 +192,7 @@ export class PlanBuilder {
       study: this.#study,
       rules: this.#rules,
       groupId: line.group.id,
+      vessels: line.vessels,
       direction: line.direction,
       percentile: this.#percentile,
       lowestAt: (segment) => line.lowest[segment] ?? empty,

@@ -1,6 +1,7 @@
 import type { Lack } from './ceilings.ts'
 import { vesselName } from './groups.ts'
 import type { PlanCaution } from './plan.ts'
+import type { Vessel } from '../domain/vessel.ts'
 import type { Study } from './study.ts'
 
 /** Segments that a caution names at most; their number is given beside them. */
@@ -70,6 +71,31 @@ export function keptCaution(
       limit_mps: limit,
       ...(ceiling !== undefined && { ceiling_mps: ceiling }),
       ...segmentFacts(ids),
+    },
+  }
+}
+
+/** A limit at which a vessel of the group, against the stream or with it, is too slow for its rudder. */
+export function steerageCaution(
+  limit: number,
+  slow: readonly { readonly vessel: Vessel; readonly index: number; readonly throughWater: number }[],
+): PlanCaution | undefined {
+  const [first] = slow
+  if (!first) return undefined
+  const worst = slow.reduce((found, next) =>
+    next.throughWater - next.vessel.minSteerageSpeed < found.throughWater - found.vessel.minSteerageSpeed
+      ? next
+      : found,
+  )
+  return {
+    code: 'sign-below-steerage',
+    severity: 'warning',
+    text: `At the limit ${vesselName(worst.vessel, worst.index)} is slower through the water than it needs to steer.`,
+    facts: {
+      limit_mps: limit,
+      through_water_mps: worst.throughWater,
+      min_steerage_mps: worst.vessel.minSteerageSpeed,
+      vessel_indices: slow.map(({ index }) => String(index)),
     },
   }
 }

@@ -3,7 +3,7 @@ import { SIGN_UNITS } from '../domain/units.ts'
 import type { Cell } from './cell.ts'
 import { criterionOf, type LowestCell } from './ceilings.ts'
 import type { PassageShare } from './passage-shares.ts'
-import { keptCaution, lackCautions, shortCaution } from './plan-cautions.ts'
+import { keptCaution, lackCautions, shortCaution, steerageCaution } from './plan-cautions.ts'
 import type { GoverningCell, PlanCaution, PlanRules, PlanTotals, Stretch } from './plan.ts'
 import { postedSign, valueIn } from './posted.ts'
 import type { Row, Site } from './stretches.ts'
@@ -14,6 +14,8 @@ export interface Outlook {
   readonly study: Study
   readonly rules: PlanRules
   readonly groupId: string
+  /** indices of the vessels of the group */
+  readonly vessels: readonly number[]
   readonly direction: 'both' | Direction
   /** index of the percentile among those of the study; null takes the inputs as given */
   readonly percentile: number | null
@@ -23,6 +25,9 @@ export interface Outlook {
   /** absent without a log of passages */
   readonly passages?: (segmentIds: readonly string[], limit: number | undefined) => PassageShare
 }
+
+/** Of a comparison with the speed that a limit was rounded from. */
+const STEERAGE_SLACK = 1e-9
 
 const sum = (values: readonly number[]): number => values.reduce((total, value) => total + value, 0)
 
@@ -95,6 +100,20 @@ function keptAbove(row: Row, speed: number, { study, rules }: Outlook): PlanCaut
   )
 }
 
+/** Vessels of the group that are too slow to steer at a limit in some current of the study, each in its worst one. */
+function tooSlow(speed: number, { study, vessels, direction }: Outlook) {
+  const helping = study.currents.flatMap((current) => {
+    if (direction === 'both') return [current, -current]
+    return [direction === 'downstream' ? current : -current]
+  })
+  const throughWater = speed - Math.max(...helping)
+  return vessels.flatMap((index) => {
+    const vessel = study.vessels[index]
+    if (!vessel || throughWater >= vessel.minSteerageSpeed * (1 - STEERAGE_SLACK)) return []
+    return [{ vessel, index, throughWater }]
+  })
+}
+
 function cautionsOf(row: Row, speed: number | undefined, outlook: Outlook): PlanCaution[] {
   const { study, rules } = outlook
   const lacks = row.sites.flatMap(({ segment }) =>
@@ -102,9 +121,11 @@ function cautionsOf(row: Row, speed: number | undefined, outlook: Outlook): Plan
   )
   const length = sum(row.sites.map((site) => site.length))
   const kept = row.outcome === 'kept' && speed !== undefined ? keptAbove(row, speed, outlook) : undefined
+  const slow = speed === undefined ? undefined : steerageCaution(speed, tooSlow(speed, outlook))
   return [
     ...lackCautions(lacks, study),
     ...(kept ? [kept] : []),
+    ...(slow ? [slow] : []),
     ...(row.isTooShort ? [shortCaution(length, rules.minRunLength)] : []),
   ]
 }
