@@ -181,7 +181,10 @@ try {
       await wait(500)
     }
   })()
+  const sizes = [start]
+  const sampling = setInterval(() => sizes.push(service.rss()), (SECONDS * 1000) / 4 + 1)
   await drive(port, TIMES * mixed, account, SECONDS)
+  clearInterval(sampling)
   isOver = true
   await Promise.all([...others, watching])
   const sorted = account.latencies.sort((a, b) => a - b)
@@ -191,7 +194,8 @@ try {
   out(
     `short advisories: p50 ${percentile(sorted, 50).toFixed(1)} ms, p99 ${percentile(sorted, 99).toFixed(1)} ms, slowest ${percentile(sorted, 100).toFixed(1)} ms`,
   )
-  out(`resident memory: ${start.toFixed(0)} MB at the start, ${service.rss().toFixed(0)} MB at the end`)
+  sizes.push(service.rss())
+  out(`resident memory from start to end, by quarters: ${sizes.map((size) => size.toFixed(0)).join(', ')} MB`)
   for (const [what, count] of [...account.counts].sort()) out(`  ${what}: ${count}`)
   for (const problem of account.problems) out(`  ! ${problem}`)
   service.child.kill('SIGTERM')

@@ -35,6 +35,8 @@ export interface FuzzRequest {
   readonly url: string
   readonly headers: Readonly<Record<string, string>>
   readonly payload?: string | Buffer
+  /** whether its compressed body breaks off: a stream that was begun is then reset */
+  readonly isCut?: boolean
 }
 
 /** Every operation of the document. */
@@ -52,8 +54,7 @@ export function operationsOf(document: Json): Operation[] {
   )
 }
 
-const asText = (value: unknown): string =>
-  typeof value === 'string' ? value : typeof value === 'object' ? JSON.stringify(value) : String(value)
+const asText = (value: unknown): string => (typeof value === 'string' ? value : JSON.stringify(value))
 
 // half of a pair is no character
 const encoded = (text: string): string => encodeURIComponent(text.replaceAll(/\p{Cs}/gu, '?'))
@@ -121,37 +122,51 @@ function bodyOf(
   return Array.from({ length: random.below(6) }, one).join('\n')
 }
 
+function targetOf(operation: Operation, source: FromSchema, random: Random, breaks: boolean): string {
+  let path = operation.path
+  const query: string[] = []
+  for (const { in: place, name, required, schema } of operation.parameters) {
+    const whole = source.value(schema, name)
+    const value = encoded(asText(breaks && random.chance(0.2) ? broken(whole, random) : whole))
+    if (place === 'path') path = path.replace(`{${name}}`, value || 'x')
+    else if (place === 'query' && (required === true || random.chance(0.2))) query.push(`${name}=${value}`)
+  }
+  if (breaks && random.chance(0.1))
+    query.push(random.pick(['x=1', '__proto__=1', 'format=csv', 'limit=%zz', '=']))
+  return query.length > 0 ? `${path}?${query.join('&')}` : path
+}
+
+/** A body as it is, cut off, compressed, or compressed and cut off. */
+function wrapped(
+  text: string,
+  random: Random,
+  breaks: boolean,
+): Pick<FuzzRequest, 'headers' | 'payload' | 'isCut'> {
+  const payload = breaks && random.chance(0.1) ? text.slice(0, random.below(text.length)) : text
+  if (!random.chance(0.05)) return { payload, headers: {} }
+  const zipped = gzipSync(payload)
+  const isCut = breaks && random.chance(0.3)
+  return {
+    payload: isCut ? zipped.subarray(0, random.below(zipped.length)) : zipped,
+    headers: { 'content-encoding': 'gzip' },
+    isCut,
+  }
+}
+
 /** A request to an operation, valid or broken in some way, as the numbers say. */
 export function requestTo(operation: Operation, document: Json, random: Random): FuzzRequest {
   const source = new FromSchema(document, random)
   const breaks = random.chance(0.5)
-  let url = operation.path
-  const query: string[] = []
-  for (const { in: place, name, required, schema } of operation.parameters) {
-    const value = asText(
-      breaks && random.chance(0.2) ? broken(source.value(schema, name), random) : source.value(schema, name),
-    )
-    if (place === 'path') url = url.replace(`{${name}}`, encoded(value) || 'x')
-    else if (place === 'query' && (required === true || random.chance(0.3)))
-      query.push(`${name}=${encoded(value)}`)
-  }
-  if (breaks && random.chance(0.1))
-    query.push(random.pick(['x=1', '__proto__=1', 'format=csv', 'limit=%zz', '=']))
+  const url = targetOf(operation, source, random, breaks)
   const headers: Record<string, string> = {}
   if (random.chance(0.3)) headers['accept'] = random.pick(ACCEPTS)
   if (random.chance(0.4)) headers['if-match'] = random.pick(['*', '"1"', '"2"', 'W/"1"', 'x'])
   if (random.chance(0.05)) headers['if-none-match'] = '*'
   const types = Object.keys(operation.body)
-  const target = `${url}${query.length > 0 ? `?${query.join('&')}` : ''}`
-  if (types.length === 0) return { method: operation.method, url: target, headers }
+  const { method } = operation
+  if (types.length === 0) return { method, url, headers }
   const type = random.pick(types)
   headers['content-type'] = breaks && random.chance(0.05) ? 'text/plain' : type
-  let payload: string | Buffer = bodyOf(operation, type, source, random, breaks)
-  if (breaks && random.chance(0.1)) payload = payload.slice(0, random.below(payload.length))
-  if (random.chance(0.05)) {
-    payload = gzipSync(payload)
-    if (breaks && random.chance(0.3)) payload = payload.subarray(0, random.below(payload.length))
-    headers['content-encoding'] = 'gzip'
-  }
-  return { method: operation.method, url: target, headers, payload }
+  const body = wrapped(bodyOf(operation, type, source, random, breaks), random, breaks)
+  return { ...body, method, url, headers: { ...headers, ...body.headers } }
 }

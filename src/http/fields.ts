@@ -11,7 +11,6 @@ export const Id = z
   .describe('1 to 64 of A-Z a-z 0-9 . _ -, the first a letter or digit')
 
 /** Control characters but tab and line ends, and halves of characters: databases, canonical JSON and paper know none. */
-// eslint-disable-next-line no-control-regex -- they are what is looked for
 const UNWRITABLE = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f\u2028\u2029]|\p{Surrogate}/u
 
 const writable = (text: string): boolean => !UNWRITABLE.test(text)

@@ -1,5 +1,6 @@
 import type { Direction } from '../domain/segment.ts'
 import { SIGN_UNITS } from '../domain/units.ts'
+import type { Vessel } from '../domain/vessel.ts'
 import type { Cell } from './cell.ts'
 import { criterionOf, type LowestCell } from './ceilings.ts'
 import type { PassageShare } from './passage-shares.ts'
@@ -14,8 +15,8 @@ export interface Outlook {
   readonly study: Study
   readonly rules: PlanRules
   readonly groupId: string
-  /** indices of the vessels of the group */
-  readonly vessels: readonly number[]
+  /** of the group, out of those of the study */
+  readonly vessels: readonly Vessel[]
   readonly direction: 'both' | Direction
   /** index of the percentile among those of the study; null takes the inputs as given */
   readonly percentile: number | null
@@ -107,10 +108,9 @@ function tooSlow(speed: number, { study, vessels, direction }: Outlook) {
     return [direction === 'downstream' ? current : -current]
   })
   const throughWater = speed - Math.max(...helping)
-  return vessels.flatMap((index) => {
-    const vessel = study.vessels[index]
-    if (!vessel || throughWater >= vessel.minSteerageSpeed * (1 - STEERAGE_SLACK)) return []
-    return [{ vessel, index, throughWater }]
+  return vessels.flatMap((vessel) => {
+    if (throughWater >= vessel.minSteerageSpeed * (1 - STEERAGE_SLACK)) return []
+    return [{ vessel, index: study.vessels.indexOf(vessel), throughWater }]
   })
 }
 
