@@ -24,7 +24,7 @@ export const Text = z
   })
 
 /** Text that says something, on paper too: no spaces around it, and not all of it. */
-export const Name = Text.min(1).refine((text) => text === text.trim() && text !== '', {
+export const Name = Text.min(1).refine((text) => text === text.trim(), {
   error: 'must be text without spaces at its ends',
   params: { code: 'pattern' },
 })

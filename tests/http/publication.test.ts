@@ -81,6 +81,30 @@ describe('publishing', () => {
     expect((await publish(service, old)).statusCode).toBe(200)
   })
 
+  test('asks for a number and names that can be written on paper', async () => {
+    const service = registryService()
+    const plan = await drafted(service)
+    for (const [field, value] of [
+      ['number', ' '],
+      ['number', 'W-1 '],
+      ['title', ' '],
+      ['authority', 'A\u0000'],
+      ['signatory', '\ud800'],
+      ['note', '\u0007'],
+    ] as const) {
+      const reply = await publish(service, plan, { ...PUBLICATION, [field]: value })
+      const problem = expectProblem(reply, 400, 'invalid-request')
+      expect(problem.errors).toEqual([
+        {
+          pointer: `#/${field}`,
+          code: 'pattern',
+          detail: expect.stringMatching(/^must be text without/) as string,
+        },
+      ])
+    }
+    expect((await publish(service, plan, { ...PUBLICATION, note: 'One\n\ttwo: ä, 水' })).statusCode).toBe(201)
+  })
+
   test('needs a key that may publish, whose name is kept', async () => {
     const service = registryService({ ACCESS: 'keys' })
     const keys = {

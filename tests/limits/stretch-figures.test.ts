@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest'
+import type { Direction } from '../../src/domain/segment.ts'
 import type { PassageCounts } from '../../src/limits/plan.ts'
 import { expectClose } from '../support/expect-close.ts'
 import {
@@ -138,5 +139,36 @@ describe('passages', () => {
     const [stretch] = planAlong(segments, [0, 0, 0], { passages: [counts('a', { counts: [7] })] }).stretches
     expect(stretch).toMatchObject({ outcome: 'below-smallest-limit', passages: 7 })
     expect(stretch).not.toHaveProperty('exceedingRatio')
+  })
+})
+
+describe('a limit below steerage', () => {
+  const segments = [{ id: 'a', from: 0, to: 900 }]
+  // the vessel needs 0.8 m/s through the water: 2.88 km/h
+  const cautionsAt = (
+    value: number,
+    currents: readonly number[],
+    directions: readonly (Direction | null)[],
+  ) => {
+    const study = sketchedStudy(segments, { currents, directions })
+    const [stretch] = planOf(
+      study,
+      { isByDirection: directions.length === 1 },
+      cellsOf(study, () => allows(value)),
+    ).stretches
+    return stretch!.cautions.map(({ code, facts }) => [code, facts?.['through_water_mps']])
+  }
+
+  test('in still water is told, and one that is not is left alone', () => {
+    expect(cautionsAt(2, [0], [null])).toEqual([['sign-below-steerage', 2 / 3.6]])
+    expect(cautionsAt(3, [0], [null])).toEqual([])
+  })
+
+  test('is told of a vessel with the stream, which is slower through the water than over the ground', () => {
+    // 5 km/h less 0.7 m/s are 0.689 m/s through the water
+    const found = cautionsAt(5, [0.7], ['upstream', 'downstream'])
+    expect(found.map(([code]) => code)).toEqual(['sign-below-steerage'])
+    expectClose(found[0]![1] as number, 5 / 3.6 - 0.7, EXACT)
+    expect(cautionsAt(5, [0.7], ['upstream'])).toEqual([])
   })
 })

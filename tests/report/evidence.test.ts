@@ -14,6 +14,9 @@ import {
   hostileNames,
   longWaterway,
   publication,
+  uncertain,
+  vessel,
+  viewOf,
 } from '../support/evidence.ts'
 import { badAttributes, elementsOf, parseXml } from '../support/xml.ts'
 
@@ -268,4 +271,20 @@ test('marginText rounds down on both sides of zero', () => {
 
 test('cssText lets no text end its string', () => {
   expect(cssText('a "b" \\ </style>\n')).toBe('"a \\22 b\\22  \\5c  \\3c \\2f style\\3e \\a "')
+})
+
+// 2026-12-01: where nothing makes any speed safe the axis of the bars had no ends
+test('a stretch on which no uncertain input makes a speed safe is drawn all the same', () => {
+  const { study } = harrowmere()
+  const segments = study.segments.filter(({ id }) => id === 'harrow-head-cut')
+  const view = viewOf({
+    ...study,
+    segments,
+    vessels: [vessel('cemt-ii')],
+    uncertainty: { ...uncertain, spreads: {} },
+  })
+  expect(view.plan.stretches[0]).toMatchObject({ outcome: 'below-smallest-limit' })
+  const html = evidenceDocument(view)
+  expect(html).not.toContain('NaN')
+  expect(badAttributes(parseXml((/<svg [\s\S]*?<\/svg>/.exec(sheetOf(html, 1)) ?? [''])[0]))).toEqual([])
 })

@@ -1,9 +1,12 @@
 import { execFile } from 'node:child_process'
+import { createHash } from 'node:crypto'
 import { writeFileSync } from 'node:fs'
 import { fileURLToPath } from 'node:url'
 import { promisify } from 'node:util'
+import canonicalize from 'canonicalize'
 import { beforeAll, describe, expect, test } from 'vitest'
 import { registryService, type RegistryService } from '../support/registry-service.ts'
+import type { Json } from '../support/service.ts'
 import { PLAN, PUBLICATION, studied, UNCERTAIN } from '../support/study-service.ts'
 import { temporaryFolder } from '../support/stores.ts'
 
@@ -24,10 +27,13 @@ beforeAll(async () => {
 })
 
 /** Runs the command in a folder that holds nothing but the record. */
-async function verify(text: string): Promise<{ status: number; out: string; err: string }> {
+async function verify(
+  text: string,
+  ...more: readonly string[]
+): Promise<{ status: number; out: string; err: string }> {
   const folder = temporaryFolder()
   writeFileSync(`${folder}/record.json`, text)
-  const command = ['--import', TSX, VERIFY, 'record.json']
+  const command = ['--import', TSX, VERIFY, 'record.json', ...more]
   try {
     const { stdout, stderr } = await promisify(execFile)(process.execPath, command, { cwd: folder })
     return { status: 0, out: stdout, err: stderr }
@@ -55,6 +61,38 @@ describe('the command that verifies a record', () => {
     expect(out).toContain('record-altered')
     expect(out).toMatch(/\/results\/rows\/\d+\/\d+ max_over_ground_mps: [\d.]+, now [\d.]+/)
     expect(status).toBe(1)
+  })
+
+  /** The record with a change, under a hash that fits it. */
+  const forged = (change: (record: Json) => void): string => {
+    const { record_hash: _own, ...content } = JSON.parse(record) as Json
+    change(content)
+    const hash = createHash('sha256').update(canonicalize(content) ?? '')
+    return JSON.stringify({ ...content, record_hash: `sha256:${hash.digest('hex')}` })
+  }
+
+  test('tells inputs that readers see and that are not those that were computed with, under a hash that fits', async () => {
+    const deeper = forged((content) => {
+      const [first] = content['segments'] as { properties: Json }[]
+      if (first) first.properties['depth_m'] = 5
+    })
+    const { status, out } = await verify(deeper)
+    expect(out).toContain('not-reproduced')
+    expect(out).toMatch(/\/inputs\/study\/segments\/0\/segment\/stations\/0\/depth depth: 4, now 5/)
+    expect(status).toBe(1)
+    const other = forged((content) => {
+      const { vessels } = (content['study'] as { request: { vessels: Json[] } }).request
+      vessels[0] = { class: 'cemt-iv' }
+    })
+    expect((await verify(other)).status).toBe(1)
+  })
+
+  test('holds a record against the hash that was published', async () => {
+    const { record_hash: hash } = JSON.parse(record) as { record_hash: string }
+    expect((await verify(record, hash)).status).toBe(0)
+    const { status, out } = await verify(record, `sha256:${'0'.repeat(64)}`)
+    expect([status, out.includes('record-altered')]).toEqual([1, true])
+    expect((await verify(record, 'abc')).status).toBe(2)
   })
 
   test('refuses what is no record', async () => {
