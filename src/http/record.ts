@@ -9,7 +9,7 @@ import { toMethodReply } from './methods.ts'
 import { contentOf } from './plan-reply.ts'
 import type { StudyInputs } from './study-of.ts'
 import { cellsOf, inputsOf } from './study-results.ts'
-import { studyColumns, toStudyRow } from './study-rows.ts'
+import { studyColumns, studyRow, type StudyValue } from './study-rows.ts'
 
 /** Rises when the form of the record changes. */
 const RECORD_VERSION = 1
@@ -22,7 +22,6 @@ const UNITS =
   'In `inputs.study` figures are SI: lengths and levels m, speeds and currents m/s, volumes m3, chainages m along the waterway. A pair of distances or banks is left and right looking downstream, or nearer and farther where no side is known.'
 
 type Json = Readonly<Record<string, unknown>>
-type Value = string | number | null
 
 /** Everything a limit plan rests on, as one document. */
 export interface RecordWire {
@@ -50,7 +49,7 @@ export interface RecordWire {
   readonly segments: readonly Json[]
   readonly vessel_classes: readonly Json[]
   readonly calibrations: readonly Json[]
-  readonly results: { readonly columns: readonly string[]; readonly rows: readonly (readonly Value[])[] }
+  readonly results: { readonly columns: readonly string[]; readonly rows: readonly (readonly StudyValue[])[] }
   readonly sources: readonly Json[]
   readonly record_hash: string
 }
@@ -75,12 +74,9 @@ export async function resultRows(
   store: JobStore,
 ): Promise<RecordWire['results']> {
   const columns = studyColumns(study)
-  const rows: Value[][] = []
+  const rows: StudyValue[][] = []
   for await (const cells of cellsOf(job, store)) {
-    for (const cell of cells) {
-      const row = toStudyRow(study, cell)
-      rows.push(columns.map((column) => row[column] ?? null))
-    }
+    for (const cell of cells) rows.push(studyRow(study, cell))
   }
   return { columns, rows }
 }

@@ -6,7 +6,7 @@ import { csvRow } from './csv-write.ts'
 import { studyNotFound } from './job-reply.ts'
 import { toFiniteJson } from './json.ts'
 import type { StudyInputs } from './study-of.ts'
-import { studyColumns, toStudyRow } from './study-rows.ts'
+import { studyColumns, studyRow, type StudyValue } from './study-rows.ts'
 import { turn } from './turns.ts'
 
 /** Studies whose inputs are held; those of a large one take some tens of megabytes. */
@@ -59,23 +59,21 @@ export async function* resultLines(
 ): AsyncGenerator<string> {
   const { study } = await inputsOf(job.id, store)
   const columns = studyColumns(study)
+  const lineOf = format === 'csv' ? csvRow : jsonLineOf(columns)
   if (format === 'csv') yield csvRow(columns)
   for await (const cells of cellsOf(job, store)) {
     for (let from = 0; from < cells.length; from += ROWS_AT_ONCE) {
       yield cells
         .slice(from, from + ROWS_AT_ONCE)
-        .map((cell) => lineOf(columns, toStudyRow(study, cell), format))
+        .map((cell) => lineOf(studyRow(study, cell)))
         .join('')
       await turn()
     }
   }
 }
 
-function lineOf(
-  columns: readonly string[],
-  row: Readonly<Record<string, string | number | null>>,
-  format: 'ndjson' | 'csv',
-): string {
-  if (format === 'csv') return csvRow(columns.map((column) => row[column]))
-  return `${toFiniteJson(Object.fromEntries(columns.map((column) => [column, row[column] ?? null])))}\n`
+/** Writes a row under its columns as a line of NDJSON. */
+function jsonLineOf(columns: readonly string[]): (row: readonly StudyValue[]) => string {
+  const starts = columns.map((column, i) => `${i === 0 ? '{' : ','}${JSON.stringify(column)}:`)
+  return (row) => `${starts.map((start, i) => start + toFiniteJson(row[i] ?? null)).join('')}}\n`
 }

@@ -3,10 +3,7 @@ import { toKmh, toKnots } from '../domain/units.ts'
 import type { Cell, CellAnswer, Sampled } from '../limits/cell.ts'
 import type { Study } from '../limits/study.ts'
 
-type Value = string | number | null
-
-/** A cell as a flat row: every column present, null where it does not apply. */
-export type StudyRowWire = Record<string, Value>
+export type StudyValue = string | number | null
 
 const FIRST = [
   'segment_id',
@@ -33,84 +30,68 @@ const FIRST = [
 ] as const
 const LAST = ['problem_code', 'problem_detail'] as const
 
-const percentileColumns = (percentile: number) =>
-  [
-    `max_over_ground_p${percentile}_mps`,
-    `max_over_ground_p${percentile}_kn`,
-    `max_over_ground_p${percentile}_kmh`,
-  ] as const
-
-const GOVERNED = CRITERION_IDS.map((id) => [id, `governed_by_${id.replaceAll('-', '_')}_ratio`] as const)
+const percentileColumns = (percentile: number) => [
+  `max_over_ground_p${percentile}_mps`,
+  `max_over_ground_p${percentile}_kn`,
+  `max_over_ground_p${percentile}_kmh`,
+]
 
 /** Columns of the results of a study, in their order. */
 export function studyColumns({ uncertainty }: Study): readonly string[] {
   return [
     ...FIRST,
     ...(uncertainty?.percentiles ?? []).flatMap(percentileColumns),
-    ...GOVERNED.map(([, column]) => column),
+    ...CRITERION_IDS.map((id) => `governed_by_${id.replaceAll('-', '_')}_ratio`),
     ...LAST,
   ]
 }
 
-const knots = (speed: number | null): number | null => (speed === null ? null : toKnots(speed))
-const kmh = (speed: number | null): number | null => (speed === null ? null : toKmh(speed))
+/** A speed in its units; null in each where there is none. */
+function pushSpeed(row: StudyValue[], speed: number | null | undefined): void {
+  if (typeof speed === 'number') row.push(speed, toKnots(speed), toKmh(speed))
+  else row.push(null, null, null)
+}
 
-function placeColumns(study: Study, cell: Cell): StudyRowWire {
+function pushPlace(row: StudyValue[], study: Study, cell: Cell): void {
   const segment = study.segments[cell.segment]
   const vessel = study.vessels[cell.vessel]
   if (!segment || !vessel) throw new RangeError('A cell that is not of this study')
-  return {
-    segment_id: segment.id,
-    waterway: segment.waterway ?? null,
-    chainage_from_m: segment.chainageFrom,
-    chainage_to_m: segment.chainageTo,
-    station_chainage_m: cell.answer?.stationChainage ?? null,
-    vessel_index: cell.vessel,
-    vessel_class: vessel.classId ?? null,
-    loading: vessel.loading ?? null,
-    draught_m: cell.answer?.draught ?? vessel.draught,
-    water_level_m: study.waterLevels[cell.waterLevel] ?? null,
-    current_mps: study.currents[cell.current] ?? null,
-    direction: study.directions[cell.direction] ?? null,
-  }
+  row.push(
+    segment.id,
+    segment.waterway ?? null,
+    segment.chainageFrom,
+    segment.chainageTo,
+    cell.answer?.stationChainage ?? null,
+    cell.vessel,
+    vessel.classId ?? null,
+    vessel.loading ?? null,
+    cell.answer?.draught ?? vessel.draught,
+    study.waterLevels[cell.waterLevel] ?? null,
+    study.currents[cell.current] ?? null,
+    study.directions[cell.direction] ?? null,
+  )
 }
 
-function answerColumns(answer: CellAnswer | undefined): StudyRowWire {
-  const overGround = answer?.overGround ?? null
-  return {
-    outcome: answer?.outcome ?? null,
-    governing_criterion: answer?.governing ?? null,
-    max_through_water_mps: answer?.throughWater ?? null,
-    max_over_ground_mps: overGround,
-    max_over_ground_kn: knots(overGround),
-    max_over_ground_kmh: kmh(overGround),
-    critical_speed_mps: answer?.criticalSpeed ?? null,
-  }
+function pushAnswer(row: StudyValue[], answer: CellAnswer | undefined): void {
+  row.push(answer?.outcome ?? null, answer?.governing ?? null, answer?.throughWater ?? null)
+  pushSpeed(row, answer?.overGround)
+  row.push(answer?.criticalSpeed ?? null)
 }
 
-function sampledColumns({ uncertainty }: Study, sampled: Sampled | undefined): StudyRowWire {
-  const row: StudyRowWire = {
-    samples: sampled && uncertainty ? uncertainty.samples : null,
-    no_safe_speed_ratio: sampled?.noSafeRatio ?? null,
-  }
-  uncertainty?.percentiles.forEach((percentile, i) => {
-    const speed = sampled?.percentiles[i] ?? null
-    const [inMps, inKnots, inKmh] = percentileColumns(percentile)
-    row[inMps] = speed
-    row[inKnots] = knots(speed)
-    row[inKmh] = kmh(speed)
+function pushSampled(row: StudyValue[], { uncertainty }: Study, sampled: Sampled | undefined): void {
+  row.push(sampled && uncertainty ? uncertainty.samples : null, sampled?.noSafeRatio ?? null)
+  uncertainty?.percentiles.forEach((_, i) => {
+    pushSpeed(row, sampled?.percentiles[i])
   })
-  for (const [id, column] of GOVERNED) row[column] = sampled ? (sampled.governedBy[id] ?? 0) : null
-  return row
+  for (const id of CRITERION_IDS) row.push(sampled ? (sampled.governedBy[id] ?? 0) : null)
 }
 
-/** A cell of a study as a row of its results. */
-export function toStudyRow(study: Study, cell: Cell): StudyRowWire {
-  return {
-    ...placeColumns(study, cell),
-    ...answerColumns(cell.answer),
-    ...sampledColumns(study, cell.sampled),
-    problem_code: cell.problem?.code ?? null,
-    problem_detail: cell.problem?.detail ?? null,
-  }
+/** The values of a cell in the order of the columns, null where one does not apply. */
+export function studyRow(study: Study, cell: Cell): StudyValue[] {
+  const row: StudyValue[] = []
+  pushPlace(row, study, cell)
+  pushAnswer(row, cell.answer)
+  pushSampled(row, study, cell.sampled)
+  row.push(cell.problem?.code ?? null, cell.problem?.detail ?? null)
+  return row
 }

@@ -1,10 +1,11 @@
 import { METHOD_VERSION } from '../advisory/catalogue.ts'
 import type { Cell } from '../limits/cell.ts'
 import { PlanBuilder } from '../limits/plan-builder.ts'
+import type { PlanContentWire } from './limit-plans.schema.ts'
 import { toPlanContent, toPlanRules } from './plan-reply.ts'
 import { canonicalText, recordHash, type RecordWire } from './record.ts'
 import { comparableInputs, inputsAnew } from './record-inputs.ts'
-import { studyColumns, toStudyRow } from './study-rows.ts'
+import { studyColumns, studyRow } from './study-rows.ts'
 
 const MAX_DIFFERENCES = 100
 
@@ -75,6 +76,7 @@ class Comparison {
     columns: readonly string[],
   ): void {
     columns.forEach((column, i) => {
+      if (column === 'problem_detail') return
       this.compare(published[i], recomputed[i], `${pointer}/${i}`, column)
     })
   }
@@ -100,6 +102,13 @@ type Fields = Readonly<Record<string, unknown>>
 const isObject = (value: unknown): value is Fields => typeof value === 'object' && value !== null
 
 const escaped = (name: string): string => name.replaceAll('~', '~0').replaceAll('/', '~1')
+
+/** The figures of a plan: what is said about them may be worded anew without a figure being another. */
+const withoutWords = ({ stretches, totals, unassigned_vessels }: PlanContentWire) => ({
+  stretches: stretches.map(({ cautions: _words, ...figures }) => figures),
+  totals,
+  unassigned_vessels,
+})
 
 /** What is known of a record from elsewhere, the database or the evidence on paper: it has to agree. */
 export interface Stored {
@@ -144,10 +153,12 @@ export class Verification {
     const { study } = this.#record.inputs
     const { columns, rows } = this.#record.results
     for (const cell of cells) {
-      const row = toStudyRow(study, cell)
-      const published = rows[this.#rows] ?? []
-      const recomputed = columns.map((column) => row[column] ?? null)
-      this.#comparison.compareRow(published, recomputed, `/results/rows/${this.#rows}`, columns)
+      this.#comparison.compareRow(
+        rows[this.#rows] ?? [],
+        studyRow(study, cell),
+        `/results/rows/${this.#rows}`,
+        columns,
+      )
       this.#rows += 1
     }
   }
@@ -170,15 +181,14 @@ export class Verification {
    */
   conclude(serviceVersion: string, stored?: Stored): VerificationWire {
     const { study } = this.#record.inputs
-    const { stretches, totals, unassigned_vessels } = this.#record.plan
     const { columns, rows } = this.#record.results
     const comparison = this.#comparison
     comparison.compare(columns, studyColumns(study), '/results/columns')
     this.#compareInputs()
     for (let i = this.#rows; i < rows.length; i += 1)
       comparison.compareRow(rows[i] ?? [], [], `/results/rows/${i}`, columns)
-    const content = JSON.parse(JSON.stringify(toPlanContent(this.#plan.plan(), study))) as Fields
-    comparison.compare({ stretches, totals, unassigned_vessels }, content, '/plan')
+    const content = JSON.parse(JSON.stringify(toPlanContent(this.#plan.plan(), study))) as PlanContentWire
+    comparison.compare(withoutWords(this.#record.plan), withoutWords(content), '/plan')
     const { publication } = this.#record
     const published: Versions = {
       service_version: publication?.service_version ?? this.#record.study.service_version,
