@@ -1,13 +1,15 @@
 import { readFileSync } from 'node:fs'
+import { setTimeout as pause } from 'node:timers/promises'
 import { parseArgs } from 'node:util'
 import { pino } from 'pino'
 import { buildApp } from '../src/app.ts'
 import { readConfig } from '../src/config.ts'
+import type { App } from '../src/http/app-type.ts'
 import { serviceParts } from '../src/parts.ts'
 import { type Json, KNOWN } from './fuzz/from-schema.ts'
 import { Random } from './fuzz/random.ts'
 import { ReplyCheck } from './fuzz/replies.ts'
-import { operationsOf, requestTo } from './fuzz/requests.ts'
+import { operationsOf, requestTo, SMALL_PLAN, SMALL_STUDY } from './fuzz/requests.ts'
 
 /**
  * Sends requests that are made from the document of the interface, valid and broken, and holds each reply against that
@@ -37,11 +39,52 @@ const statuses = new Map<number, number>()
 const reached = new Set<string>()
 let failures = 0
 let resets = 0
-let app = fresh()
+/** Ids of what was made, by operation: the latest one is asked for. */
+const made = new Map<string, string>()
+const OTHERS = [...(KNOWN['id'] ?? [])]
+
+function remember(operation: string, body: string): void {
+  made.set(operation, (JSON.parse(body) as { id: string }).id)
+  KNOWN['id']?.splice(0, Infinity, ...OTHERS, ...made.values(), ...made.values())
+  const study = made.get('studied')
+  if (study !== undefined) {
+    KNOWN['study_id']?.splice(0, Infinity, study)
+    SMALL_PLAN['study_id'] = study
+  }
+}
+
+async function post(target: App, url: string, payload: unknown): Promise<string> {
+  const headers = { 'content-type': 'application/json' }
+  const reply = await target.inject({ method: 'POST', url, headers, payload: JSON.stringify(payload) })
+  if (reply.statusCode >= 300) throw new Error(`${url} is refused: ${reply.body}`)
+  return reply.body
+}
+
+/** The service with a study that has succeeded, and a plan. */
+async function prepared(): Promise<App> {
+  const target = fresh()
+  const study = await post(target, '/v1/studies', SMALL_STUDY)
+  remember('studied', study)
+  const { id } = JSON.parse(study) as { id: string }
+  for (let state = 'queued'; state !== 'succeeded';) {
+    await pause(50)
+    state = (await target.inject(`/v1/studies/${id}`)).json<{ state: string }>().state
+    if (state === 'failed') throw new Error('The study failed')
+  }
+  const plan = await post(target, '/v1/limit-plans', SMALL_PLAN)
+  remember('createLimitPlan', plan)
+  await post(target, `/v1/limit-plans/${(JSON.parse(plan) as { id: string }).id}/verify`, {})
+  return target
+}
+
+/** Operations whose reply names what they made. */
+const MAKERS = new Set(['createCalibration', 'createStudy', 'createLimitPlan'])
+
+let app = await prepared()
 for (let i = 0; i < REQUESTS; i += 1) {
   if (i % FRESH_EVERY === FRESH_EVERY - 1) {
     await app.close()
-    app = fresh()
+    app = await prepared()
   }
   const random = new Random(SEED + i)
   const operation = random.pick(operations)
@@ -55,8 +98,7 @@ for (let i = 0; i < REQUESTS; i += 1) {
   }
   statuses.set(reply.statusCode, (statuses.get(reply.statusCode) ?? 0) + 1)
   if (reply.statusCode < 300) reached.add(operation.id)
-  if (operation.id === 'createCalibration' && reply.statusCode === 201)
-    KNOWN['id']?.splice(6, 4, (JSON.parse(reply.body) as { id: string }).id)
+  if (MAKERS.has(operation.id) && reply.statusCode < 300) remember(operation.id, reply.body)
   const fault = check.fault(operation, reply)
   if (fault === undefined) continue
   failures += 1

@@ -16,6 +16,7 @@ export const KNOWN: Readonly<Record<string, string[]>> = {
     'weggel-sorensen-1986',
     'nothing',
   ],
+  study_id: [],
   slug: ['impossible-input', 'nothing'],
   class: ['cemt-iv', 'cemt-va', 'recreational-ra', 'planing-boat', 'own-1'],
   vessel_class: ['cemt-iv', 'cemt-ii', 'handysize', 'own-1'],

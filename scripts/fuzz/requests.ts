@@ -8,6 +8,20 @@ const read = (name: string): Json =>
 const waterway = read('harrowmere-navigation.geojson')
 const advisory = read('createAdvisory.request.json')
 
+/** Small enough to be computed between two requests. */
+export const SMALL_STUDY = {
+  name: 'Small',
+  segments: ['harrow-long-pound', 'harrow-aqueduct'],
+  vessels: [{ class: 'cemt-ii', loading: 'empty' }, { class: 'recreational-rb' }],
+  uncertainty: { samples: 16, percentiles: [5, 50] },
+}
+export const SMALL_PLAN: Record<string, unknown> = {
+  name: 'Small',
+  study_id: '',
+  groups: [{ id: 'all', name: 'All', applies_to: {} }],
+  percentile: 5,
+}
+
 /** Bodies that are answered as they are: what is changed in them goes deep. */
 const EXAMPLES: Readonly<Record<string, readonly unknown[]>> = {
   createAdvisory: [advisory],
@@ -17,6 +31,9 @@ const EXAMPLES: Readonly<Record<string, readonly unknown[]>> = {
   createInverse: [read('createInverse.request.json')],
   createAdvisoryMatrix: [read('createAdvisoryMatrix.request.json')],
   createCalibration: [read('createCalibration.request.json')],
+  createStudy: [SMALL_STUDY],
+  createLimitPlan: [SMALL_PLAN],
+  publishLimitPlan: [read('publishLimitPlan.request.json')],
   putSegment: (waterway['features'] as Json[]).map(({ id: _, ...feature }) => feature),
   importSegments: [waterway],
 }
