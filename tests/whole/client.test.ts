@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs'
 import type { AddressInfo } from 'node:net'
+import { setTimeout as pause } from 'node:timers/promises'
 import createClient from 'openapi-fetch'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import type { components, paths } from '../../openapi/client.ts'
@@ -29,6 +30,15 @@ afterAll(async () => {
 function answered<Data>({ data, error }: { data?: Data; error?: unknown }): Data {
   if (data === undefined) expect.fail(JSON.stringify(error))
   return data
+}
+
+/** State in which a job ended. */
+async function ended(id: string): Promise<string> {
+  for (;;) {
+    const { state } = answered(await client.GET('/v1/studies/{id}', { params: { path: { id } } }))
+    if (state !== 'queued' && state !== 'running') return state
+    await pause(100)
+  }
 }
 
 test('client.ts is what openapi.json says: run npm run openapi after changing routes', async () => {
@@ -93,6 +103,32 @@ describe('a typed client', () => {
     const path = { params: { path: { id: made.id } } }
     const removed = await client.DELETE('/v1/calibrations/{id}', path)
     expect(removed.response.status).toBe(204)
+  })
+
+  test('of a regulator studies a waterway, draws limits, publishes them and has them verified', async () => {
+    const request = JSON.parse(
+      read('examples/createStudy.request.json'),
+    ) as components['schemas']['StudyRequest']
+    const small = { ...request, water_levels_m: [0], uncertainty: { ...request.uncertainty, samples: 16 } }
+    const { id: study } = answered(await client.POST('/v1/studies', { body: small }))
+    expect(await ended(study)).toBe('succeeded')
+    const rules = JSON.parse(
+      read('examples/createLimitPlan.request.json'),
+    ) as components['schemas']['LimitPlanRequest']
+    const plan = answered(await client.POST('/v1/limit-plans', { body: { ...rules, study_id: study } }))
+    expect(plan.stretches.map(({ outcome }) => outcome)).toContain('kept')
+    const path = { params: { path: { id: plan.id } } }
+    const body = JSON.parse(
+      read('examples/publishLimitPlan.request.json'),
+    ) as components['schemas']['PublishRequest']
+    const publication = answered(await client.POST('/v1/limit-plans/{id}/publish', { ...path, body }))
+    expect(publication.record_hash).toMatch(/^sha256:/)
+    const { id: job } = answered(await client.POST('/v1/limit-plans/{id}/verify', path))
+    expect(await ended(job)).toBe('succeeded')
+    const found = answered(await client.GET('/v1/limit-plans/{id}/verify', path))
+    expect(found.verdict).toBe('reproduced')
+    const notice = answered(await client.GET('/v1/limit-plans/{id}/notice', path))
+    expect(notice.limitations).toHaveLength(plan.stretches.length)
   })
 
   test('of a keeper of the registry writes a segment at its revision and is told of a stale one', async () => {
