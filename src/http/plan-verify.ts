@@ -9,17 +9,16 @@ import type { App, Routes } from './app-type.ts'
 import { markUnfinished, toJobReply } from './job-reply.ts'
 import { planOf, PlanParams } from './limit-plans.ts'
 import { formatParameter, negotiate } from './negotiate.ts'
-import { contentOf, publicationOf } from './plan-reply.ts'
+import { publicationOf } from './plan-reply.ts'
 import { problemResponses } from './problems.ts'
 import { recordText } from './publication.ts'
-import type { RecordWire } from './record.ts'
+import { frozenPlan, type RecordWire } from './record.ts'
 import { authorOf } from './segment-writes.ts'
 import { openView, type Service } from './service.ts'
 import { accepted } from './studies.ts'
 import { JobReply } from './studies.schema.ts'
 import { cellsOf } from './study-results.ts'
 import { Verification, type Stored } from './verification.ts'
-import type { LimitPlanWire } from './limit-plans.schema.ts'
 
 const JsonQuery = z.strictObject({ format: formatParameter(['json']) })
 
@@ -71,14 +70,7 @@ function storedOf(plan: PlanRecord): Stored {
   const publication = publicationOf(plan)
   const { record_hash: recordHash, ...particulars } = publication ?? { record_hash: undefined }
   return {
-    plan: {
-      id: plan.id,
-      name: plan.name,
-      study_id: plan.studyId,
-      created: plan.created,
-      request: plan.request as unknown as LimitPlanWire,
-      ...contentOf(plan),
-    },
+    plan: frozenPlan(plan),
     ...(publication && { publication: particulars as NonNullable<Stored['publication']> }),
     ...(recordHash !== undefined && { recordHash }),
   }

@@ -97,6 +97,16 @@ function assertRecordable({ cellsTotal }: JobRecord): void {
   )
 }
 
+/** What a record says of the plan itself. */
+export const frozenPlan = (plan: PlanRecord): RecordWire['plan'] => ({
+  id: plan.id,
+  name: plan.name,
+  study_id: plan.studyId,
+  created: plan.created,
+  request: plan.request as unknown as LimitPlanWire,
+  ...contentOf(plan),
+})
+
 /**
  * The record of a plan.
  *
@@ -112,14 +122,7 @@ export async function recordOf(
   const record: Omit<RecordWire, 'record_hash'> = {
     record_version: RECORD_VERSION,
     statement: STATEMENT,
-    plan: {
-      id: plan.id,
-      name: plan.name,
-      study_id: plan.studyId,
-      created: plan.created,
-      request: plan.request as unknown as LimitPlanWire,
-      ...contentOf(plan),
-    },
+    plan: frozenPlan(plan),
     ...(publication && { publication }),
     study: {
       id: study.id,
