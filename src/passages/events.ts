@@ -117,6 +117,7 @@ export class EventFinder {
   #closed(open: OpenEvent): PassageEvent {
     const { judgement, placement } = open.peak
     const { excess } = judgement
+    const figures = this.#judge.asSailed(judgement, placement)
     const ofPosition = this.#judge.effectOfOffset(judgement, placement, POSITION_ERROR)
     return {
       fairway: open.fairway,
@@ -126,7 +127,7 @@ export class EventFinder {
       last: open.last,
       reports: open.reports,
       distance: open.distance,
-      peak: open.peak,
+      peak: { ...open.peak, judgement: { ...judgement, ...figures } },
       meanExcess: open.excessSum / open.excessCount,
       postedPeakExcess: open.postedPeak,
       firstLine: open.firstLine,
