@@ -186,8 +186,9 @@ export class Judge {
 export function conditionsOf(report: Sailed, { direction }: Whereabouts, judging: Judging): Conditions {
   const waterLevel = Number.isNaN(report.waterLevel) ? judging.waterLevel : report.waterLevel
   const current = Number.isNaN(report.current) ? judging.current : report.current
-  const water = { waterLevel, current, isWaterLevelGiven: true, isCurrentGiven: true }
-  return direction ? { ...water, direction } : water
+  return direction
+    ? { waterLevel, current, isWaterLevelGiven: true, isCurrentGiven: true, direction }
+    : { waterLevel, current, isWaterLevelGiven: true, isCurrentGiven: true }
 }
 
 /** What totals need of a report as sailed. */
