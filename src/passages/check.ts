@@ -71,7 +71,7 @@ const PAUSES: ReadonlySet<Status> = new Set<Status>([
 const IN_WATER: ReadonlySet<Status> = new Set<Status>(['matched', 'stationary', 'ambiguous'])
 
 interface Followed {
-  readonly timeline: Timeline
+  readonly timeline: Timeline<Mark | Pause>
   readonly events: EventFinder
   readonly passages: PassageFinder
   /** takes a report whose turn has come */
@@ -196,7 +196,7 @@ export class PassageCheck {
     if (known) return known
     const { maxGap, minEventReports, judging } = this.#settings
     const vessel: Followed = {
-      timeline: new Timeline(maxGap),
+      timeline: new Timeline<Mark | Pause>(maxGap),
       events: new EventFinder(this.#judge, maxGap, minEventReports, (event) => {
         this.#events.push(event)
         if (event.certainty === 'certain') this.#certain += 1
