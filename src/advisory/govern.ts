@@ -9,13 +9,13 @@ import { situationOf, type Situation } from './situation.ts'
 /** What governs, without the bounds that do not. */
 export type Governed = Omit<Decision, 'bounds'>
 
-/** The bounds of the water as far as they may govern: those above the lowest so far are not solved. */
-function lowestBounds(situation: Situation): Bound[] {
+/** The bounds of the water as far as they may govern: those above the lowest so far, or above `most`, are not solved. */
+function lowestBounds(situation: Situation, most: number): Bound[] {
   const { maxSpeed } = situation.vessel
-  let most = maxSpeed
+  let stop = Math.min(most, maxSpeed)
   return waterCriteria(situation).map((criterion) => {
-    const firstSpeed = criterion.firstSpeed(0, maxSpeed, most)
-    most = Math.min(most, firstSpeed)
+    const firstSpeed = criterion.firstSpeed(0, maxSpeed, stop)
+    stop = Math.min(stop, firstSpeed)
     return { criterion, firstSpeed }
   })
 }
@@ -34,7 +34,7 @@ export function governingBounds(
 ): SegmentBounds {
   const [first, ...rest] = segment.stations.map((station) => {
     const situation = situationOf(segment, station, vessel, conditions, options)
-    return { situation, water: lowestBounds(situation) }
+    return { situation, water: lowestBounds(situation, Infinity) }
   })
   if (!first) throw new RangeError('A segment has at least one station')
   return [first, ...rest]
@@ -44,6 +44,8 @@ export function governingBounds(
  * What governs at a station, in the direction that is asked for or the stricter one: the same situation, outcome, speeds
  * and criterion as of `decide`, to the last digit, for callers that report no other bound.
  *
+ * @param most  speed through the water up to which what governs is of interest, m/s; where nothing governs up to it, all
+ *   that is told is that: some speed above it
  * @throws Fault `impossible-input` when the vessel does not fit
  */
 export function govern(
@@ -52,9 +54,10 @@ export function govern(
   vessel: Vessel,
   conditions: Conditions,
   options: Options,
+  most = Infinity,
 ): Governed {
   const situation = situationOf(segment, station, vessel, conditions, options)
-  const bounds = { situation, water: lowestBounds(situation) }
+  const bounds = { situation, water: lowestBounds(situation, most) }
   if (conditions.direction) return decideDirection(bounds, conditions.direction)
   const [first, ...rest] = directionsOf(conditions).map((direction) => decideDirection(bounds, direction))
   if (!first) throw new RangeError('There is a direction to answer for, or none is asked for')

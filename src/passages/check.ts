@@ -6,7 +6,7 @@ import { bankDistances } from './maxima.ts'
 import { PassageFinder } from './passage.ts'
 import type { Fairway, Placement } from './placement.ts'
 import { STATUSES, type LogRow, type PositionReport, type Status } from './position-report.ts'
-import { Timeline, type Mark } from './timeline.ts'
+import { Timeline, type Mark, type Pause } from './timeline.ts'
 import { Tracks } from './tracks.ts'
 import { Fleet, type Convoy, type FindClass, type VesselGuess } from './vessel-guess.ts'
 
@@ -59,9 +59,8 @@ export interface CheckSummary {
 
 const NO_EVENTS: readonly PassageEvent[] = []
 
-/** Reports that say where a vessel was: they enter its timeline, others do not. */
-const IN_TIMELINE: ReadonlySet<Status> = new Set<Status>([
-  'matched',
+/** Reports that say that a vessel was elsewhere or lay still. They enter its timeline as the matched ones do, others do not. */
+const PAUSES: ReadonlySet<Status> = new Set<Status>([
   'stationary',
   'outside-fairway',
   'ambiguous',
@@ -72,9 +71,11 @@ const IN_TIMELINE: ReadonlySet<Status> = new Set<Status>([
 const IN_WATER: ReadonlySet<Status> = new Set<Status>(['matched', 'stationary', 'ambiguous'])
 
 interface Followed {
-  readonly timeline: Timeline
+  readonly timeline: Timeline<Mark | Pause>
   readonly events: EventFinder
   readonly passages: PassageFinder
+  /** takes a report whose turn has come */
+  readonly settle: (mark: Mark | Pause) => void
   classId: string
   isMatched: boolean
 }
@@ -133,7 +134,8 @@ export class PassageCheck {
     const { report } = row
     this.#from = Math.min(this.#from, report.time)
     this.#to = Math.max(this.#to, report.time)
-    if (IN_TIMELINE.has(status)) this.#follow({ report, placement, judgement }, guess)
+    if (status === 'matched') this.#follow(report, { report, placement, judgement }, guess)
+    else if (PAUSES.has(status)) this.#follow(report, { report: { time: report.time } }, guess)
     const distances = judgement?.distances ?? this.#distances(report, placement)
     return { row, status, reason, placement, guess, judgement, distances }
   }
@@ -159,11 +161,8 @@ export class PassageCheck {
 
   /** After the last row: closes what is open. */
   end(): void {
-    for (const { timeline, events, passages, classId } of this.#vessels.values()) {
-      timeline.end((mark) => {
-        events.take(mark)
-        passages.take(mark, mark.judgement?.guess.classId ?? classId)
-      })
+    for (const { timeline, events, passages, settle } of this.#vessels.values()) {
+      timeline.end(settle)
       events.end()
       passages.end()
     }
@@ -185,14 +184,11 @@ export class PassageCheck {
     }
   }
 
-  #follow(mark: Mark, guess: VesselGuess): void {
-    const vessel = this.#vesselOf(mark.report.vesselKey)
+  #follow({ vesselKey }: PositionReport, mark: Mark | Pause, guess: VesselGuess): void {
+    const vessel = this.#vesselOf(vesselKey)
     vessel.classId = guess.classId
-    vessel.isMatched ||= mark.placement.status === 'matched'
-    vessel.timeline.add(mark, (settled) => {
-      vessel.events.take(settled)
-      vessel.passages.take(settled, settled.judgement?.guess.classId ?? vessel.classId)
-    })
+    vessel.isMatched ||= mark.placement !== undefined
+    vessel.timeline.add(mark, vessel.settle)
   }
 
   #vesselOf(key: string): Followed {
@@ -200,7 +196,7 @@ export class PassageCheck {
     if (known) return known
     const { maxGap, minEventReports, judging } = this.#settings
     const vessel: Followed = {
-      timeline: new Timeline(maxGap),
+      timeline: new Timeline<Mark | Pause>(maxGap),
       events: new EventFinder(this.#judge, maxGap, minEventReports, (event) => {
         this.#events.push(event)
         if (event.certainty === 'certain') this.#certain += 1
@@ -209,6 +205,10 @@ export class PassageCheck {
       passages: new PassageFinder(maxGap, judging.tolerance, (passage) => {
         this.#groups.add(passage)
       }),
+      settle: (mark) => {
+        vessel.events.take(mark)
+        vessel.passages.take(mark, mark.judgement?.guess.classId ?? vessel.classId)
+      },
       classId: '',
       isMatched: false,
     }

@@ -2,7 +2,7 @@ import type { Direction } from '../domain/segment.ts'
 import type { Judge } from './judge.ts'
 import type { Judgement } from './judgement.ts'
 import type { Fairway } from './placement.ts'
-import type { Mark } from './timeline.ts'
+import type { Mark, Pause } from './timeline.ts'
 
 /** Standard deviation of a speed over ground from satellite positioning, kn: 0.5 (own choice), in m/s. */
 const SPEED_ERROR = (0.5 * 1852) / 3600
@@ -60,9 +60,9 @@ export function normalDistribution(x: number): number {
   return x >= 0 ? 1 - tail : tail
 }
 
-const isJudged = (mark: Mark): mark is JudgedMark => mark.judgement !== undefined
+const isJudged = (mark: Mark | Pause): mark is JudgedMark => mark.judgement !== undefined
 
-function isExceeding(mark: Mark): mark is JudgedMark {
+function isExceeding(mark: Mark | Pause): mark is JudgedMark {
   return (
     isJudged(mark) &&
     (mark.judgement.verdict === 'exceeds' || mark.judgement.verdict === 'depends-on-draught')
@@ -91,7 +91,7 @@ export class EventFinder {
     this.#found = found
   }
 
-  take(mark: Mark): void {
+  take(mark: Mark | Pause): void {
     if (this.#open && !this.#belongs(this.#open, mark)) this.end()
     if (!isExceeding(mark)) return
     if (this.#open) extend(this.#open, mark)
@@ -104,10 +104,10 @@ export class EventFinder {
     if (open && open.reports >= this.#minReports) this.#found(this.#closed(open))
   }
 
-  #belongs({ last, fairway, direction }: OpenEvent, { report, placement, judgement }: Mark): boolean {
+  #belongs({ last, fairway, direction }: OpenEvent, mark: Mark | Pause): boolean {
+    if (!isExceeding(mark)) return false
+    const { report, placement } = mark
     return (
-      judgement !== undefined &&
-      (judgement.verdict === 'exceeds' || judgement.verdict === 'depends-on-draught') &&
       placement.fairway === fairway &&
       report.time - last.report.time <= this.#maxGap &&
       (direction === undefined || placement.direction === undefined || placement.direction === direction)
@@ -117,6 +117,7 @@ export class EventFinder {
   #closed(open: OpenEvent): PassageEvent {
     const { judgement, placement } = open.peak
     const { excess } = judgement
+    const figures = this.#judge.asSailed(judgement, placement)
     const ofPosition = this.#judge.effectOfOffset(judgement, placement, POSITION_ERROR)
     return {
       fairway: open.fairway,
@@ -126,7 +127,7 @@ export class EventFinder {
       last: open.last,
       reports: open.reports,
       distance: open.distance,
-      peak: open.peak,
+      peak: { ...open.peak, judgement: { ...judgement, ...figures } },
       meanExcess: open.excessSum / open.excessCount,
       postedPeakExcess: open.postedPeak,
       firstLine: open.firstLine,

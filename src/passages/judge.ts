@@ -1,6 +1,7 @@
 import { cautionsAt } from '../advisory/cautions.ts'
-import { currentAlong } from '../advisory/direction.ts'
+import { currentAlong, directionsOf } from '../advisory/direction.ts'
 import { effectsAt, waveEnergies, type Effects } from '../advisory/effects.ts'
+import type { Situation } from '../advisory/situation.ts'
 import type { Conditions } from '../domain/conditions.ts'
 import type { Vessel } from '../domain/vessel.ts'
 import { maxOf, Maxima, postedOverGround, type Maximum } from './maxima.ts'
@@ -55,6 +56,8 @@ function shown(first: Assessed, second: Assessed): Assessed {
   return Number.isNaN(strict.max) && other.exceeds && !Number.isNaN(other.max) ? other : strict
 }
 
+const NO_CAUTIONS: readonly string[] = []
+
 /** Holds matched reports against the recommended maximum. */
 export class Judge {
   readonly #judging: Judging
@@ -70,23 +73,20 @@ export class Judge {
    */
   judge({ report, placement, guess }: MatchedReport): Judgement | undefined {
     const conditions = conditionsOf(report, placement, this.#judging)
-    const all: Assessed[] = []
-    for (const vessel of guess.variants) {
-      const assessed = this.#assess(report, placement, vessel, conditions)
-      if (assessed) all.push(assessed)
-    }
+    const all = this.#assessAll(report, placement, guess, conditions)
     const [first, second] = all
     if (!first) return undefined
     const chosen = second ? shown(first, second) : first
-    const { maximum, max } = chosen
-    const { situation, vessel, decision } = maximum
+    const { maximum } = chosen
+    const { situation, vessel, decision, leftBank } = maximum
     const throughWater = report.speed - currentAlong(conditions, decision.direction)
     const verdict = verdictOf(all)
     const { isFull } = this.#judging
-    const isShown = isFull || verdict !== 'within'
-    const effects = isShown && throughWater > 0 ? effectsAt(situation, throughWater) : undefined
+    const effects = isFull && throughWater > 0 ? effectsAt(situation, throughWater) : undefined
+    const figures = effects ? sailedFigures(effects, leftBank) : totalsOf(situation, throughWater, leftBank)
     const postedLimit = postedOverGround(decision)
-    const figures = figuresOf(maximum, throughWater, effects)
+    // a maximum that the verdict did not need may be of another speed above the one sailed
+    const max = isFull || verdict !== 'within' ? chosen.max : NaN
     return {
       guess,
       vessel,
@@ -106,7 +106,7 @@ export class Judge {
       criticalRatio: figures.criticalRatio,
       waveHeights: figures.waveHeights,
       waveEnergies: figures.waveEnergies,
-      cautions: isFull ? cautionsOf(chosen, effects, guess, all.length) : [],
+      cautions: isFull ? cautionsOf(chosen, effects, guess, all.length) : NO_CAUTIONS,
     }
   }
 
@@ -128,16 +128,46 @@ export class Judge {
     return changes.length === 0 ? 0 : changes.reduce((sum, change) => sum + change, 0) / changes.length
   }
 
+  /** Figures of a judged report as sailed, whether or not totals needed them. */
+  asSailed(judgement: Judgement, placement: Whereabouts): SailedFigures {
+    const { vessel, conditions, throughWater } = judgement
+    if (this.#judging.isFull) return judgement
+    const found = throughWater > 0 ? this.#maxima.situation(placement, vessel, conditions) : undefined
+    return found ? sailedFigures(effectsAt(found.situation, throughWater), found.leftBank) : UNMOVED
+  }
+
+  /** Each loading that fits. */
+  #assessAll(
+    report: Sailed,
+    placement: Whereabouts,
+    guess: VesselGuess,
+    conditions: Conditions,
+  ): readonly Assessed[] {
+    const { isFull, tolerance } = this.#judging
+    const mostOf = (vessel: Vessel) =>
+      isFull ? Infinity : mostOfInterest(report, conditions, vessel, tolerance)
+    const [vessel, other] = guess.variants
+    // of two the stricter one is told, so that one of them has to be known
+    const first = this.#assess(report, placement, conditions, {
+      vessel,
+      most: other ? Infinity : mostOf(vessel),
+    })
+    if (!other) return first ? [first] : []
+    const most = first ? Math.max(mostOf(other), first.maximum.decision.speed) : Infinity
+    const second = this.#assess(report, placement, conditions, { vessel: other, most })
+    return [first, second].filter((assessed) => assessed !== undefined)
+  }
+
   #assess(
     report: Sailed,
     placement: Whereabouts,
-    vessel: Vessel,
     conditions: Conditions,
+    { vessel, most }: { readonly vessel: Vessel; readonly most: number },
   ): Assessed | undefined {
     const { position, tolerance } = this.#judging
     const maximum =
       position === 'actual'
-        ? this.#maxima.actual(placement, vessel, conditions)
+        ? this.#maxima.actual(placement, vessel, conditions, most)
         : this.#maxima.onSailingLine(placement, vessel, conditions)
     if (!maximum) return undefined
     const max = maxOf(maximum.decision)
@@ -156,18 +186,33 @@ export class Judge {
 export function conditionsOf(report: Sailed, { direction }: Whereabouts, judging: Judging): Conditions {
   const waterLevel = Number.isNaN(report.waterLevel) ? judging.waterLevel : report.waterLevel
   const current = Number.isNaN(report.current) ? judging.current : report.current
-  const water = { waterLevel, current, isWaterLevelGiven: true, isCurrentGiven: true }
-  return direction ? { ...water, direction } : water
+  return direction
+    ? { waterLevel, current, isWaterLevelGiven: true, isCurrentGiven: true, direction }
+    : { waterLevel, current, isWaterLevelGiven: true, isCurrentGiven: true }
 }
 
-function figuresOf(
-  { situation, leftBank }: Maximum,
-  throughWater: number,
-  effects: Effects | undefined,
-): SailedFigures {
-  if (effects) return sailedFigures(effects, leftBank)
-  if (!(throughWater > 0)) return UNMOVED
-  return energiesOnly(waveEnergies(situation, throughWater), leftBank)
+/** What totals need of a report as sailed. */
+function totalsOf(situation: Situation, throughWater: number, leftBank: 0 | 1): SailedFigures {
+  return throughWater > 0 ? energiesOnly(waveEnergies(situation, throughWater), leftBank) : UNMOVED
+}
+
+/** Margin of a comparison of speeds, m/s: rounding is far below it. */
+const SPEED_MARGIN = 1e-6
+
+/**
+ * Speed through the water up to which what governs decides the verdict, m/s: a maximum above it is safe and not exceeded.
+ * Infinity where the direction that the maximum is for follows from it.
+ */
+function mostOfInterest(
+  report: Sailed,
+  conditions: Conditions,
+  { minSteerageSpeed }: Vessel,
+  tolerance: number,
+): number {
+  const { direction } = conditions
+  if (direction === undefined && directionsOf(conditions).length > 1) return Infinity
+  const current = currentAlong(conditions, direction)
+  return Math.max(report.speed - tolerance - current, minSteerageSpeed, -current) + SPEED_MARGIN
 }
 
 function cautionsOf(

@@ -18,7 +18,10 @@ export interface Judging {
   readonly tolerance: number
   /** which maximum the verdict uses */
   readonly position: 'actual' | 'sailing-line'
-  /** whether cautions and the maximum on the sailing line are wanted beside the verdict */
+  /**
+   * whether cautions, figures as sailed and the maximum on the sailing line are wanted beside the verdict, and the maximum
+   * where the verdict can do without
+   */
   readonly isFull: boolean
 }
 
@@ -33,10 +36,10 @@ export interface Judgement {
   readonly throughWater: number
   /** to the left and to the right waterline at the level, from the position as reported, m */
   readonly distances: readonly [left: number, right: number]
-  /** of the maximum that the verdict uses */
+  /** of the maximum that the verdict uses; of a report within, where totals only are wanted, of one above its speed */
   readonly outcome: Outcome
   readonly governing: CriterionId
-  /** that the verdict uses, over ground, m/s; NaN without a safe speed */
+  /** that the verdict uses, over ground, m/s; NaN without a safe speed, and where totals do not need it */
   readonly maxOverGround: number
   readonly sailingLineMax: number
   readonly excess: number
@@ -77,7 +80,7 @@ export function sailedFigures(effects: Effects, leftBank: 0 | 1): SailedFigures 
   }
 }
 
-/** What totals need of a report that is within its maximum. */
+/** What totals need of a report. */
 export const energiesOnly = (energies: readonly [number, number], leftBank: 0 | 1): SailedFigures => ({
   ...UNMOVED,
   waveEnergies: leftBank === 0 ? energies : [energies[1], energies[0]],

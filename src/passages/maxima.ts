@@ -42,12 +42,22 @@ export class Maxima {
   /** on the sailing line of segments that are the same all along; null where the vessel does not fit */
   readonly #onLine = new WeakMap<Vessel, Map<string, Governed | null>>()
 
-  /** At the position as reported; where the hull cannot float there, on the sailing line. Undefined when it fits neither. */
-  actual(placement: Whereabouts, vessel: Vessel, conditions: Conditions): Maximum | undefined {
+  /**
+   * At the position as reported; where the hull cannot float there, on the sailing line.
+   *
+   * @param most  as of `govern`
+   * @returns undefined when the vessel fits neither
+   */
+  actual(
+    placement: Whereabouts,
+    vessel: Vessel,
+    conditions: Conditions,
+    most = Infinity,
+  ): Maximum | undefined {
     const seen = seenBy(placement, vessel, conditions)
     const { water, distances, leftBank } = seen
     const decision = fitting(() =>
-      govern(water.segment, water.station, vessel, conditions, optionsOf(placement)),
+      govern(water.segment, water.station, vessel, conditions, optionsOf(placement), most),
     )
     if (decision) {
       const { situation } = decision
@@ -64,10 +74,21 @@ export class Maxima {
     const decision = this.#decisionOnLine(placement, vessel, conditions)
     if (!decision) return undefined
     const { water, ...seen } = seenBy(placement, vessel, conditions)
-    const situation = fitting(() =>
-      situationOf(water.segment, water.station, vessel, conditions, optionsOf(placement)),
-    )
-    return { vessel, decision, situation: situation ?? decision.situation, ...seen }
+    const situation = situationIn(water, placement, vessel, conditions) ?? decision.situation
+    return { vessel, decision, situation, ...seen }
+  }
+
+  /** The vessel as it is where it has a maximum, whichever is asked for; undefined when it has none. */
+  situation(
+    placement: Whereabouts,
+    vessel: Vessel,
+    conditions: Conditions,
+  ): Pick<Maximum, 'situation' | 'leftBank'> | undefined {
+    const { water, leftBank } = seenBy(placement, vessel, conditions)
+    const situation =
+      situationIn(water, placement, vessel, conditions) ??
+      this.#decisionOnLine(placement, vessel, conditions)?.situation
+    return situation && { situation, leftBank }
   }
 
   #decisionOnLine(placement: Whereabouts, vessel: Vessel, conditions: Conditions): Governed | undefined {
@@ -87,6 +108,15 @@ export class Maxima {
     known.set(key, found ?? null)
     return found
   }
+}
+
+function situationIn(
+  { segment, station }: ActualWater,
+  placement: Whereabouts,
+  vessel: Vessel,
+  conditions: Conditions,
+): Situation | undefined {
+  return fitting(() => situationOf(segment, station, vessel, conditions, optionsOf(placement)))
 }
 
 /** Over ground, m/s; NaN without a safe speed. */

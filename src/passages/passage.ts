@@ -1,6 +1,6 @@
 import type { Direction } from '../domain/segment.ts'
 import type { Fairway } from './placement.ts'
-import type { Mark } from './timeline.ts'
+import type { Mark, Pause } from './timeline.ts'
 
 /** Matched reports of one vessel through one segment in one direction. SI; NaN where unknown. */
 export interface Passage {
@@ -70,8 +70,8 @@ export class PassageFinder {
   }
 
   /** @param classId  class of the vessel, as of this report */
-  take(mark: Mark, classId: string): void {
-    if (mark.placement.status !== 'matched') return
+  take(mark: Mark | Pause, classId: string): void {
+    if (mark.placement === undefined || mark.placement.status !== 'matched') return
     if (this.#open && !this.#belongs(this.#open, mark)) this.end()
     if (this.#open) this.#extend(this.#open, mark, classId)
     else this.#open = this.#opened(mark, classId)

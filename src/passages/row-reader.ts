@@ -26,9 +26,22 @@ function loadingOf(cell: Cell): Loading | undefined {
   return text === 'laden' || text === 'empty' ? text : undefined
 }
 
+/** Keys by MMSI, so that rows of a vessel share one: what is looked up by it need not read its letters each time. */
+const KEYS = new Map<string, string>()
+const MOST_KEYS = 20_000
+
+function keyOfMmsi(mmsi: string): string {
+  const known = KEYS.get(mmsi)
+  if (known !== undefined) return known
+  if (KEYS.size >= MOST_KEYS) KEYS.clear()
+  const key = `mmsi:${mmsi}`
+  KEYS.set(detachedText(mmsi), key)
+  return key
+}
+
 /** What tells vessels apart; empty when neither number can be used. */
 function keyOf(mmsi: string | undefined, eni: string | undefined): string {
-  if (mmsi) return `mmsi:${mmsi}`
+  if (mmsi) return keyOfMmsi(mmsi)
   return eni ? `eni:${eni}` : ''
 }
 

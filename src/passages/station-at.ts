@@ -20,9 +20,12 @@ function indexAt(stations: readonly Station[], chainage: number): number {
  * @param chainage  m
  */
 export function stationAt({ stations }: Pick<Segment, 'stations'>, chainage: number): Station {
-  const i = stations.length > 1 ? indexAt(stations, chainage) : -1
-  const [a, b] = [stations[i], stations[i + 1]]
-  if (!a || !b) return a ?? stations[0]
+  if (stations.length === 1) return stations[0]
+  const i = indexAt(stations, chainage)
+  if (i < 0) return stations[0]
+  const a = stations[i] as Station
+  const b = stations[i + 1]
+  if (!b) return a
   const [from = 0, to = 0] = [a.chainage, b.chainage]
   const share = (chainage - from) / (to - from)
   const at = (start: number, end: number) => start + share * (end - start)

@@ -10,12 +10,19 @@ export interface Mark {
   readonly judgement: Judgement | undefined
 }
 
+/** A report that is not matched: all that is kept of it is that the vessel was elsewhere, or lay still. */
+export interface Pause {
+  readonly report: { readonly time: number }
+  readonly placement?: undefined
+  readonly judgement?: undefined
+}
+
 /**
  * Reports of one vessel in the order of their times: each is handed on when no earlier one may come any more.
  * Holds the reports of the last `maxGap` seconds.
  */
-export class Timeline {
-  #waiting: Mark[] = []
+export class Timeline<Item extends Mark | Pause = Mark> {
+  #waiting: Item[] = []
   #newest = -Infinity
   readonly #maxGap: number
 
@@ -25,12 +32,12 @@ export class Timeline {
   }
 
   /** Takes a report and hands on those that have had their time. */
-  add(mark: Mark, settle: (mark: Mark) => void): void {
+  add(mark: Item, settle: (mark: Item) => void): void {
     const waiting = this.#waiting
     const { time } = mark.report
     this.#newest = Math.max(this.#newest, time)
     let at = waiting.length
-    while (at > 0 && (waiting[at - 1] as Mark).report.time > time) at -= 1
+    while (at > 0 && (waiting[at - 1] as Item).report.time > time) at -= 1
     if (at === waiting.length) waiting.push(mark)
     else waiting.splice(at, 0, mark)
     let settled = 0
@@ -40,12 +47,12 @@ export class Timeline {
       settled += 1
     }
     // one for one as a rule
-    if (settled === 1) settle(waiting.shift() as Mark)
+    if (settled === 1) settle(waiting.shift() as Item)
     else if (settled > 1) for (const old of waiting.splice(0, settled)) settle(old)
   }
 
   /** Hands on all that is left. */
-  end(settle: (mark: Mark) => void): void {
+  end(settle: (mark: Item) => void): void {
     const left = this.#waiting
     this.#waiting = []
     for (const mark of left) settle(mark)
