@@ -6,9 +6,9 @@ import { type Layout, layoutOf } from '../passages/layout.ts'
 import type { LogRow } from '../passages/position-report.ts'
 import { type Refusal, unreadableRow } from '../passages/rejection.ts'
 import { reportOfCells, reportOfObject } from '../passages/row-reader.ts'
-import { cellsOfLine, type Delimiter, delimiterOf } from './csv-cells.ts'
+import { cellsOfLine, cellsOfLines, type Delimiter, delimiterOf } from './csv-cells.ts'
+import { type LineBlock, readLineBlocks } from './line-blocks.ts'
 import { type Line, MAX_LINE_BYTES, readLines } from './lines.ts'
-import { readTextLines } from './text-lines.ts'
 import type { Log } from './passage-answer.ts'
 import { refused } from './validation.ts'
 
@@ -36,6 +36,9 @@ const rejected = (line: number, refusal: Refusal): LogRow => ({ rejected: unread
 const isBlank = (line: string): boolean => line === '' || (line.charCodeAt(0) <= BLANK && line.trim() === '')
 const BLANK = 32
 
+/** Whether cells may be those of a line that holds nothing. */
+const isBlankRecord = (cells: readonly string[]): boolean => cells.length <= 1 && isBlank(cells[0] ?? '')
+
 /**
  * Rows of a log in CSV, `,` or `;` as the header shows; every physical line but the header and empty ones is a row.
  * A header that cannot be used is thrown before the first row; a line that cannot be read is a rejected row.
@@ -46,8 +49,8 @@ export function readLogCsv(stream: Readable): Log {
 }
 
 async function* csvRows(stream: Readable, reader: CsvLog): AsyncGenerator<LogRow[]> {
-  for await (const lines of readTextLines(stream)) {
-    const rows = reader.read(lines)
+  for await (const block of readLineBlocks(stream)) {
+    const rows = block ? reader.read(block) : reader.skip()
     if (rows.length > 0) yield rows
   }
   reader.assertHeader()
@@ -57,46 +60,68 @@ async function* csvRows(stream: Readable, reader: CsvLog): AsyncGenerator<LogRow
 class CsvLog {
   #layout: Layout | undefined
   #delimiter: Delimiter = ','
+  /** lines read so far */
   #number = 0
 
   get ignoredColumns(): readonly string[] {
     return this.#layout?.ignoredColumns ?? []
   }
 
-  read(lines: readonly (string | undefined)[]): LogRow[] {
+  read(block: LineBlock): LogRow[] {
+    const first = this.#layout ? 0 : this.#readHeader(block)
     const rows: LogRow[] = []
-    for (const line of lines) {
+    if (!this.#layout || first === block.lines) return rows
+    const records = this.#records(block, first)
+    for (let i = first; i < block.lines; i += 1) {
+      const cells = records[i - first] ?? []
       this.#number += 1
-      if (line !== undefined && isBlank(line)) continue
-      if (this.#layout) rows.push(this.#row(line, this.#layout))
-      else this.#readHeader(line)
+      if (isBlankRecord(cells) && isBlank(block.line(i))) continue
+      rows.push(this.#row(cells, this.#layout, () => block.line(i)))
     }
     return rows
+  }
+
+  /** A line that is too long to be read. */
+  skip(): LogRow[] {
+    this.#number += 1
+    if (this.#layout) return [rejected(this.#number, TOO_LONG)]
+    throw new Fault('line-too-long', TOO_LONG.detail, { facts: { limit: MAX_LINE_BYTES } })
   }
 
   assertHeader(): void {
     if (!this.#layout) throw new Fault('malformed-csv', 'The body is empty: send a header line and rows')
   }
 
-  #readHeader(line: string | undefined): void {
-    if (line === undefined) {
-      throw new Fault('line-too-long', TOO_LONG.detail, { facts: { limit: MAX_LINE_BYTES } })
+  /** Reads up to the header. Returns the number of lines that are read by then. */
+  #readHeader(block: LineBlock): number {
+    for (let i = 0; i < block.lines; i += 1) {
+      const line = block.line(i)
+      this.#number += 1
+      if (isBlank(line)) continue
+      this.#delimiter = delimiterOf(line)
+      const { layout, errors } = layoutOf(cellsOfLine(line, this.#delimiter), this.#number)
+      if (errors) throw refused(errors)
+      this.#layout = layout
+      return i + 1
     }
-    this.#delimiter = delimiterOf(line)
-    const { layout, errors } = layoutOf(cellsOfLine(line, this.#delimiter), this.#number)
-    if (errors) throw refused(errors)
-    this.#layout = layout
+    return block.lines
   }
 
-  #row(line: string | undefined, layout: Layout): LogRow {
-    if (line === undefined) return rejected(this.#number, TOO_LONG)
-    const cells = cellsOfLine(line, this.#delimiter)
+  /** The cells of each line: where a quote reaches beyond its line, those of each by itself. */
+  #records(block: LineBlock, first: number): readonly (readonly string[])[] {
+    const count = block.lines - first
+    const together = cellsOfLines(block.bytes.subarray(block.startOf(first)), this.#delimiter)
+    if (together?.length === count) return together
+    return Array.from({ length: count }, (_, i) => cellsOfLine(block.line(first + i), this.#delimiter))
+  }
+
+  #row(cells: readonly string[], layout: Layout, line: () => string): LogRow {
     const row = reportOfCells(cells, layout, this.#number)
     const reason = row.rejected?.reason
     if (reason !== 'cells-missing' && reason !== 'cells-too-many') return row
     // quotes that closed where they should are not to blame, but for one pair around the whole row
-    const isStray = (cells.length === 1 && line.startsWith('"')) || cells.some((cell) => cell.includes('"'))
-    return isStray ? this.#plainRow(line, cells, layout) : row
+    const isStray = (cells.length === 1 && line().startsWith('"')) || cells.some((cell) => cell.includes('"'))
+    return isStray ? this.#plainRow(line(), cells, layout) : row
   }
 
   /** A row of which the cells do not fit the header: as if its quotes were letters, else refused for them. */
