@@ -52,10 +52,14 @@ export interface StationBounds {
 /** The bounds of the water at every station of a segment, n ≥ 1, in the order of the stations. */
 export type SegmentBounds = readonly [StationBounds, ...StationBounds[]]
 
+const everyBound = (situation: Situation): Bound[] =>
+  boundsOf(waterCriteria(situation), situation.vessel.maxSpeed)
+
 /**
  * The bounds of the water at every station of a segment. Current and direction play no part in them, so that they serve
  * every current and direction alike.
  *
+ * @param solve  finds the bounds at a station
  * @throws Fault `impossible-input` when the vessel does not fit one of the stations
  */
 export function stationBounds(
@@ -63,10 +67,11 @@ export function stationBounds(
   vessel: Vessel,
   conditions: Conditions,
   options: Options,
+  solve: (situation: Situation) => readonly Bound[] = everyBound,
 ): SegmentBounds {
   const [first, ...rest] = segment.stations.map((station) => {
     const situation = situationOf(segment, station, vessel, conditions, options)
-    return { situation, water: boundsOf(waterCriteria(situation), situation.vessel.maxSpeed) }
+    return { situation, water: solve(situation) }
   })
   if (!first) throw new RangeError('A segment has at least one station')
   return [first, ...rest]

@@ -2,15 +2,18 @@ import type { Conditions, Options } from '../domain/conditions.ts'
 import type { Segment, Station } from '../domain/segment.ts'
 import type { Vessel } from '../domain/vessel.ts'
 import { waterCriteria } from './criteria/all.ts'
-import { decideDirection, strictest, type Bound, type Decision, type SegmentBounds } from './decide.ts'
+import { decideDirection, strictest, type Bound, type Decision } from './decide.ts'
 import { directionsOf } from './direction.ts'
 import { situationOf, type Situation } from './situation.ts'
 
 /** What governs, without the bounds that do not. */
 export type Governed = Omit<Decision, 'bounds'>
 
-/** The bounds of the water as far as they may govern: those above the lowest so far, or above `most`, are not solved. */
-function lowestBounds(situation: Situation, most: number): Bound[] {
+/**
+ * The bounds of the water as far as they may govern: those above the lowest so far, or above `most`, are not solved.
+ * Outcome, speeds and criterion that are decided from them are those of all bounds, in every current and direction.
+ */
+export function lowestBounds(situation: Situation, most = Infinity): Bound[] {
   const { maxSpeed } = situation.vessel
   let stop = Math.min(most, maxSpeed)
   return waterCriteria(situation).map((criterion) => {
@@ -18,26 +21,6 @@ function lowestBounds(situation: Situation, most: number): Bound[] {
     stop = Math.min(stop, firstSpeed)
     return { criterion, firstSpeed }
   })
-}
-
-/**
- * The bounds of the water at every station, for decisions of which only what governs is used: outcome, speeds and criterion
- * are those of `stationBounds`, in every current and direction.
- *
- * @throws Fault `impossible-input` when the vessel does not fit one of the stations
- */
-export function governingBounds(
-  segment: Segment,
-  vessel: Vessel,
-  conditions: Conditions,
-  options: Options,
-): SegmentBounds {
-  const [first, ...rest] = segment.stations.map((station) => {
-    const situation = situationOf(segment, station, vessel, conditions, options)
-    return { situation, water: lowestBounds(situation, Infinity) }
-  })
-  if (!first) throw new RangeError('A segment has at least one station')
-  return [first, ...rest]
 }
 
 /**

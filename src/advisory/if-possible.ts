@@ -15,13 +15,16 @@ function isShiftedSane({ segment, vessel }: Inputs): boolean {
 /**
  * The bounds of the water of shifted inputs, or undefined where the shifted figures cannot hold together.
  *
- * @param boundsOf  all of them, or those that may govern
+ * @param solve  finds the bounds at a station: all of them unless it says otherwise
  */
-export function boundsIfPossible(inputs: Inputs, boundsOf = stationBounds): SegmentBounds | undefined {
+export function boundsIfPossible(
+  inputs: Inputs,
+  solve?: Parameters<typeof stationBounds>[4],
+): SegmentBounds | undefined {
   const { segment, vessel, conditions, options } = inputs
   if (!isShiftedSane(inputs)) return undefined
   try {
-    return boundsOf(segment, vessel, conditions, options)
+    return stationBounds(segment, vessel, conditions, options, solve)
   } catch (error) {
     if (error instanceof Fault && error.code === 'impossible-input') return undefined
     throw error

@@ -6,7 +6,7 @@ import {
   type Decision,
   type SegmentBounds,
 } from '../advisory/decide.ts'
-import { governingBounds } from '../advisory/govern.ts'
+import { lowestBounds } from '../advisory/govern.ts'
 import { boundsIfPossible } from '../advisory/if-possible.ts'
 import { ShiftedInputs, type Shifts } from '../advisory/shifted-inputs.ts'
 import type { Inputs } from '../advisory/uncertainty.ts'
@@ -98,7 +98,7 @@ function talliesOf(study: Study, places: readonly CellPlace[], inputs: Inputs, d
   const samples = new ShiftedInputs(inputs)
   for (let index = 0; index < draws.count; index += 1) {
     const shifts = shiftsOf(draws, waveHeightLogSd, index)
-    const bounds = boundsIfPossible(samples.by(shifts), governingBounds)
+    const bounds = boundsIfPossible(samples.by(shifts), lowestBounds)
     if (!bounds) continue
     const decisions = decisionsAt(study, places, bounds, shifts.current_mps ?? 0)
     decisions.forEach((decision, i) => tallies[i]?.add(index, decision))
