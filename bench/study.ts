@@ -1,11 +1,14 @@
 import { readFileSync } from 'node:fs'
 import { decide } from '../src/advisory/decide.ts'
+import { shifted } from '../src/advisory/shifted-inputs.ts'
+import type { Inputs } from '../src/advisory/uncertainty.ts'
 import { findVesselClass } from '../src/domain/vessel-classes.ts'
 import { vesselOfClass } from '../src/domain/vessel-of.ts'
 import type { Vessel } from '../src/domain/vessel.ts'
 import { readFeature, type FeatureWire } from '../src/http/feature-in.ts'
 import { DEFAULT_OPTIONS } from '../src/http/options.schema.ts'
 import { toRegistrySegment } from '../src/http/to-registry-segment.ts'
+import { drawsOf, SHIFTED_FIELDS } from '../src/limits/samples.ts'
 import { evaluateCells } from '../src/limits/evaluate.ts'
 import { cellCount, type Study } from '../src/limits/study.ts'
 
@@ -60,19 +63,31 @@ function aStudy(currents: readonly number[]): Study {
   }
 }
 
-/** The same segments, vessels and levels by single decisions, as often as the study has samples. */
-function decideEach({ segments, vessels, waterLevels }: Study): number {
-  let decisions = 0
-  for (const { segment, options } of segments) {
-    for (const vessel of vessels) {
-      for (const waterLevel of waterLevels) {
-        const conditions = { waterLevel, current: 0, isWaterLevelGiven: true, isCurrentGiven: true }
-        for (let i = 0; i <= SAMPLES; i += 1) decide(segment, vessel, conditions, options)
-        decisions += SAMPLES + 1
-      }
-    }
-  }
-  return decisions
+/** The samples of every segment, vessel and level as inputs of their own, in the first current of the study. */
+function sampledInputs({ segments, vessels, waterLevels, uncertainty }: Study): Inputs[] {
+  if (!uncertainty) throw new RangeError('The study of the bench is uncertain')
+  const draws = drawsOf(uncertainty)
+  return segments.flatMap(({ segment, options, waveHeightLogSd = 0 }) =>
+    vessels.flatMap((vessel) =>
+      waterLevels.flatMap((waterLevel) =>
+        Array.from({ length: SAMPLES }, (_, i) => {
+          const conditions = { waterLevel, current: 0, isWaterLevelGiven: true, isCurrentGiven: true }
+          const given: Inputs = { segment, vessel, conditions, options }
+          const scaled = shifted(given, 'wave_height', waveHeightLogSd * (draws.waveHeight[i] ?? NaN))
+          return SHIFTED_FIELDS.reduce(
+            (inputs, field) => shifted(inputs, field, draws.shifts[field]?.[i] ?? 0),
+            scaled,
+          )
+        }),
+      ),
+    ),
+  )
+}
+
+/** The same samples by single decisions. */
+function decideEach(samples: readonly Inputs[]): number {
+  for (const { segment, vessel, conditions, options } of samples) decide(segment, vessel, conditions, options)
+  return samples.length
 }
 
 function evaluateAll(study: Study): number {
@@ -94,9 +109,10 @@ const median = (values: readonly number[]): number =>
 function against(study: Study): string {
   const rates: number[] = []
   const ratios: number[] = []
+  const samples = sampledInputs(study)
   for (let round = -WARM_ROUNDS; round < ROUNDS; round += 1) {
     const whole = rate(() => evaluateAll(study))
-    const single = rate(() => decideEach(study))
+    const single = rate(() => decideEach(samples))
     if (round < 0) continue
     rates.push(whole)
     ratios.push(whole / single)
