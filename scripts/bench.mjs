@@ -1,5 +1,5 @@
 import { spawnSync } from 'node:child_process'
-import { existsSync, symlinkSync } from 'node:fs'
+import { mkdirSync, rmSync, symlinkSync } from 'node:fs'
 import { fileURLToPath } from 'node:url'
 
 /** Compiles the sources as the service runs them and measures that: a loader would be measured with them. */
@@ -12,6 +12,8 @@ function run(...parameters) {
   if (status !== 0) process.exit(status ?? 1)
 }
 
+// a link of an earlier run would be written through
+rmSync(built, { recursive: true, force: true })
 run(
   'node_modules/typescript/bin/tsc',
   '-p',
@@ -24,7 +26,8 @@ run(
   root,
 )
 // what the sources read beside themselves
-for (const name of ['openapi', 'package.json']) {
-  if (!existsSync(`${built}/${name}`)) symlinkSync(`${root}${name}`, `${built}/${name}`)
+mkdirSync(`${built}/openapi`, { recursive: true })
+for (const name of ['openapi/examples', 'openapi/openapi.json', 'package.json']) {
+  symlinkSync(`${root}${name}`, `${built}/${name}`)
 }
 run(`${built}/bench/run.js`)
