@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs'
 import { posix } from 'node:path'
 import ts from 'typescript'
 import { expect, test } from 'vitest'
@@ -145,4 +146,23 @@ test.each([
 test('a dynamic import is seen wherever it stands', () => {
   expect(hasDynamicImport('const f = async () => [await import(name)]')).toBe(true)
   expect(hasDynamicImport("// import('x')\nconst text = 'import(x)'")).toBe(false)
+})
+
+// 2026-12-01: a package that only tests were meant to need was missing from the image
+test('every package that the service imports is one that is installed with it', () => {
+  const { dependencies } = JSON.parse(
+    readFileSync(new URL('../../package.json', import.meta.url), 'utf8'),
+  ) as { dependencies: Record<string, string> }
+  const names = sources().flatMap(({ text }) =>
+    importsOf(text)
+      .filter(({ name, isType }) => !isType && !name.startsWith('.') && !name.startsWith('node:'))
+      .map(({ name }) =>
+        name
+          .split('/')
+          .slice(0, name.startsWith('@') ? 2 : 1)
+          .join('/'),
+      ),
+  )
+  expect(new Set(names).size).toBeGreaterThan(10)
+  expect([...new Set(names)].filter((name) => !(name in dependencies))).toEqual([])
 })
